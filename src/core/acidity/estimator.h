@@ -1,0 +1,29 @@
+/* The fitted model: pKa of a site with an honest interval.
+ *
+ * A Gaussian process over physical descriptors and atom environments, fitted ahead on the
+ * reference table (Rasmussen & Williams, Gaussian Processes for Machine Learning, 2006, ch. 2, 5).
+ */
+#pragma once
+
+#include "core/acidity/reference.h"
+#include "core/acidity/site.h"
+
+typedef struct EnlEstimator EnlEstimator;
+
+/* Opens a fitted model of `size` bytes made by enolith-fit from the same reference table
+ * (ENL_ERROR_FORMAT otherwise). Borrows `ref` and `bytes`: both must outlive the estimator. */
+EnlStatus enl_estimator_open (const EnlReference *ref, const char *bytes, size_t size,
+                              EnlEstimator **out, EnlError *err) ENL_MUST_USE;
+void enl_estimator_free (EnlEstimator *estimator);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlEstimator, enl_estimator_free)
+
+/* Estimates every site of a molecule in one solvent; `out` has sites->n_sites places. A site that
+ * the table holds gets the measured value. In THF the DMSO-based value is given with a wider
+ * interval and a remark that names the footing. Thread-safe: touches no shared state. */
+EnlStatus enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol,
+                             const EnlSites *sites, EnlSolvent solvent, EnlEstimate *out,
+                             EnlError *err) ENL_MUST_USE;
+
+/* Order of the sites by rising pKa (ties: more hydrogens first, then atom); fills rank[n_sites]
+ * with site indices, most acidic first. */
+void enl_estimates_rank (const EnlSites *sites, const EnlEstimate *estimate, uint32_t *rank);

@@ -1,0 +1,30 @@
+/* The published acids (resources/acids.tsv), parsed and indexed by structure and site. */
+#pragma once
+
+#include "core/acidity/estimate.h"
+#include "core/molecule/molecule.h"
+
+typedef struct {
+  const char *name, *smiles, *source, *note;
+  double pka, sigma;
+  EnlSolvent solvent;
+  const EnlMolecule *mol; /* owned by the reference; atom map 1 marks the site */
+  uint32_t site;          /* index of the acidic atom in mol */
+  const char *key;        /* canonical SMILES without maps: one per compound */
+} EnlReferenceRow;
+
+typedef struct EnlReference EnlReference;
+
+/* Reads the table text. Any row that cannot be read is an ENL_ERROR_FORMAT with its line. */
+EnlStatus enl_reference_new (const char *text, size_t size, EnlReference **out, EnlError *err)
+    ENL_MUST_USE;
+void enl_reference_free (EnlReference *ref);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlReference, enl_reference_free)
+
+uint32_t enl_reference_rows (const EnlReference *ref);
+const EnlReferenceRow *enl_reference_row (const EnlReference *ref, uint32_t row);
+
+/* Row of this compound with `atom` (or one symmetry-equivalent to it) as the site, in this solvent
+ * (ENL_SOLVENT_THF matches nothing); -1 when it was not measured. */
+int enl_reference_find (const EnlReference *ref, const EnlMolecule *mol, uint32_t atom,
+                        EnlSolvent solvent);

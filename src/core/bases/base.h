@@ -1,0 +1,29 @@
+/* The base table (resources/bases.tsv): what a base is, how strong, and what to beware of. */
+#pragma once
+
+#include "core/acidity/estimate.h"
+#include <stdbool.h>
+#include <stdint.h>
+
+#include "core/base/error.h"
+
+typedef struct {
+  const char *id, *name, *smiles, *conjugate_acid, *cation, *family, *nucleophilicity, *steric;
+  const char *typical_solvents, *typical_temperature, *incompatible, *note, *source, *thf_scale;
+  bool irreversible;      /* the conjugate acid leaves or cannot give the proton back */
+  bool number_unreliable; /* carbonate, fluoride, phosphate, soft-enolisation set: the number does
+                             not describe what happens; no gap verdict is shown */
+  double pkah[ENL_N_SOLVENTS];  /* NAN: not on this scale */
+  double sigma[ENL_N_SOLVENTS]; /* one standard deviation */
+} EnlBase;
+
+typedef struct EnlBaseTable EnlBaseTable;
+
+EnlStatus enl_base_table_new (const char *text, size_t size, EnlBaseTable **out, EnlError *err)
+    ENL_MUST_USE;
+void enl_base_table_free (EnlBaseTable *table);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlBaseTable, enl_base_table_free)
+uint32_t enl_base_table_size (const EnlBaseTable *table);
+const EnlBase *enl_base_table_get (const EnlBaseTable *table, uint32_t index);
+/* Index by id or by name, case does not matter; -1 when unknown. */
+int enl_base_table_find (const EnlBaseTable *table, const char *text);
