@@ -10,8 +10,8 @@
 void enl_scene_paint (const EnlScene *scene, cairo_t *cr);
 
 typedef struct {
-  double width_mm;   /* 0: natural size at 96 dpi */
-  double dpi;        /* PNG only; 0 means 96 */
+  double width_mm; /* 0: natural size at 96 dpi */
+  double dpi;      /* PNG only; 0 means 96 */
   bool transparent;
   const char *title; /* document metadata, may be NULL */
 } EnlExport;

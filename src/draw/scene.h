@@ -12,16 +12,20 @@
 #include "core/molecule/molecule.h"
 #include "draw/theme.h"
 
-typedef struct { double x, y; } EnlPoint;
-typedef struct { double x, y, width, height; } EnlRect;
+typedef struct {
+  double x, y;
+} EnlPoint;
+typedef struct {
+  double x, y, width, height;
+} EnlRect;
 
 typedef enum {
-  ENL_SHAPE_LINE,     /* point[0]..point[1] */
-  ENL_SHAPE_POLYGON,  /* filled, n points (wedges, arrow heads) */
-  ENL_SHAPE_CURVE,    /* cubic: point[0..3] */
-  ENL_SHAPE_DISC,     /* centre point[0], radius */
-  ENL_SHAPE_RECT,     /* rounded by radius: point[0] corner, point[1] opposite corner */
-  ENL_SHAPE_TEXT      /* markup; point[0] is the anchor, see align */
+  ENL_SHAPE_LINE,    /* point[0]..point[1] */
+  ENL_SHAPE_POLYGON, /* filled, n points (wedges, arrow heads) */
+  ENL_SHAPE_CURVE,   /* cubic: point[0..3] */
+  ENL_SHAPE_DISC,    /* centre point[0], radius */
+  ENL_SHAPE_RECT,    /* rounded by radius: point[0] corner, point[1] opposite corner */
+  ENL_SHAPE_TEXT     /* markup; point[0] is the anchor, see align */
 } EnlShapeKind;
 
 typedef enum { ENL_DASH_SOLID, ENL_DASH_DASHED, ENL_DASH_DOTTED } EnlDash;
@@ -30,15 +34,15 @@ typedef struct {
   EnlShapeKind kind;
   EnlPoint *point;
   uint32_t n_points;
-  double radius, width;  /* width 0: filled, else stroked */
+  double radius, width; /* width 0: filled, else stroked */
   EnlTone tone;
-  double opacity;        /* 0..1 on top of the tone's alpha */
+  double opacity; /* 0..1 on top of the tone's alpha */
   EnlDash dash;
-  char *text;            /* Pango markup, TEXT only */
-  double size;           /* font size, px */
+  char *text;  /* Pango markup, TEXT only */
+  double size; /* font size, px */
   bool bold;
   double align_x, align_y; /* 0 anchor at left/top of the text box, 0.5 centre, 1 right/bottom */
-  EnlRect box;           /* bounds on the picture, filled when the shape is added */
+  EnlRect box;             /* bounds on the picture, filled when the shape is added */
   uint32_t atom, bond, site, substrate; /* what it belongs to, ENL_NONE for nothing */
 } EnlShape;
 
@@ -51,9 +55,9 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlScene, enl_scene_free)
 const EnlTheme *enl_scene_theme (const EnlScene *scene);
 uint32_t enl_scene_shapes (const EnlScene *scene);
 const EnlShape *enl_scene_shape (const EnlScene *scene, uint32_t index);
-EnlRect enl_scene_bounds (const EnlScene *scene);   /* of all shapes */
+EnlRect enl_scene_bounds (const EnlScene *scene); /* of all shapes */
 void enl_scene_set_size (EnlScene *scene, double width, double height);
-EnlRect enl_scene_frame (const EnlScene *scene);    /* set size, else bounds plus margin */
+EnlRect enl_scene_frame (const EnlScene *scene); /* set size, else bounds plus margin */
 
 /* Adding: each copies what it is given and returns the shape for further settings of tone, dash,
  * opacity and ownership (not of geometry). */

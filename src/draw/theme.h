@@ -4,11 +4,15 @@
 #include "core/base/macros.h"
 
 typedef enum {
-  ENL_TONE_GROUND,      /* background of the picture */
-  ENL_TONE_PANEL,       /* ground of a card on it */
-  ENL_TONE_INK,         /* bonds, carbon, text */
-  ENL_TONE_MUTED,       /* secondary text, rules */
-  ENL_TONE_OXYGEN, ENL_TONE_NITROGEN, ENL_TONE_SULFUR, ENL_TONE_HALOGEN, ENL_TONE_HETERO,
+  ENL_TONE_GROUND, /* background of the picture */
+  ENL_TONE_PANEL,  /* ground of a card on it */
+  ENL_TONE_INK,    /* bonds, carbon, text */
+  ENL_TONE_MUTED,  /* secondary text, rules */
+  ENL_TONE_OXYGEN,
+  ENL_TONE_NITROGEN,
+  ENL_TONE_SULFUR,
+  ENL_TONE_HALOGEN,
+  ENL_TONE_HETERO,
   ENL_TONE_SITE,        /* the acidic hydrogen and its badge */
   ENL_TONE_SITE_TEXT,   /* text on a badge */
   ENL_TONE_ACTIVE,      /* the selected site and its delocalised system */
@@ -19,19 +23,26 @@ typedef enum {
   ENL_N_TONES
 } EnlTone;
 
-typedef struct { double red, green, blue, alpha; } EnlColour;
+typedef struct {
+  double red, green, blue, alpha;
+} EnlColour;
 
-typedef enum { ENL_THEME_LIGHT, ENL_THEME_DARK, ENL_THEME_PRINT, ENL_THEME_PROJECTOR, ENL_N_THEMES }
-    EnlThemeName;
+typedef enum {
+  ENL_THEME_LIGHT,
+  ENL_THEME_DARK,
+  ENL_THEME_PRINT,
+  ENL_THEME_PROJECTOR,
+  ENL_N_THEMES
+} EnlThemeName;
 
 typedef struct {
   EnlColour tone[ENL_N_TONES];
-  double bond_length;   /* all lengths in px at 96 dpi */
+  double bond_length; /* all lengths in px at 96 dpi */
   double bond_width, wedge_width, double_gap;
-  double atom_size;     /* font size of atom labels */
+  double atom_size; /* font size of atom labels */
   double text_size, small_size, title_size;
   double badge_radius, margin, card_radius;
-  const char *family;   /* font family list for Pango */
+  const char *family; /* font family list for Pango */
 } EnlTheme;
 
 /* Static. */

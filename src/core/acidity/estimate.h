@@ -13,7 +13,12 @@ const char *enl_solvent_label (EnlSolvent solvent);
 /* False for an unknown word; case does not matter. */
 bool enl_solvent_parse (const char *text, EnlSolvent *out);
 
-typedef enum { ENL_BASIS_MEASURED, ENL_BASIS_LAB, ENL_BASIS_ESTIMATED, ENL_N_BASES_OF_VALUE } EnlBasis;
+typedef enum {
+  ENL_BASIS_MEASURED,
+  ENL_BASIS_LAB,
+  ENL_BASIS_ESTIMATED,
+  ENL_N_BASES_OF_VALUE
+} EnlBasis;
 
 /* "measured", "lab", "estimated". */
 const char *enl_basis_text (EnlBasis basis);
@@ -21,8 +26,8 @@ const char *enl_basis_text (EnlBasis basis);
 #define ENL_MAX_PRECEDENTS 5
 
 typedef struct {
-  uint32_t row;   /* of the reference table (enl_reference_...) */
-  double weight;  /* share in the smooth part of the estimate, 0..1 */
+  uint32_t row;  /* of the reference table (enl_reference_...) */
+  double weight; /* share in the smooth part of the estimate, 0..1 */
 } EnlPrecedent;
 
 /* pK units at 25 °C, uncorrected for statistical factors as published. `low`..`high` is the 90 %
@@ -31,9 +36,9 @@ typedef struct {
   double value, low, high, sigma;
   EnlSolvent solvent;
   EnlBasis basis;
-  int row;              /* of the reference table when measured, else -1 */
-  bool outside;         /* outside the experience of the model: see `remark` */
-  const char *remark;   /* static sentence or NULL: footing, second deprotonation, outside ... */
+  int row;            /* of the reference table when measured, else -1 */
+  bool outside;       /* outside the experience of the model: see `remark` */
+  const char *remark; /* static sentence or NULL: footing, second deprotonation, outside ... */
   EnlPrecedent precedent[ENL_MAX_PRECEDENTS]; /* largest weight first; for a measured value the
                                                  first one is the row itself with weight 1 */
   uint32_t n_precedents;

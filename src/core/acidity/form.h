@@ -13,38 +13,38 @@ typedef struct {
 } EnlArrow;
 
 typedef struct {
-  uint8_t *order;      /* order of every bond of the anion in this form */
-  int8_t *charge;      /* formal charge of every atom in this form */
-  uint32_t centre;     /* atom that carries the moved negative charge */
-  uint32_t copies;     /* symmetric or Kekulé copies that this form stands for, at least 1 */
-  double weight;       /* of this form with its copies; all weights add up to 1 */
-  EnlArrow *arrow;     /* moves that lead from form 0 to this one; none for form 0 */
+  uint8_t *order;  /* order of every bond of the anion in this form */
+  int8_t *charge;  /* formal charge of every atom in this form */
+  uint32_t centre; /* atom that carries the moved negative charge */
+  uint32_t copies; /* symmetric or Kekulé copies that this form stands for, at least 1 */
+  double weight;   /* of this form with its copies; all weights add up to 1 */
+  EnlArrow *arrow; /* moves that lead from form 0 to this one; none for form 0 */
   uint32_t n_arrows;
 } EnlForm;
 
 typedef struct {
-  EnlMolecule *anion;  /* conjugate base, charge localised on the deprotonated atom (form 0) */
+  EnlMolecule *anion; /* conjugate base, charge localised on the deprotonated atom (form 0) */
   uint32_t site_atom;
-  EnlForm *form;       /* form 0 is the localised one; the rest by falling weight */
-  uint32_t n_forms;    /* after collapsing copies */
-  uint32_t n_all;      /* before */
-  double *charge;      /* hybrid: pi model net charge of every atom */
-  double *bond_order;  /* hybrid: weighted bond order of every bond */
-  bool capped;         /* ENL_MAX_FORMS was reached */
-  char *note;          /* "also stabilised by induction and polarisation: S(=O)2", or NULL */
+  EnlForm *form;      /* form 0 is the localised one; the rest by falling weight */
+  uint32_t n_forms;   /* after collapsing copies */
+  uint32_t n_all;     /* before */
+  double *charge;     /* hybrid: pi model net charge of every atom */
+  double *bond_order; /* hybrid: weighted bond order of every bond */
+  bool capped;        /* ENL_MAX_FORMS was reached */
+  char *note;         /* "also stabilised by induction and polarisation: S(=O)2", or NULL */
 } EnlForms;
 
 /* Forms of the conjugate base that loses one hydrogen from `atom`.
  * ENL_ERROR_RANGE when the atom does not exist or has no hydrogen. Caller: enl_forms_free. */
-EnlStatus enl_forms_of_site (const EnlMolecule *mol, uint32_t atom, EnlForms **out, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_forms_of_site (const EnlMolecule *mol, uint32_t atom, EnlForms **out,
+                             EnlError *err) ENL_MUST_USE;
 void enl_forms_free (EnlForms *forms);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlForms, enl_forms_free)
 
 /* Every contributor of `anion` itself, uncollapsed, as canonical-ready molecules: the outside
  * check compares them with an independent program. `*out` is a GPtrArray of EnlMolecule. */
-EnlStatus enl_forms_enumerate (const EnlMolecule *anion, GPtrArray **out, bool *capped, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_forms_enumerate (const EnlMolecule *anion, GPtrArray **out, bool *capped,
+                               EnlError *err) ENL_MUST_USE;
 
 /* Structure of one form, finished, same atom order as the anion. Caller frees. */
 EnlMolecule *enl_forms_molecule (const EnlForms *forms, uint32_t form) ENL_MUST_USE;

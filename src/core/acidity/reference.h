@@ -16,8 +16,8 @@ typedef struct {
 typedef struct EnlReference EnlReference;
 
 /* Reads the table text. Any row that cannot be read is an ENL_ERROR_FORMAT with its line. */
-EnlStatus enl_reference_new (const char *text, size_t size, EnlReference **out, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_reference_new (const char *text, size_t size, EnlReference **out,
+                             EnlError *err) ENL_MUST_USE;
 void enl_reference_free (EnlReference *ref);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlReference, enl_reference_free)
 

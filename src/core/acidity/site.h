@@ -17,16 +17,16 @@ typedef enum {
 } EnlSiteKind;
 
 typedef struct {
-  uint32_t *atom;      /* symmetry-equivalent acidic atoms, ascending */
+  uint32_t *atom; /* symmetry-equivalent acidic atoms, ascending */
   uint32_t n_atoms;
-  uint32_t hydrogens;  /* of the whole class */
+  uint32_t hydrogens; /* of the whole class */
   EnlSiteKind kind;
   uint8_t element;
-  bool alpha_carbonyl; /* carbon directly on a C=O carbon (aldehyde ... acyl halide) */
+  bool alpha_carbonyl;    /* carbon directly on a C=O carbon (aldehyde ... acyl halide) */
   bool acidic_heteroatom; /* O-H, N-H, S-H, cation acid: a competing acid for an enolate chemist */
-  bool diastereotopic; /* CH2 hydrogens next to a stereocentre */
-  bool second;         /* another site of the molecule (COOH, OH ...) is certain to go first */
-  char *position;      /* "alpha to both C=O", "O-H of the carboxylic acid", ... */
+  bool diastereotopic;    /* CH2 hydrogens next to a stereocentre */
+  bool second;            /* another site of the molecule (COOH, OH ...) is certain to go first */
+  char *position;         /* "alpha to both C=O", "O-H of the carboxylic acid", ... */
 } EnlSite;
 
 /* Owned arrays; `site` is in ascending order of its first atom (ranking needs estimates). */
@@ -34,9 +34,9 @@ typedef struct {
   EnlSite *site;
   uint32_t n_sites;
   bool has_carbon_acid; /* at least one C-H site */
-  char *no_enol;       /* why no enolate can form ("no hydrogen on the carbons next to C=O"), or
-                          NULL when there is an enolisable C-H or no carbonyl-like group at all is
-                          to be explained; then n_sites may still be > 0 (O-H, N-H ...) */
+  char *no_enol;        /* why no enolate can form ("no hydrogen on the carbons next to C=O"), or
+                           NULL when there is an enolisable C-H or no carbonyl-like group at all is
+                           to be explained; then n_sites may still be > 0 (O-H, N-H ...) */
 } EnlSites;
 
 /* Finds every acidic site of a finished molecule, after the list in DEVELOPERS.md ("Sites").

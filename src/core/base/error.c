@@ -4,18 +4,18 @@
 #include <string.h>
 
 static const char *const status_text[ENL_N_STATUS] = {
-  [ENL_OK] = "no error",
-  [ENL_ERROR_EMPTY] = "nothing to read",
-  [ENL_ERROR_SYNTAX] = "the notation is not followed",
-  [ENL_ERROR_CHEMISTRY] = "no such molecule",
-  [ENL_ERROR_UNKNOWN] = "not known",
-  [ENL_ERROR_LIMIT] = "larger than the limits",
-  [ENL_ERROR_UNSUPPORTED] = "not supported",
-  [ENL_ERROR_FORMAT] = "damaged or incomplete",
-  [ENL_ERROR_RANGE] = "out of range",
-  [ENL_ERROR_NUMERIC] = "calculation without result",
-  [ENL_ERROR_IO] = "reading or writing failed",
-  [ENL_ERROR_CANCELLED] = "cancelled",
+    [ENL_OK] = "no error",
+    [ENL_ERROR_EMPTY] = "nothing to read",
+    [ENL_ERROR_SYNTAX] = "the notation is not followed",
+    [ENL_ERROR_CHEMISTRY] = "no such molecule",
+    [ENL_ERROR_UNKNOWN] = "not known",
+    [ENL_ERROR_LIMIT] = "larger than the limits",
+    [ENL_ERROR_UNSUPPORTED] = "not supported",
+    [ENL_ERROR_FORMAT] = "damaged or incomplete",
+    [ENL_ERROR_RANGE] = "out of range",
+    [ENL_ERROR_NUMERIC] = "calculation without result",
+    [ENL_ERROR_IO] = "reading or writing failed",
+    [ENL_ERROR_CANCELLED] = "cancelled",
 };
 
 const char *
@@ -50,7 +50,7 @@ enl_error_locate (EnlError *err, const char *text, size_t size, size_t offset, s
   err->line = 1;
   err->column = 1;
   for (size_t i = 0; i < offset; i++) {
-    unsigned char byte = (unsigned char) text[i];
+    unsigned char byte = (unsigned char)text[i];
     if (byte == '\n') {
       err->line++;
       err->column = 1;
@@ -72,7 +72,7 @@ enl_error_message (const EnlError *err)
   g_string_append (out, err->text[0] ? err->text : enl_status_text (err->code));
   if (err->advice[0])
     g_string_append_printf (out, "; %s", err->advice);
-  g_autofree char *valid = g_utf8_make_valid (out->str, (gssize) out->len);
+  g_autofree char *valid = g_utf8_make_valid (out->str, (gssize)out->len);
   g_string_free (out, TRUE);
   return g_steal_pointer (&valid);
 }

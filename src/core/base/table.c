@@ -4,8 +4,8 @@
 #include <string.h>
 
 struct EnlTable {
-  GPtrArray *line;   /* char **, the cells of the header and of each row, padded */
-  GArray *number;    /* size_t, line of each entry of `line` */
+  GPtrArray *line; /* char **, the cells of the header and of each row, padded */
+  GArray *number;  /* size_t, line of each entry of `line` */
   size_t n_columns;
 };
 
@@ -57,11 +57,11 @@ enl_table_parse (const char *text, size_t size, EnlTable **out, EnlError *err)
   size_t number = 1;
 
   *out = NULL;
-  table->line = g_ptr_array_new_with_free_func ((GDestroyNotify) g_strfreev);
+  table->line = g_ptr_array_new_with_free_func ((GDestroyNotify)g_strfreev);
   table->number = g_array_new (FALSE, FALSE, sizeof (size_t));
   for (size_t start = 0; start < size; number++) {
     const char *end = memchr (text + start, '\n', size - start);
-    size_t stop = end ? (size_t) (end - text) : size;
+    size_t stop = end ? (size_t)(end - text) : size;
     EnlStatus status = add_line (table, text + start, stop - start, number, err);
     if (status != ENL_OK)
       return status;
@@ -100,7 +100,7 @@ const char *
 enl_table_header (const EnlTable *table, size_t column)
 {
   g_assert (column < table->n_columns);
-  return ((char **) g_ptr_array_index (table->line, 0))[column];
+  return ((char **)g_ptr_array_index (table->line, 0))[column];
 }
 
 int
@@ -108,7 +108,7 @@ enl_table_column (const EnlTable *table, const char *name)
 {
   for (size_t i = 0; i < table->n_columns; i++)
     if (strcmp (enl_table_header (table, i), name) == 0)
-      return (int) i;
+      return (int)i;
   return -1;
 }
 
@@ -118,8 +118,8 @@ enl_table_cell (const EnlTable *table, size_t row, int column)
   g_assert (row < enl_table_rows (table));
   if (column < 0)
     return "";
-  g_assert ((size_t) column < table->n_columns);
-  return ((char **) g_ptr_array_index (table->line, row + 1))[column];
+  g_assert ((size_t)column < table->n_columns);
+  return ((char **)g_ptr_array_index (table->line, row + 1))[column];
 }
 
 double

@@ -13,7 +13,8 @@ typedef struct EnlTable EnlTable;
 
 /* Copies `text`. Rows shorter than the header are padded with empty cells; a longer row is an
  * ENL_ERROR_FORMAT with its line. */
-EnlStatus enl_table_parse (const char *text, size_t size, EnlTable **out, EnlError *err) ENL_MUST_USE;
+EnlStatus enl_table_parse (const char *text, size_t size, EnlTable **out,
+                           EnlError *err) ENL_MUST_USE;
 void enl_table_free (EnlTable *table);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlTable, enl_table_free)
 

@@ -19,8 +19,8 @@ typedef struct {
 
 typedef struct EnlBaseTable EnlBaseTable;
 
-EnlStatus enl_base_table_new (const char *text, size_t size, EnlBaseTable **out, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_base_table_new (const char *text, size_t size, EnlBaseTable **out,
+                              EnlError *err) ENL_MUST_USE;
 void enl_base_table_free (EnlBaseTable *table);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlBaseTable, enl_base_table_free)
 uint32_t enl_base_table_size (const EnlBaseTable *table);

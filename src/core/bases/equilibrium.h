@@ -12,24 +12,24 @@
 
 /* A substrate acid HnA: `n` sites that ionise independently of each other. */
 typedef struct {
-  const double *pka;       /* of each site */
+  const double *pka; /* of each site */
   uint32_t n_sites;
-  double substrate;        /* total substrate, mol/L, > 0 */
-  double base;             /* total base, mol/L, >= 0 */
-  double pkah;             /* conjugate acid of the base, same scale */
-  bool irreversible;       /* stoichiometric: the base is used up, most acidic site first */
+  double substrate;  /* total substrate, mol/L, > 0 */
+  double base;       /* total base, mol/L, >= 0 */
+  double pkah;       /* conjugate acid of the base, same scale */
+  bool irreversible; /* stoichiometric: the base is used up, most acidic site first */
 } EnlEquilibrium;
 
 typedef struct {
-  double proton;           /* -log10 of the proton activity; NAN when irreversible */
-  double ionised[64];      /* fraction 0..1 of each site that is ionised */
-  double base_used;        /* fraction 0..1 of the base that is protonated */
-  double residual;         /* largest mass or charge error, relative to the total */
+  double proton;      /* -log10 of the proton activity; NAN when irreversible */
+  double ionised[64]; /* fraction 0..1 of each site that is ionised */
+  double base_used;   /* fraction 0..1 of the base that is protonated */
+  double residual;    /* largest mass or charge error, relative to the total */
 } EnlComposition;
 
 /* ENL_ERROR_RANGE for impossible amounts, ENL_ERROR_LIMIT for more than 64 sites. */
-EnlStatus enl_equilibrium_solve (const EnlEquilibrium *problem, EnlComposition *out, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_equilibrium_solve (const EnlEquilibrium *problem, EnlComposition *out,
+                                 EnlError *err) ENL_MUST_USE;
 
 /* Degree of deprotonation of HA by one equivalent of B: K = 10^gap = x^2 / (1 - x)^2. */
 double enl_equal_mixture (double gap);

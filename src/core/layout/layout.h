@@ -9,10 +9,10 @@
 EnlStatus enl_layout (EnlMolecule *mol, EnlError *err) ENL_MUST_USE;
 
 typedef struct {
-  double closest;      /* smallest distance between two atoms, in bond lengths */
+  double closest; /* smallest distance between two atoms, in bond lengths */
   double shortest_bond, longest_bond;
-  uint32_t crossings;  /* pairs of bonds that cross */
-  uint32_t overlaps;   /* atoms within 0.25 of another atom or of a bond that is not theirs */
+  uint32_t crossings; /* pairs of bonds that cross */
+  uint32_t overlaps;  /* atoms within 0.25 of another atom or of a bond that is not theirs */
 } EnlLayoutQuality;
 
 EnlLayoutQuality enl_layout_quality (const EnlMolecule *mol);

@@ -14,18 +14,14 @@
 
 #include "core/base/error.h"
 
-#define ENL_NONE UINT32_MAX   /* no atom, no bond */
-#define ENL_MAX_HEAVY 400     /* comfortable size; analysis refuses more, readers do not */
-#define ENL_MAX_ATOMS 4000    /* readers refuse more */
+#define ENL_NONE      UINT32_MAX /* no atom, no bond */
+#define ENL_MAX_HEAVY 400        /* comfortable size; analysis refuses more, readers do not */
+#define ENL_MAX_ATOMS 4000       /* readers refuse more */
 
 /* Turn of the neighbours of a tetrahedral atom. Order them by ascending atom index, with an
  * unwritten hydrogen (or lone pair) FIRST; looking from the first one towards the centre the other
  * three turn this way. So SMILES "N[C@](F)(Cl)Br" has ANTICLOCKWISE at C (N=0, F=2, Cl=3, Br=4). */
-typedef enum {
-  ENL_WINDING_NONE = 0,
-  ENL_WINDING_ANTICLOCKWISE,
-  ENL_WINDING_CLOCKWISE
-} EnlWinding;
+typedef enum { ENL_WINDING_NONE = 0, ENL_WINDING_ANTICLOCKWISE, ENL_WINDING_CLOCKWISE } EnlWinding;
 
 /* Which side the two reference neighbours of a double bond are on. */
 typedef enum { ENL_SIDE_NONE = 0, ENL_SIDE_SAME, ENL_SIDE_OPPOSITE } EnlSide;
@@ -34,27 +30,27 @@ typedef enum { ENL_SIDE_NONE = 0, ENL_SIDE_SAME, ENL_SIDE_OPPOSITE } EnlSide;
 typedef enum { ENL_WEDGE_NONE = 0, ENL_WEDGE_UP, ENL_WEDGE_DOWN, ENL_WEDGE_EITHER } EnlWedge;
 
 typedef struct {
-  uint8_t element;    /* atomic number; 0 stands for any atom ('*') */
+  uint8_t element; /* atomic number; 0 stands for any atom ('*') */
   int8_t charge;
-  uint8_t hydrogens;  /* hydrogens without an atom of their own */
-  uint8_t unpaired;   /* unpaired electrons */
-  uint16_t isotope;   /* mass number, 0 for the natural mixture */
-  bool aromatic;      /* derived */
-  bool exact;         /* the hydrogen count was written (bracket atom), not inferred */
+  uint8_t hydrogens; /* hydrogens without an atom of their own */
+  uint8_t unpaired;  /* unpaired electrons */
+  uint16_t isotope;  /* mass number, 0 for the natural mixture */
+  bool aromatic;     /* derived */
+  bool exact;        /* the hydrogen count was written (bracket atom), not inferred */
   EnlWinding winding;
-  uint32_t map;       /* atom map number, 0 for none */
-  uint32_t input;     /* 1-based position among the atoms as they stood in the input */
-  uint32_t offset;    /* byte offset of the atom in the input text */
-  uint32_t length;    /* bytes it covers there */
-  double x, y;        /* plane coordinates in bond lengths, y up; see has_layout */
+  uint32_t map;    /* atom map number, 0 for none */
+  uint32_t input;  /* 1-based position among the atoms as they stood in the input */
+  uint32_t offset; /* byte offset of the atom in the input text */
+  uint32_t length; /* bytes it covers there */
+  double x, y;     /* plane coordinates in bond lengths, y up; see has_layout */
 } EnlAtom;
 
 typedef struct {
   uint32_t from, to;
-  uint8_t order;      /* 1, 2, 3, 4; 0 for a dative or unspecified contact */
-  bool aromatic;      /* derived */
-  bool ring;          /* derived: in at least one ring */
-  EnlSide side;       /* of side_from (a neighbour of from) and side_to (a neighbour of to) */
+  uint8_t order; /* 1, 2, 3, 4; 0 for a dative or unspecified contact */
+  bool aromatic; /* derived */
+  bool ring;     /* derived: in at least one ring */
+  EnlSide side;  /* of side_from (a neighbour of from) and side_to (a neighbour of to) */
   uint32_t side_from, side_to;
   EnlWedge wedge;
 } EnlBond;
@@ -95,7 +91,8 @@ const EnlBond *enl_molecule_bond (const EnlMolecule *mol, uint32_t bond);
 uint32_t enl_molecule_degree (const EnlMolecule *mol, uint32_t atom); /* written neighbours */
 uint32_t enl_molecule_neighbour (const EnlMolecule *mol, uint32_t atom, uint32_t k);
 uint32_t enl_molecule_bond_at (const EnlMolecule *mol, uint32_t atom, uint32_t k);
-uint32_t enl_molecule_bond_between (const EnlMolecule *mol, uint32_t a, uint32_t b); /* or ENL_NONE */
+uint32_t enl_molecule_bond_between (const EnlMolecule *mol, uint32_t a,
+                                    uint32_t b); /* or ENL_NONE */
 uint32_t enl_molecule_other_end (const EnlMolecule *mol, uint32_t bond, uint32_t atom);
 
 /* Hydrogens on the atom: counted ones plus bonded hydrogen atoms. */

@@ -5,8 +5,8 @@
 
 /* Reads one molfile block. Coordinates are kept (has_layout) when they are not all zero, scaled to
  * bond length 1; stereo is taken from wedges. */
-EnlStatus enl_molfile_parse (const char *text, size_t size, EnlMolecule **out, EnlError *err)
-    ENL_MUST_USE;
+EnlStatus enl_molfile_parse (const char *text, size_t size, EnlMolecule **out,
+                             EnlError *err) ENL_MUST_USE;
 
 /* V2000 block, new string (g_free). Beyond 999 atoms or bonds: ENL_ERROR_LIMIT. */
 EnlStatus enl_molfile_write (const EnlMolecule *mol, char **out, EnlError *err) ENL_MUST_USE;

@@ -6,7 +6,8 @@
 typedef struct EnlNames EnlNames;
 
 /* `table` is the text of names.tsv (columns name, smiles, source; one synonym a row). */
-EnlStatus enl_names_new (const char *table, size_t size, EnlNames **out, EnlError *err) ENL_MUST_USE;
+EnlStatus enl_names_new (const char *table, size_t size, EnlNames **out,
+                         EnlError *err) ENL_MUST_USE;
 void enl_names_free (EnlNames *names);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlNames, enl_names_free)
 
