@@ -10,6 +10,9 @@
 typedef struct {
   const char *id, *name, *smiles, *conjugate_acid, *cation, *family, *nucleophilicity, *steric;
   const char *typical_solvents, *typical_temperature, *incompatible, *note, *source, *thf_scale;
+  bool attacks[ENL_N_SOLVENTS]; /* is destroyed by, or destroys, this solvent */
+  double pkah_nominal;    /* textbook figure without a footing, NAN for none: says only that an
+                             irreversible base is strong enough, never enters an equilibrium */
   bool irreversible;      /* the conjugate acid leaves or cannot give the proton back */
   bool number_unreliable; /* carbonate, fluoride, phosphate, soft-enolisation set: the number does
                              not describe what happens; no gap verdict is shown */

@@ -1,63 +1,61 @@
-/* Candidate bases for one site of one substrate, ranked. */
+/* Candidate bases for one site of one substrate, ranked.
+ *
+ * Every base of the table is judged under the present conditions. What counts as ionised: each
+ * site once (mono-anions exclude each other), and for a site that another, certain one precedes
+ * (EnlSite.second) the ions that have lost the preceding hydrogens too.
+ */
 #pragma once
 
 #include "core/acidity/estimate.h"
 #include "core/acidity/site.h"
 #include "core/bases/base.h"
+#include "core/bases/caution.h"
 
 typedef struct {
   EnlSolvent solvent;
   double equivalents;   /* of base per substrate */
   double concentration; /* substrate, mol/L */
-  double temperature;   /* °C */
+  double temperature;   /* °C; the pK values hold at 25 and are not carried over */
 } EnlConditions;
 
-/* 1 equivalent (1.05), 0.1 mol/L, 25 °C, DMSO. */
+/* 1.05 equivalents, 0.1 mol/L, 25 °C, DMSO. */
 EnlConditions enl_conditions_default (void);
+/* ENL_ERROR_RANGE with advice when an amount is impossible. */
+EnlStatus enl_conditions_check (const EnlConditions *conditions, EnlError *err);
 
 typedef enum {
-  ENL_VERDICT_COMPLETE,  /* takes the site off completely */
-  ENL_VERDICT_LARGELY,   /* more than 90 % */
-  ENL_VERDICT_PARTIAL,   /* 10 to 90 %: both species side by side */
-  ENL_VERDICT_TRACE,     /* 0.1 to 10 % */
-  ENL_VERDICT_NO,        /* less */
+  ENL_VERDICT_COMPLETE,  /* takes the site off completely (98 % or more) */
+  ENL_VERDICT_LARGELY,   /* 90 % or more */
+  ENL_VERDICT_PARTIAL,   /* 10 % or more: both species side by side */
+  ENL_VERDICT_TRACE,     /* 0.1 % or more */
+  ENL_VERDICT_NO,        /* less, or another site takes the base */
   ENL_VERDICT_NO_NUMBER, /* its number does not describe what happens (carbonate ...) */
   ENL_VERDICT_OFF_SCALE, /* no value on the footing in use: never a borrowed number */
+  ENL_VERDICT_SOLVENT,   /* base and solvent destroy each other */
   ENL_N_VERDICTS
 } EnlVerdict;
 
-/* One or two words ("complete", "not on this scale"), distinct. */
+/* A few words ("complete", "not on this scale"), distinct. */
 const char *enl_verdict_text (EnlVerdict verdict);
 
 typedef struct {
-  const char *id;   /* "H05" of the practice rules, owned by the caution table */
-  const char *text; /* one sentence */
-  const char *source;
-} EnlCaution;
-
-typedef struct {
   uint32_t base;      /* index in the base table */
-  double pkah;        /* NAN off the scale */
+  double pkah;        /* on the footing in use; NAN off the scale */
   double gap;         /* pkah - pKa(site); NAN where there is none */
-  double conversion;  /* fraction of the substrate present as this anion; NAN likewise */
-  double low, high;   /* its 90 % interval */
-  double selectivity; /* share of this site among all ionised sites, 0..1; NAN likewise */
+  double conversion;  /* fraction 0..1 of the substrate present as this anion; NAN likewise */
+  double low, high;   /* its 90 % interval, from that of the gap */
+  double selectivity; /* share of this site among all ionised forms, 0..1; NAN likewise */
+  double equivalents_needed; /* one for the site, one for each hydrogen that goes before it */
   EnlVerdict verdict;
-  char *reason;               /* one sentence */
-  const EnlCaution **caution; /* n_cautions pointers into the caution table */
+  bool levelled;              /* the solvent's own anion is the base that acts */
+  char *reason;               /* one sentence, no full stop */
+  const EnlCaution **caution; /* n_cautions borrowed from the caution table */
   uint32_t n_cautions;
 } EnlCandidate;
 
-typedef struct EnlCautionTable EnlCautionTable;
-EnlStatus enl_caution_table_new (const char *text, size_t size, EnlCautionTable **out,
-                                 EnlError *err) ENL_MUST_USE;
-void enl_caution_table_free (EnlCautionTable *table);
-G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlCautionTable, enl_caution_table_free)
-/* The sentence that defers to local rules and a qualified person; shown with every suggestion. */
-const char *enl_caution_deferral (const EnlCautionTable *table);
-
 typedef struct {
-  EnlCandidate *candidate; /* best first */
+  EnlCandidate *candidate; /* best first: complete, largely, partial ...; among equals the least
+                              hazardous, then the mildest */
   uint32_t n_candidates;   /* every base of the table */
 } EnlComparison;
 

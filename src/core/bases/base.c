@@ -1,0 +1,156 @@
+#include "core/bases/base.h"
+
+#include <math.h>
+#include <string.h>
+
+#include "core/base/table.h"
+
+struct EnlBaseTable {
+  EnlTable *text; /* owns every string of the bases */
+  EnlBase *base;
+  uint32_t n;
+};
+
+typedef struct {
+  const EnlTable *table;
+  size_t row;
+} RowReader;
+
+static const char *
+cell (const RowReader *at, const char *column)
+{
+  return enl_table_cell (at->table, at->row, enl_table_column (at->table, column));
+}
+
+static double
+number (const RowReader *at, const char *column)
+{
+  return enl_table_number (at->table, at->row, enl_table_column (at->table, column));
+}
+
+static bool
+lists_word (const char *list, const char *word)
+{
+  g_auto (GStrv) part = g_strsplit (list, ";", -1);
+
+  for (char **p = part; *p; p++)
+    if (g_ascii_strcasecmp (g_strstrip (*p), word) == 0)
+      return true;
+  return false;
+}
+
+static void
+read_strengths (const RowReader *at, EnlBase *base)
+{
+  base->pkah[ENL_SOLVENT_DMSO] = number (at, "pKaH_DMSO");
+  base->sigma[ENL_SOLVENT_DMSO] = number (at, "sigma_DMSO");
+  base->pkah[ENL_SOLVENT_WATER] = number (at, "pKaH_water");
+  base->sigma[ENL_SOLVENT_WATER] = number (at, "sigma_water");
+  base->pkah[ENL_SOLVENT_THF] = base->sigma[ENL_SOLVENT_THF] = NAN;
+  /* In THF only the footing of carbon acids may be set against a carbon acid: the scale of
+   * cationic acids has another zero. */
+  if (strcmp (cell (at, "thf_footing"), "carbon acids") == 0) {
+    base->pkah[ENL_SOLVENT_THF] = number (at, "pKaH_THF");
+    base->sigma[ENL_SOLVENT_THF] = number (at, "sigma_THF");
+  }
+  base->pkah_nominal = number (at, "pKaH_nominal");
+  for (int s = 0; s < ENL_N_SOLVENTS; s++)
+    base->attacks[s] = lists_word (cell (at, "attacks"), enl_solvent_id ((EnlSolvent)s));
+}
+
+static void
+read_base (const RowReader *at, EnlBase *base)
+{
+  base->id = cell (at, "id");
+  base->name = cell (at, "name");
+  base->smiles = cell (at, "formula_or_smiles");
+  base->conjugate_acid = cell (at, "conjugate_acid_smiles");
+  base->cation = cell (at, "cation");
+  base->family = cell (at, "class");
+  base->nucleophilicity = cell (at, "nucleophilicity");
+  base->steric = cell (at, "steric");
+  base->typical_solvents = cell (at, "typical_solvents");
+  base->typical_temperature = cell (at, "typical_temperature_C");
+  base->incompatible = cell (at, "incompatible_with");
+  base->note = cell (at, "note");
+  base->source = cell (at, "source");
+  base->thf_scale = cell (at, "pKaH_THF_scale");
+  base->irreversible = strcmp (cell (at, "irreversible"), "yes") == 0;
+  base->number_unreliable = strcmp (cell (at, "number_holds"), "no") == 0;
+  read_strengths (at, base);
+}
+
+static EnlStatus
+check_columns (const EnlTable *table, EnlError *err)
+{
+  static const char *const needed[] = {"id",         "name",        "class",       "pKaH_DMSO",
+                                       "pKaH_water", "pKaH_THF",    "attacks",     "irreversible",
+                                       "source",     "thf_footing", "number_holds"};
+
+  for (size_t i = 0; i < ENL_COUNT (needed); i++)
+    if (enl_table_column (table, needed[i]) < 0)
+      return enl_error_set (err, ENL_ERROR_FORMAT, "restore the header line of the base table",
+                            "column '%s' is missing", needed[i]);
+  return ENL_OK;
+}
+
+EnlStatus
+enl_base_table_new (const char *text, size_t size, EnlBaseTable **out, EnlError *err)
+{
+  g_autoptr (EnlBaseTable) table = g_new0 (EnlBaseTable, 1);
+
+  *out = NULL;
+  EnlStatus status = enl_table_parse (text, size, &table->text, err);
+  if (status == ENL_OK)
+    status = check_columns (table->text, err);
+  if (status != ENL_OK)
+    return status;
+  table->n = (uint32_t)enl_table_rows (table->text);
+  table->base = g_new0 (EnlBase, table->n);
+  for (uint32_t i = 0; i < table->n; i++) {
+    RowReader at = {table->text, i};
+    read_base (&at, &table->base[i]);
+    if (!table->base[i].id[0] || enl_base_table_find (table, table->base[i].id) != (int)i) {
+      enl_error_set (err, ENL_ERROR_FORMAT, "give every base an id of its own",
+                     "base id '%s' is empty or used twice", table->base[i].id);
+      if (err)
+        err->line = enl_table_line (table->text, i), err->column = 1;
+      return ENL_ERROR_FORMAT;
+    }
+  }
+  *out = g_steal_pointer (&table);
+  return ENL_OK;
+}
+
+void
+enl_base_table_free (EnlBaseTable *table)
+{
+  if (!table)
+    return;
+  enl_table_free (table->text);
+  g_free (table->base);
+  g_free (table);
+}
+
+uint32_t
+enl_base_table_size (const EnlBaseTable *table)
+{
+  return table->n;
+}
+
+const EnlBase *
+enl_base_table_get (const EnlBaseTable *table, uint32_t index)
+{
+  g_assert (index < table->n);
+  return &table->base[index];
+}
+
+int
+enl_base_table_find (const EnlBaseTable *table, const char *text)
+{
+  for (uint32_t i = 0; i < table->n; i++)
+    if (table->base[i].id && (g_ascii_strcasecmp (table->base[i].id, text) == 0 ||
+                              g_ascii_strcasecmp (table->base[i].name, text) == 0))
+      return (int)i;
+  return -1;
+}

@@ -1,0 +1,400 @@
+#include "core/bases/compare.h"
+
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "core/bases/equilibrium.h"
+
+/* Two-sided 90 % of a normal distribution, in standard deviations. */
+#define Z90 1.645
+/* Lower ends of the verdicts, as fractions of the substrate. */
+#define COMPLETE_FROM 0.98
+#define LARGELY_FROM  0.90
+#define PARTIAL_FROM  0.10
+#define TRACE_FROM    0.001
+/* An irreversible base without a footing must be stronger than the site by this many units of its
+ * textbook figure before it is called strong enough: more than the doubt of that figure. */
+#define NOMINAL_MARGIN 5.0
+
+typedef struct {
+  const EnlBaseTable *bases;
+  const EnlCautionTable *cautions;
+  const EnlSites *sites;
+  const EnlEstimate *estimate;
+  const EnlConditions *conditions;
+  uint32_t target;
+  EnlSpecies *species; /* ionised forms, see list_species */
+  bool *holds_target;  /* the form has lost the target's hydrogen */
+  uint32_t n_species;
+  uint32_t n_before;    /* hydrogens that go before the target's */
+  uint32_t most_acidic; /* site index */
+  double ceiling;       /* pKaH of the solvent's own anion; NAN when it has no row */
+} Comparing;
+
+EnlConditions
+enl_conditions_default (void)
+{
+  return (EnlConditions){ENL_SOLVENT_DMSO, 1.05, 0.1, 25.0};
+}
+
+EnlStatus
+enl_conditions_check (const EnlConditions *c, EnlError *err)
+{
+  if (!(c->equivalents > 0.0 && c->equivalents <= 100.0))
+    return enl_error_set (err, ENL_ERROR_RANGE, "give more than 0 and at most 100 equivalents",
+                          "%g equivalents of base", c->equivalents);
+  if (!(c->concentration > 0.0 && c->concentration <= 20.0))
+    return enl_error_set (err, ENL_ERROR_RANGE, "give more than 0 and at most 20 mol/L",
+                          "concentration %g mol/L", c->concentration);
+  if (!(c->temperature >= -120.0 && c->temperature <= 200.0))
+    return enl_error_set (err, ENL_ERROR_RANGE, "give a temperature from -120 to 200 °C",
+                          "temperature %g °C", c->temperature);
+  return ENL_OK;
+}
+
+const char *
+enl_verdict_text (EnlVerdict verdict)
+{
+  static const char *const text[ENL_N_VERDICTS] = {
+      [ENL_VERDICT_COMPLETE] = "complete",
+      [ENL_VERDICT_LARGELY] = "largely",
+      [ENL_VERDICT_PARTIAL] = "partial",
+      [ENL_VERDICT_TRACE] = "trace only",
+      [ENL_VERDICT_NO] = "no",
+      [ENL_VERDICT_NO_NUMBER] = "no usable number",
+      [ENL_VERDICT_OFF_SCALE] = "not on this scale",
+      [ENL_VERDICT_SOLVENT] = "attacks the solvent",
+  };
+
+  g_assert (verdict < ENL_N_VERDICTS);
+  return text[verdict];
+}
+
+/* ---- ionised forms of the substrate ---- */
+
+static bool
+precedes (const Comparing *c, uint32_t site, uint32_t later)
+{
+  return site != later && c->sites->site[later].second && !c->sites->site[site].second &&
+         c->sites->site[site].acidic_heteroatom &&
+         c->estimate[site].value < c->estimate[later].value;
+}
+
+/* The form that has lost the hydrogen of `site` and every hydrogen that goes before it. */
+static EnlSpecies
+form_of_site (const Comparing *c, uint32_t site)
+{
+  EnlSpecies form = {c->estimate[site].value, 1};
+
+  for (uint32_t other = 0; other < c->sites->n_sites; other++)
+    if (precedes (c, other, site)) {
+      form.pk_sum += c->estimate[other].value;
+      form.lost++;
+    }
+  return form;
+}
+
+static void
+list_species (Comparing *c)
+{
+  uint32_t n = MIN (c->sites->n_sites, ENL_MAX_SPECIES);
+
+  c->species = g_new0 (EnlSpecies, n);
+  c->holds_target = g_new0 (bool, n);
+  c->n_species = n;
+  for (uint32_t i = 0; i < n; i++) {
+    c->species[i] = form_of_site (c, i);
+    c->holds_target[i] = i == c->target || precedes (c, c->target, i);
+    if (c->estimate[i].value < c->estimate[c->most_acidic].value)
+      c->most_acidic = i;
+  }
+  c->n_before = c->species[c->target].lost - 1;
+}
+
+/* ---- the solvent's own anion ---- */
+
+/* A base stronger than the solvent's anion hands its proton hunger on to the solvent. The anions
+ * are rows of the base table. THF has no such anion: bases that attack it are marked instead. */
+static double
+solvent_ceiling (const EnlBaseTable *bases, EnlSolvent solvent)
+{
+  static const char *const own_anion[ENL_N_SOLVENTS] = {
+      [ENL_SOLVENT_DMSO] = "dimsyl_na",
+      [ENL_SOLVENT_WATER] = "naoh",
+  };
+
+  if (!own_anion[solvent])
+    return NAN;
+  int index = enl_base_table_find (bases, own_anion[solvent]);
+  return index < 0 ? NAN : enl_base_table_get (bases, (uint32_t)index)->pkah[solvent];
+}
+
+/* ---- one base ---- */
+
+static EnlStatus
+solve_at (const Comparing *c, double pkah, double *conversion, double *ionised, EnlError *err)
+{
+  EnlEquilibrium problem = {c->species, c->n_species, c->conditions->concentration,
+                            c->conditions->concentration * c->conditions->equivalents, pkah};
+  EnlComposition *at = g_new (EnlComposition, 1);
+  EnlStatus status = enl_equilibrium_solve (&problem, at, err);
+
+  *conversion = 0.0;
+  *ionised = 0.0;
+  if (status == ENL_OK) {
+    for (uint32_t i = 0; i < c->n_species; i++)
+      if (c->holds_target[i])
+        *conversion += at->fraction[i];
+    *ionised = 1.0 - at->neutral;
+  }
+  g_free (at);
+  return status;
+}
+
+static EnlStatus
+judge_equilibrium (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err)
+{
+  double ionised, unused;
+  double doubt =
+      Z90 * hypot (c->estimate[c->target].sigma, isnan (base->sigma[c->conditions->solvent])
+                                                     ? 0.0
+                                                     : base->sigma[c->conditions->solvent]);
+  EnlStatus status = solve_at (c, out->pkah, &out->conversion, &ionised, err);
+
+  if (status == ENL_OK)
+    status = solve_at (c, out->pkah - doubt, &out->low, &unused, err);
+  if (status == ENL_OK)
+    status = solve_at (c, out->pkah + doubt, &out->high, &unused, err);
+  if (status != ENL_OK)
+    return status;
+  out->selectivity = ionised > 0.0 ? out->conversion / ionised : NAN;
+  out->verdict = out->conversion >= COMPLETE_FROM  ? ENL_VERDICT_COMPLETE
+                 : out->conversion >= LARGELY_FROM ? ENL_VERDICT_LARGELY
+                 : out->conversion >= PARTIAL_FROM ? ENL_VERDICT_PARTIAL
+                 : out->conversion >= TRACE_FROM   ? ENL_VERDICT_TRACE
+                                                   : ENL_VERDICT_NO;
+  return ENL_OK;
+}
+
+/* Stoichiometric: the base is used up by the most acidic hydrogens in turn. */
+static void
+judge_irreversible (const Comparing *c, EnlCandidate *out)
+{
+  bool in_turn = c->target == c->most_acidic || c->n_before > 0;
+  double left = c->conditions->equivalents - c->n_before;
+
+  out->conversion = in_turn ? CLAMP (left, 0.0, 1.0) : 0.0;
+  out->low = out->high = out->conversion;
+  out->selectivity = in_turn ? 1.0 : 0.0;
+  out->verdict = out->conversion >= COMPLETE_FROM  ? ENL_VERDICT_COMPLETE
+                 : out->conversion >= LARGELY_FROM ? ENL_VERDICT_LARGELY
+                 : out->conversion >= PARTIAL_FROM ? ENL_VERDICT_PARTIAL
+                                                   : ENL_VERDICT_NO;
+}
+
+static bool
+strong_enough (const Comparing *c, const EnlBase *base)
+{
+  double pkah = base->pkah[c->conditions->solvent];
+  double site = c->estimate[c->target].value;
+
+  return isnan (pkah) ? base->pkah_nominal > site + NOMINAL_MARGIN : pkah > site;
+}
+
+static void
+set_strength (const Comparing *c, const EnlBase *base, EnlCandidate *out)
+{
+  out->pkah = base->pkah[c->conditions->solvent];
+  if (!isnan (c->ceiling) && out->pkah > c->ceiling) {
+    out->pkah = c->ceiling;
+    out->levelled = true;
+  }
+  out->gap = out->pkah - c->estimate[c->target].value;
+}
+
+static EnlStatus
+judge (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err)
+{
+  EnlSolvent solvent = c->conditions->solvent;
+
+  out->pkah = out->gap = out->conversion = out->low = out->high = out->selectivity = NAN;
+  out->equivalents_needed = 1.0 + c->n_before;
+  if (base->attacks[solvent]) {
+    out->verdict = ENL_VERDICT_SOLVENT;
+  } else if (base->number_unreliable) {
+    out->pkah = base->pkah[solvent];
+    out->verdict = ENL_VERDICT_NO_NUMBER;
+  } else if (base->irreversible && strong_enough (c, base)) {
+    set_strength (c, base, out);
+    judge_irreversible (c, out);
+  } else if (isnan (base->pkah[solvent])) {
+    out->verdict = ENL_VERDICT_OFF_SCALE;
+  } else {
+    set_strength (c, base, out);
+    return judge_equilibrium (c, base, out, err);
+  }
+  return ENL_OK;
+}
+
+/* ---- reasons ---- */
+
+static const char *
+tail_of_partial (const Comparing *c, const EnlBase *base, const EnlCandidate *out)
+{
+  if (out->selectivity < 0.5 && c->target != c->most_acidic)
+    return "; another hydrogen takes the base first";
+  if (base->irreversible)
+    return "; add more base";
+  if (c->sites->site[c->target].alpha_carbonyl && out->conversion > 0.05)
+    return "; anion and carbonyl compound side by side can condense";
+  return "";
+}
+
+static char *
+equilibrium_reason (const Comparing *c, const EnlBase *base, const EnlCandidate *out)
+{
+  const char *level = out->levelled ? " (levelled to the solvent's anion)" : "";
+  g_autofree char *gap = isnan (out->gap) ? g_strdup ("stronger by far")
+                                          : g_strdup_printf ("gap %+.1f%s", out->gap, level);
+
+  if (base->irreversible)
+    return g_strdup_printf ("%s and the proton does not come back%s; what forms first under mixing "
+                            "need not be the equilibrium anion",
+                            gap, tail_of_partial (c, base, out));
+  if (out->verdict == ENL_VERDICT_COMPLETE)
+    return g_strdup_printf ("%s: the anion forms completely", gap);
+  return g_strdup_printf ("%s: %.3g %% of the anion at %.3g equivalents%s", gap,
+                          100.0 * out->conversion, c->conditions->equivalents,
+                          tail_of_partial (c, base, out));
+}
+
+static char *
+reason (const Comparing *c, const EnlBase *base, const EnlCandidate *out)
+{
+  const char *label = enl_solvent_label (c->conditions->solvent);
+
+  if (out->equivalents_needed > c->conditions->equivalents + 0.1 && !isnan (out->conversion))
+    return g_strdup_printf (
+        "%.0f equivalents are needed: more acidic hydrogens take the first %.0f",
+        out->equivalents_needed, out->equivalents_needed - 1.0);
+  switch (out->verdict) {
+  case ENL_VERDICT_SOLVENT:
+    return g_strdup_printf ("base and %s destroy each other", label);
+  case ENL_VERDICT_NO_NUMBER:
+    return g_strdup (
+        "its strength depends on dryness, surface or a Lewis acid, so no gap is shown");
+  case ENL_VERDICT_OFF_SCALE:
+    return base->irreversible
+               ? g_strdup_printf ("not clearly stronger than this site, and no value in %s", label)
+               : g_strdup_printf ("no value that can be set against this site in %s", label);
+  default:
+    return equilibrium_reason (c, base, out);
+  }
+}
+
+/* ---- ranking ---- */
+
+static int
+severity (const EnlCandidate *candidate)
+{
+  int worst = 0;
+
+  for (uint32_t i = 0; i < candidate->n_cautions; i++)
+    worst = MAX (worst, candidate->caution[i]->severity);
+  return worst;
+}
+
+static double
+strength (const EnlBaseTable *bases, const EnlCandidate *candidate)
+{
+  const EnlBase *base = enl_base_table_get (bases, candidate->base);
+
+  if (!isnan (candidate->pkah))
+    return candidate->pkah;
+  return isnan (base->pkah_nominal) ? INFINITY : base->pkah_nominal;
+}
+
+static int
+by_merit (const void *left, const void *right, void *data)
+{
+  const EnlCandidate *a = left, *b = right;
+
+  if (a->verdict != b->verdict)
+    return a->verdict < b->verdict ? -1 : 1;
+  if (a->verdict > ENL_VERDICT_LARGELY && a->conversion != b->conversion &&
+      !isnan (a->conversion) && !isnan (b->conversion))
+    return a->conversion > b->conversion ? -1 : 1;
+  if (severity (a) != severity (b))
+    return severity (a) < severity (b) ? -1 : 1;
+  double pa = strength (data, a), pb = strength (data, b);
+  if (pa != pb)
+    return pa < pb ? -1 : 1;
+  return a->base < b->base ? -1 : a->base > b->base;
+}
+
+/* ---- the comparison ---- */
+
+static EnlStatus
+fill (const Comparing *c, EnlComparison *comparison, EnlError *err)
+{
+  for (uint32_t i = 0; i < comparison->n_candidates; i++) {
+    EnlCandidate *candidate = &comparison->candidate[i];
+    const EnlBase *base = enl_base_table_get (c->bases, i);
+    candidate->base = i;
+    EnlStatus status = judge (c, base, candidate, err);
+    if (status != ENL_OK)
+      return status;
+    candidate->reason = reason (c, base, candidate);
+    candidate->caution =
+        enl_caution_collect (c->cautions, base, c->conditions->solvent,
+                             c->sites->site[c->target].alpha_carbonyl, &candidate->n_cautions);
+  }
+  return ENL_OK;
+}
+
+EnlStatus
+enl_bases_compare (const EnlBaseTable *bases, const EnlCautionTable *cautions,
+                   const EnlSites *sites, const EnlEstimate *estimate, uint32_t target,
+                   const EnlConditions *conditions, EnlComparison **out, EnlError *err)
+{
+  g_autoptr (EnlComparison) comparison = NULL;
+  Comparing c = {bases,      cautions, sites,  estimate,
+                 conditions, target,   NULL,   NULL,
+                 0,          0,        target, solvent_ceiling (bases, conditions->solvent)};
+
+  *out = NULL;
+  g_assert (target < sites->n_sites);
+  EnlStatus status = enl_conditions_check (conditions, err);
+  if (status != ENL_OK)
+    return status;
+  if (sites->n_sites > ENL_MAX_SPECIES)
+    return enl_error_set (err, ENL_ERROR_LIMIT, "compare bases for a smaller part of the molecule",
+                          "more than %d acidic sites", ENL_MAX_SPECIES);
+  list_species (&c);
+  comparison = g_new0 (EnlComparison, 1);
+  comparison->n_candidates = enl_base_table_size (bases);
+  comparison->candidate = g_new0 (EnlCandidate, comparison->n_candidates);
+  status = fill (&c, comparison, err);
+  g_free (c.species);
+  g_free (c.holds_target);
+  if (status != ENL_OK)
+    return status;
+  g_qsort_with_data (comparison->candidate, (int)comparison->n_candidates, sizeof (EnlCandidate),
+                     by_merit, (void *)bases);
+  *out = g_steal_pointer (&comparison);
+  return ENL_OK;
+}
+
+void
+enl_comparison_free (EnlComparison *comparison)
+{
+  if (!comparison)
+    return;
+  for (uint32_t i = 0; i < comparison->n_candidates; i++) {
+    g_free (comparison->candidate[i].reason);
+    g_free (comparison->candidate[i].caution);
+  }
+  g_free (comparison->candidate);
+  g_free (comparison);
+}
