@@ -1,6 +1,8 @@
 /* Every colour, width and size of a picture in one object. */
 #pragma once
 
+#include <stdint.h>
+
 #include "core/base/macros.h"
 
 typedef enum {
@@ -15,7 +17,9 @@ typedef enum {
   ENL_TONE_HETERO,
   ENL_TONE_SITE,        /* the acidic hydrogen and its badge */
   ENL_TONE_SITE_TEXT,   /* text on a badge */
-  ENL_TONE_ACTIVE,      /* the selected site and its delocalised system */
+  ENL_TONE_ACTIVE,      /* the selected site */
+  ENL_TONE_ACTIVE_SOFT, /* area behind its delocalised system; opaque, so that parts may overlap */
+  ENL_TONE_ACTIVE_TEXT, /* text on a badge of the selected site */
   ENL_TONE_CHARGE,      /* negative charge areas */
   ENL_TONE_CHARGE_PLUS, /* positive charge areas */
   ENL_TONE_ARROW,       /* curved arrows */
@@ -45,8 +49,12 @@ typedef struct {
   const char *family; /* font family list for Pango */
 } EnlTheme;
 
-/* Static. */
+/* Static. The themes are safe for the common kinds of colour blindness and every text tone has a
+ * contrast of at least 4.5:1 on ground and panel (7:1 in the projector theme); see tests/draw. */
 const EnlTheme *enl_theme_get (EnlThemeName name);
 /* "light", "dark", "print", "projector". */
 const char *enl_theme_id (EnlThemeName name);
 int enl_theme_find (const char *id); /* -1 when unknown */
+
+/* Tone of the label of an element (atomic number). */
+EnlTone enl_theme_element_tone (uint8_t element);
