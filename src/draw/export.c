@@ -6,7 +6,7 @@
 #include <math.h>
 #include <string.h>
 
-#include "draw/geometry.h"
+#include "draw/plane.h"
 #include "draw/paint.h"
 
 #define PX_PER_INCH 96.0

@@ -4,7 +4,7 @@
 #include <math.h>
 #include <string.h>
 
-#include "draw/geometry.h"
+#include "draw/plane.h"
 
 /* Less than this is rounding, not a collision. */
 #define FAULT_TOLERANCE 0.5 /* px */

@@ -3,7 +3,7 @@
 #include <math.h>
 #include <string.h>
 
-#include "draw/geometry.h"
+#include "draw/plane.h"
 #include "draw/text.h"
 
 struct EnlScene {

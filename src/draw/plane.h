@@ -25,7 +25,7 @@ EnlPoint enl_point_left (EnlPoint direction);
 double enl_angle_between (double a, double b);
 
 double enl_segment_distance (EnlPoint a, EnlPoint b, EnlPoint p);
-bool enl_segments_cross (EnlPoint a, EnlPoint b, EnlPoint c, EnlPoint d);
+bool enl_lines_cross (EnlPoint a, EnlPoint b, EnlPoint c, EnlPoint d);
 /* Length of the part of a-b inside the rectangle. */
 double enl_segment_inside (EnlPoint a, EnlPoint b, EnlRect rect);
 

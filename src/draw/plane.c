@@ -1,4 +1,4 @@
-#include "draw/geometry.h"
+#include "draw/plane.h"
 
 #include <math.h>
 
@@ -61,7 +61,7 @@ turn (EnlPoint a, EnlPoint b, EnlPoint c)
 }
 
 bool
-enl_segments_cross (EnlPoint a, EnlPoint b, EnlPoint c, EnlPoint d)
+enl_lines_cross (EnlPoint a, EnlPoint b, EnlPoint c, EnlPoint d)
 {
   return turn (a, b, c) * turn (a, b, d) < 0 && turn (c, d, a) * turn (c, d, b) < 0;
 }

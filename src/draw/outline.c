@@ -1,0 +1,118 @@
+#include "draw/outline.h"
+
+#include <math.h>
+
+#include "draw/plane.h"
+
+#define HIT_RADIUS 0.24 /* bond lengths */
+
+EnlOutline *
+enl_outline_new (const EnlMolecule *mol, const EnlTheme *theme)
+{
+  g_assert (enl_molecule_has_layout (mol));
+  EnlOutline *outline = g_new0 (EnlOutline, 1);
+  uint32_t n = enl_molecule_atoms (mol);
+
+  outline->mol = mol;
+  outline->theme = theme;
+  outline->n_atoms = n;
+  outline->n_bonds = enl_molecule_bonds (mol);
+  outline->at = g_new (EnlPoint, n);
+  outline->label = g_new0 (EnlLabel, n);
+  outline->force_label = g_new0 (bool, n);
+  outline->hydrogen = g_new (EnlTone, n);
+  outline->taken = enl_obstacles_new ();
+  for (uint32_t i = 0; i < n; i++) {
+    const EnlAtom *atom = enl_molecule_atom (mol, i);
+    outline->at[i] = (EnlPoint){atom->x * theme->bond_length, -atom->y * theme->bond_length};
+    outline->hydrogen[i] = ENL_N_TONES;
+  }
+  return outline;
+}
+
+void
+enl_outline_free (EnlOutline *outline)
+{
+  if (!outline)
+    return;
+  for (uint32_t i = 0; i < outline->n_atoms; i++)
+    for (uint32_t k = 0; k < outline->label[i].n_pieces; k++)
+      g_free (outline->label[i].piece[k].markup);
+  g_free (outline->at);
+  g_free (outline->label);
+  g_free (outline->force_label);
+  g_free (outline->hydrogen);
+  enl_obstacles_free (outline->taken);
+  g_free (outline);
+}
+
+double
+enl_outline_order (const EnlOutline *outline, uint32_t bond)
+{
+  if (outline->bond_order)
+    return outline->bond_order[bond];
+  return enl_molecule_bond (outline->mol, bond)->order;
+}
+
+static int
+compare_double (const void *a, const void *b)
+{
+  double x = *(const double *)a, y = *(const double *)b;
+
+  return (x > y) - (x < y);
+}
+
+void
+enl_outline_free_angle (const EnlOutline *outline, uint32_t atom, double *middle, double *size)
+{
+  uint32_t n = enl_molecule_degree (outline->mol, atom);
+  g_autofree double *angle = g_new (double, n + 1);
+
+  *middle = 0;
+  *size = 2 * G_PI;
+  if (n == 0)
+    return;
+  for (uint32_t k = 0; k < n; k++)
+    angle[k] = enl_point_angle (outline->at[atom],
+                                outline->at[enl_molecule_neighbour (outline->mol, atom, k)]);
+  qsort (angle, n, sizeof *angle, compare_double);
+  angle[n] = angle[0] + 2 * G_PI;
+  *size = 0;
+  for (uint32_t k = 0; k < n; k++)
+    if (angle[k + 1] - angle[k] > *size + 1e-6) {
+      *size = angle[k + 1] - angle[k];
+      *middle = (angle[k + 1] + angle[k]) / 2;
+    }
+}
+
+EnlPoint
+enl_outline_centre (const EnlOutline *outline)
+{
+  EnlPoint sum = {0, 0};
+
+  for (uint32_t i = 0; i < outline->n_atoms; i++)
+    sum = enl_point_add (sum, outline->at[i], 1.0 / outline->n_atoms);
+  return sum;
+}
+
+EnlRect
+enl_outline_atom_box (const EnlOutline *outline, uint32_t atom)
+{
+  const EnlLabel *label = &outline->label[atom];
+  EnlRect box = {outline->at[atom].x, outline->at[atom].y, 0, 0};
+
+  for (uint32_t k = 0; k < label->n_pieces; k++)
+    box = k ? enl_rect_union (box, label->piece[k].box) : label->piece[k].box;
+  return box;
+}
+
+void
+enl_outline_draw_hit_areas (const EnlOutline *outline, EnlScene *scene)
+{
+  for (uint32_t i = 0; i < outline->n_atoms; i++) {
+    EnlShape *disc = enl_scene_disc (scene, outline->at[i],
+                                     HIT_RADIUS * outline->theme->bond_length, ENL_TONE_INK);
+    disc->opacity = 0;
+    disc->atom = i;
+  }
+}
