@@ -1,7 +1,8 @@
 /* One connected fragment: from a graph in canonical order to a picture. */
 #pragma once
 
-#include "core/layout/sketch.h"
+#include "core/layout/template.h"
 
-/* Fills the spots: bond length 1, y up. ENL_ERROR_NUMERIC when no usable picture was found. */
-EnlStatus enl_fragment_place (EnlSketch *sketch, EnlError *err) ENL_MUST_USE;
+/* Fills the spots: bond length 1, y up, upright. Cannot fail: where CoordGen gives up our own
+ * assembly takes over. */
+void enl_fragment_draw (EnlSketch *sketch, const EnlTemplates *templates);

@@ -41,9 +41,9 @@ order_fragments (const EnlMolecule *mol, const uint32_t *rank, const uint32_t *o
   return list;
 }
 
-static EnlStatus
+static void
 lay_out_fragment (EnlMolecule *mol, const uint32_t *rank, const uint32_t *of, uint32_t fragment,
-                  EnlError *err)
+                  const EnlTemplates *templates)
 {
   uint32_t n = enl_molecule_atoms (mol);
   g_autofree bool *keep = g_new (bool, n + 1);
@@ -51,15 +51,12 @@ lay_out_fragment (EnlMolecule *mol, const uint32_t *rank, const uint32_t *of, ui
   for (uint32_t i = 0; i < n; i++)
     keep[i] = of[i] == fragment && !enl_hydrogen_hangs (mol, i);
   g_autoptr (EnlSketch) sketch = enl_sketch_new (mol, rank, keep);
-  EnlStatus status = enl_fragment_place (sketch, err);
-  if (status != ENL_OK)
-    return status;
+  enl_fragment_draw (sketch, templates);
   for (uint32_t i = 0; i < sketch->n_atoms; i++) {
     EnlAtom *atom = enl_molecule_edit_atom (mol, sketch->atom[i].source);
     atom->x = sketch->spot[i].x;
     atom->y = sketch->spot[i].y;
   }
-  return ENL_OK;
 }
 
 /* Shifts the fragment so that its box starts at `left` and is centred on y = 0; hydrogens that are
@@ -98,6 +95,15 @@ set_side_by_side (EnlMolecule *mol, const uint32_t *of, const Fragment *list, ui
     left = shift_fragment (mol, of, list[k].index, with_hydrogens, left) + fragment_gap;
 }
 
+static bool
+all_finite (const EnlMolecule *mol)
+{
+  for (uint32_t i = 0; i < enl_molecule_atoms (mol); i++)
+    if (!isfinite (enl_molecule_atom (mol, i)->x) || !isfinite (enl_molecule_atom (mol, i)->y))
+      return false;
+  return true;
+}
+
 EnlStatus
 enl_layout (EnlMolecule *mol, EnlError *err)
 {
@@ -108,14 +114,15 @@ enl_layout (EnlMolecule *mol, EnlError *err)
   enl_canonical_ranks (mol, rank);
   uint32_t n_fragments = enl_molecule_fragments (mol, of);
   g_autofree Fragment *list = order_fragments (mol, rank, of, n_fragments);
-  for (uint32_t k = 0; k < n_fragments; k++) {
-    EnlStatus status = lay_out_fragment (mol, rank, of, list[k].index, err);
-    if (status != ENL_OK)
-      return status;
-  }
+  g_autoptr (EnlTemplates) templates = enl_templates_new ();
+  for (uint32_t k = 0; k < n_fragments; k++)
+    lay_out_fragment (mol, rank, of, list[k].index, templates);
   set_side_by_side (mol, of, list, n_fragments, false);
   enl_hydrogens_place (mol, rank);
   set_side_by_side (mol, of, list, n_fragments, true);
+  if (!all_finite (mol))
+    return enl_error_set (err, ENL_ERROR_NUMERIC, "draw it by hand or give coordinates",
+                          "no picture of this structure was found");
   enl_molecule_set_has_layout (mol, true);
   enl_stereo_draw_wedges (mol);
   return ENL_OK;

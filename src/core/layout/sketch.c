@@ -111,23 +111,62 @@ build_adjacency (EnlSketch *sketch)
   }
 }
 
-EnlSketch *
-enl_sketch_new (const EnlMolecule *mol, const uint32_t *rank, const bool *keep)
+static EnlSketch *
+sketch_allocate (uint32_t n, uint32_t m)
 {
   EnlSketch *sketch = g_new0 (EnlSketch, 1);
-  uint32_t n = enl_molecule_atoms (mol), m = enl_molecule_bonds (mol);
-  g_autofree uint32_t *place = g_new (uint32_t, n + 1);
 
   sketch->atom = g_new0 (EnlSketchAtom, n + 1);
   sketch->bond = g_new0 (EnlSketchBond, m + 1);
+  sketch->spot = g_new0 (EnlSpot, n + 1);
+  sketch->first = g_new0 (uint32_t, n + 2);
+  sketch->neighbour = g_new0 (uint32_t, 2 * m + 1);
+  sketch->via = g_new0 (uint32_t, 2 * m + 1);
+  return sketch;
+}
+
+EnlSketch *
+enl_sketch_new (const EnlMolecule *mol, const uint32_t *rank, const bool *keep)
+{
+  uint32_t n = enl_molecule_atoms (mol), m = enl_molecule_bonds (mol);
+  EnlSketch *sketch = sketch_allocate (n, m);
+  g_autofree uint32_t *place = g_new (uint32_t, n + 1);
+
   take_atoms (sketch, mol, rank, keep, place);
   take_bonds (sketch, mol, place);
-  sketch->spot = g_new0 (EnlSpot, sketch->n_atoms + 1);
-  sketch->first = g_new0 (uint32_t, sketch->n_atoms + 2);
-  sketch->neighbour = g_new0 (uint32_t, 2 * sketch->n_bonds + 1);
-  sketch->via = g_new0 (uint32_t, 2 * sketch->n_bonds + 1);
   build_adjacency (sketch);
   return sketch;
+}
+
+EnlSketch *
+enl_sketch_part (const EnlSketch *whole, const bool *keep)
+{
+  EnlSketch *part = sketch_allocate (whole->n_atoms, whole->n_bonds);
+  g_autofree uint32_t *place = g_new (uint32_t, whole->n_atoms + 1);
+
+  for (uint32_t i = 0; i < whole->n_atoms; i++) {
+    place[i] = ENL_NONE;
+    if (!keep[i])
+      continue;
+    place[i] = part->n_atoms;
+    part->spot[part->n_atoms] = whole->spot[i];
+    part->atom[part->n_atoms] = whole->atom[i];
+    part->atom[part->n_atoms++].source = i;
+  }
+  for (uint32_t b = 0; b < whole->n_bonds; b++) {
+    EnlSketchBond bond = whole->bond[b];
+    if (!keep[bond.from] || !keep[bond.to])
+      continue;
+    bond.from = place[bond.from], bond.to = place[bond.to];
+    if (bond.side != ENL_SIDE_NONE) {
+      bond.side_from = place[bond.side_from], bond.side_to = place[bond.side_to];
+      if (bond.side_from == ENL_NONE || bond.side_to == ENL_NONE)
+        bond.side = ENL_SIDE_NONE;
+    }
+    part->bond[part->n_bonds++] = bond;
+  }
+  build_adjacency (part);
+  return part;
 }
 
 void

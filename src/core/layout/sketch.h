@@ -42,6 +42,9 @@ typedef struct {
 /* The atoms of `mol` with keep[atom] true, in the order of `rank`; they must be connected. */
 EnlSketch *enl_sketch_new (const EnlMolecule *mol, const uint32_t *rank,
                            const bool *keep) ENL_MUST_USE;
+/* The atoms of another sketch with keep[atom] true, as a sketch of its own with the same spots;
+ * `source` is then the atom in `whole`. Sides whose references are left out are dropped. */
+EnlSketch *enl_sketch_part (const EnlSketch *whole, const bool *keep) ENL_MUST_USE;
 void enl_sketch_free (EnlSketch *sketch);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlSketch, enl_sketch_free)
 
