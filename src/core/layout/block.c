@@ -21,6 +21,10 @@ static const uint32_t solid_below = 60;
  * trade knows the templates, and flat rings are easier to read. */
 static const double template_bonus = 4, solid_malus = 1.5, fused_template_malus = 0.3;
 
+/* Of several templates of one system the first is the usual picture; the others wait until their
+ * neighbours fit better by this much each. */
+static const double later_template_malus = 0.6;
+
 /* Bonds of redrawn cages may be foreshortened within these. */
 static const double short_bond = 0.75, long_bond = 1.35;
 
@@ -85,18 +89,27 @@ consider (Choice *choice, const EnlSpot *spot, double malus, EnlBlockPicture kin
   memcpy (choice->best, choice->part->spot, choice->part->n_atoms * sizeof (EnlSpot));
 }
 
+typedef struct {
+  Choice *choice;
+  uint32_t n_atoms, n_earlier; /* of the template; templates of this system tried before */
+  bool matched;
+} TemplateTrial;
+
+/* A template and its mirror image. What the drawing itself strains is no fault of this fit. */
 static bool
 consider_template (const uint32_t *image, const EnlSpot *spot, void *data)
 {
-  Choice *choice = data;
-  g_autofree EnlSpot *placed = g_new (EnlSpot, choice->ring->n_atoms + 1);
+  TemplateTrial *trial = data;
+  EnlSketch *ring = trial->choice->ring;
 
-  for (uint32_t t = 0; t < choice->ring->n_atoms; t++)
-    placed[image[t]] = spot[t];
-  consider (choice, placed, -template_bonus, ENL_BLOCK_TEMPLATE);
-  for (uint32_t t = 0; t < choice->ring->n_atoms; t++)
-    placed[image[t]].x = -spot[t].x;
-  consider (choice, placed, -template_bonus, ENL_BLOCK_TEMPLATE);
+  trial->matched = true;
+  for (int mirror = 0; mirror < 2; mirror++) {
+    for (uint32_t t = 0; t < ring->n_atoms; t++)
+      ring->spot[image[t]] = (EnlSpot){mirror ? -spot[t].x : spot[t].x, spot[t].y};
+    double own = enl_strain_crowding (ring) + enl_strain_stretch (ring);
+    consider (trial->choice, ring->spot,
+              later_template_malus * trial->n_earlier - template_bonus - own, ENL_BLOCK_TEMPLATE);
+  }
   return true;
 }
 
@@ -104,14 +117,11 @@ consider_template (const uint32_t *image, const EnlSpot *spot, void *data)
 static bool
 consider_part_template (const uint32_t *image, const EnlSpot *spot, void *data)
 {
-  struct {
-    Choice *choice;
-    uint32_t n;
-  } *of = data;
+  const TemplateTrial *of = data;
   EnlSketch *ring = of->choice->ring;
   g_autofree bool *held = g_new0 (bool, ring->n_atoms + 1);
 
-  for (uint32_t t = 0; t < of->n; t++) {
+  for (uint32_t t = 0; t < of->n_atoms; t++) {
     ring->spot[image[t]] = spot[t];
     held[image[t]] = true;
   }
@@ -126,20 +136,21 @@ consider_part_template (const uint32_t *image, const EnlSpot *spot, void *data)
 static void
 consider_templates (Choice *choice, const EnlTemplates *templates)
 {
-  for (uint32_t k = 0; k < enl_templates_count (templates); k++)
-    enl_template_match (templates, k, choice->ring, true, consider_template, choice);
+  TemplateTrial trial = {.choice = choice};
+
+  for (uint32_t k = 0; k < enl_templates_count (templates); k++) {
+    trial.matched = false;
+    enl_template_match (templates, k, choice->ring, true, consider_template, &trial);
+    trial.n_earlier += trial.matched;
+  }
 }
 
-/* Only a few ways of laying a part template are tried: each is a run of CoordGen. */
 static void
 consider_part_templates (Choice *choice, const EnlTemplates *templates)
 {
   for (uint32_t k = 0; k < enl_templates_count (templates); k++) {
-    struct {
-      Choice *choice;
-      uint32_t n;
-    } of = {choice, enl_template_atoms (templates, k)};
-    enl_template_match (templates, k, choice->ring, false, consider_part_template, &of);
+    TemplateTrial trial = {.choice = choice, .n_atoms = enl_template_atoms (templates, k)};
+    enl_template_match (templates, k, choice->ring, false, consider_part_template, &trial);
   }
 }
 
