@@ -81,6 +81,16 @@ void enl_molecule_finish (EnlMolecule *mol);
 EnlAtom *enl_molecule_edit_atom (EnlMolecule *mol, uint32_t atom);
 EnlBond *enl_molecule_edit_bond (EnlMolecule *mol, uint32_t bond);
 
+/* Removes the atoms with remove[atom], their bonds, and stereo that rested on them; `renumber`
+ * (NULL allowed) receives the new index of each old atom or ENL_NONE. Needs a new finish. */
+void enl_molecule_remove_atoms (EnlMolecule *mol, const bool *remove, uint32_t *renumber);
+
+/* Counts plain hydrogen atoms ([H] by a single bond on one atom other than hydrogen or '*', without
+ * isotope, charge or map) in that atom's `hydrogens` instead, keeping windings and sides (a
+ * hydrogen that alone tells the side of a double bond stays). Needs adjacency or a finished
+ * molecule; finishes it again and returns true when something was folded. */
+bool enl_molecule_fold_hydrogens (EnlMolecule *mol);
+
 /* ---- reading; all need a finished molecule ---- */
 
 uint32_t enl_molecule_atoms (const EnlMolecule *mol);
