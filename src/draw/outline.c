@@ -54,35 +54,61 @@ enl_outline_order (const EnlOutline *outline, uint32_t bond)
   return enl_molecule_bond (outline->mol, bond)->order;
 }
 
+typedef struct {
+  double angle;
+  uint32_t neighbour;
+} Ray;
+
 static int
-compare_double (const void *a, const void *b)
+compare_ray (const void *a, const void *b)
 {
-  double x = *(const double *)a, y = *(const double *)b;
+  double x = ((const Ray *)a)->angle, y = ((const Ray *)b)->angle;
 
   return (x > y) - (x < y);
+}
+
+/* The angle from one bond to the next is inside a ring when that ring has both. */
+static bool
+inside_ring (const EnlOutline *outline, uint32_t atom, const Ray *from, const Ray *to)
+{
+  for (uint32_t r = 0; r < enl_molecule_rings (outline->mol); r++) {
+    uint32_t size, hits = 0;
+    const uint32_t *member = enl_molecule_ring (outline->mol, r, &size);
+    for (uint32_t k = 0; k < size; k++)
+      hits += member[k] == atom || member[k] == from->neighbour || member[k] == to->neighbour;
+    if (hits == 3 && to->angle - from->angle < G_PI)
+      return true;
+  }
+  return false;
 }
 
 void
 enl_outline_free_angle (const EnlOutline *outline, uint32_t atom, double *middle, double *size)
 {
   uint32_t n = enl_molecule_degree (outline->mol, atom);
-  g_autofree double *angle = g_new (double, n + 1);
+  g_autofree Ray *ray = g_new (Ray, n + 1);
+  double best = -INFINITY;
 
   *middle = 0;
   *size = 2 * G_PI;
   if (n == 0)
     return;
-  for (uint32_t k = 0; k < n; k++)
-    angle[k] = enl_point_angle (outline->at[atom],
-                                outline->at[enl_molecule_neighbour (outline->mol, atom, k)]);
-  qsort (angle, n, sizeof *angle, compare_double);
-  angle[n] = angle[0] + 2 * G_PI;
-  *size = 0;
-  for (uint32_t k = 0; k < n; k++)
-    if (angle[k + 1] - angle[k] > *size + 1e-6) {
-      *size = angle[k + 1] - angle[k];
-      *middle = (angle[k + 1] + angle[k]) / 2;
+  for (uint32_t k = 0; k < n; k++) {
+    ray[k].neighbour = enl_molecule_neighbour (outline->mol, atom, k);
+    ray[k].angle = enl_point_angle (outline->at[atom], outline->at[ray[k].neighbour]);
+  }
+  qsort (ray, n, sizeof *ray, compare_ray);
+  ray[n] = (Ray){ray[0].angle + 2 * G_PI, ray[0].neighbour};
+  for (uint32_t k = 0; k < n; k++) {
+    double gap = ray[k + 1].angle - ray[k].angle;
+    double score =
+        gap - (n > 2 && inside_ring (outline, atom, &ray[k], &ray[k + 1]) ? G_PI / 2 : 0);
+    if (score > best + 1e-6) {
+      best = score;
+      *size = gap;
+      *middle = (ray[k + 1].angle + ray[k].angle) / 2;
     }
+  }
 }
 
 EnlPoint

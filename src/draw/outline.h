@@ -64,7 +64,8 @@ void enl_outline_draw_labels (const EnlOutline *outline, EnlScene *scene);
 /* Invisible discs that make atoms easy to hit. */
 void enl_outline_draw_hit_areas (const EnlOutline *outline, EnlScene *scene);
 
-/* The widest free angle around an atom: its middle and its size (2 pi for a lone atom). */
+/* The best free angle around an atom: its middle and its size (2 pi for a lone atom). The widest
+ * one, but rather outside of rings than inside. */
 void enl_outline_free_angle (const EnlOutline *outline, uint32_t atom, double *middle,
                              double *size);
 /* Mean of the atom positions. */

@@ -37,6 +37,16 @@ enl_obstacles_new (void)
   return obstacles;
 }
 
+EnlObstacles *
+enl_obstacles_copy (const EnlObstacles *obstacles)
+{
+  EnlObstacles *copy = g_new0 (EnlObstacles, 1);
+
+  copy->box = g_array_copy (obstacles->box);
+  copy->line = g_array_copy (obstacles->line);
+  return copy;
+}
+
 void
 enl_obstacles_free (EnlObstacles *obstacles)
 {
@@ -73,6 +83,16 @@ enl_obstacles_in_box (const EnlObstacles *obstacles, EnlRect box)
     sum += enl_segment_inside (line->a, line->b, enl_rect_grow (box, line->half));
   }
   return sum;
+}
+
+uint32_t
+enl_obstacles_boxes_at (const EnlObstacles *obstacles, EnlRect box)
+{
+  uint32_t hits = 0;
+
+  for (guint i = 0; i < obstacles->box->len; i++)
+    hits += enl_rect_overlap (g_array_index (obstacles->box, EnlRect, i), box) > 0;
+  return hits;
 }
 
 uint32_t
@@ -115,17 +135,22 @@ static EnlPlace
 judge (const EnlObstacles *obstacles, const EnlPlaceQuery *query, double angle, double gap,
        double best)
 {
-  EnlPoint u = enl_point_polar (angle);
+  EnlPoint u = enl_point_polar (angle), centre = query->anchor;
   double away = query->clearance + gap + box_support (query->width, query->height, u);
-  EnlPoint c = enl_point_add (query->anchor, u, away);
-  EnlRect box = {c.x - query->width / 2, c.y - query->height / 2, query->width, query->height};
-  EnlPlace place = {.box = box, .gap = gap};
 
-  place.cost = gap + COST_OF_TURN * enl_angle_between (angle, query->toward) / G_PI +
+  centre = enl_point_add (centre, u, away);
+  EnlRect box = {centre.x - query->width / 2, centre.y - query->height / 2, query->width,
+                 query->height};
+  EnlPoint hook = {box.x + query->hook.x, box.y + query->hook.y};
+  EnlPlace place = {.box = box};
+  place.gap = enl_point_distance (query->anchor, hook) - query->clearance - query->hook_radius;
+  place.cost = fmax (gap, place.gap) +
+               COST_OF_TURN * enl_angle_between (angle, query->toward) / G_PI +
                COST_OF_CROWD * growth (query->crowd, box);
-  if (gap > query->leader_gap) {
-    EnlPoint start = enl_point_add (query->anchor, u, query->clearance);
-    EnlPoint end = enl_point_add (start, u, gap);
+  if (place.gap > query->leader_gap) {
+    EnlPoint way = enl_point_direction (query->anchor, hook);
+    EnlPoint start = enl_point_add (query->anchor, way, query->clearance + 1);
+    EnlPoint end = enl_point_add (hook, way, -query->hook_radius);
     place.cost +=
         COST_OF_LEADER + COST_OF_CROSS * enl_obstacles_across (obstacles, start, end, FIRST_GAP);
   }

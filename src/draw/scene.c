@@ -234,3 +234,10 @@ enl_scene_append (EnlScene *scene, const EnlScene *part, double scale, double dx
     copy->box = moved_box (old->box, scale, dx, dy);
   }
 }
+
+void
+enl_scene_set_substrate (EnlScene *scene, uint32_t substrate)
+{
+  for (uint32_t i = 0; i < scene->shape->len; i++)
+    ((EnlShape *)g_ptr_array_index (scene->shape, i))->substrate = substrate;
+}

@@ -71,6 +71,9 @@ EnlShape *enl_scene_text (EnlScene *scene, EnlPoint anchor, const char *markup, 
 /* Copies all shapes of `part`, scaled then moved. */
 void enl_scene_append (EnlScene *scene, const EnlScene *part, double scale, double dx, double dy);
 
+/* Makes every shape belong to one substrate. */
+void enl_scene_set_substrate (EnlScene *scene, uint32_t substrate);
+
 /* Topmost shape with an owner within `reach` px of the point, or NULL. */
 const EnlShape *enl_scene_hit (const EnlScene *scene, double x, double y, double reach);
 

@@ -22,6 +22,7 @@ draw_number (EnlOutline *outline, EnlScene *scene, uint32_t atom)
                          .width = ink.width,
                          .height = ink.height,
                          .pad = 1.5,
+                         .hook = {ink.width / 2, ink.height / 2},
                          .reach = theme->bond_length,
                          .leader_gap = INFINITY};
   double free_angle;

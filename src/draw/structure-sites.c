@@ -13,27 +13,14 @@
 #define SEEN_CHARGE 0.04         /* elementary charges; less is no part of the system */
 #define SEEN_WEIGHT 0.004        /* of a form whose bonds are lit */
 
-typedef struct {
-  uint32_t atom, site;
-  EnlPoint at; /* middle of the letter */
-  EnlRect box;
-} Hydrogen;
-
-struct EnlSitePlan {
-  EnlOutline *outline;          /* borrowed */
-  const EnlStructureLook *look; /* borrowed */
-  uint32_t *site_of;            /* per atom, ENL_NONE outside the sites */
-  GArray *hydrogen;             /* of Hydrogen */
-};
-
 static bool
 has_sites (const EnlStructureLook *look)
 {
   return look->sites && look->sites->n_sites > 0;
 }
 
-static EnlTone
-site_tone (const EnlStructureLook *look, uint32_t site)
+EnlTone
+enl_site_tone (const EnlStructureLook *look, uint32_t site)
 {
   return site == look->selected ? ENL_TONE_ACTIVE : ENL_TONE_SITE;
 }
@@ -55,7 +42,7 @@ enl_site_plan_new (EnlOutline *outline, const EnlStructureLook *look)
   plan->outline = outline;
   plan->look = look;
   plan->site_of = g_new (uint32_t, outline->n_atoms);
-  plan->hydrogen = g_array_new (FALSE, FALSE, sizeof (Hydrogen));
+  plan->hydrogen = g_array_new (FALSE, FALSE, sizeof (EnlDrawnHydrogen));
   for (uint32_t i = 0; i < outline->n_atoms; i++)
     plan->site_of[i] = ENL_NONE;
   for (uint32_t s = 0; has_sites (look) && s < look->sites->n_sites; s++) {
@@ -64,7 +51,7 @@ enl_site_plan_new (EnlOutline *outline, const EnlStructureLook *look)
       uint32_t atom = site->atom[k];
       g_assert (atom < outline->n_atoms);
       plan->site_of[atom] = s;
-      outline->hydrogen[atom] = site_tone (look, s);
+      outline->hydrogen[atom] = enl_site_tone (look, s);
       outline->force_label[atom] = wants_label (outline->mol, atom);
     }
   }
@@ -83,11 +70,11 @@ enl_site_plan_free (EnlSitePlan *plan)
 
 /* ---- drawn-out hydrogens ---- */
 
-static Hydrogen
+static EnlDrawnHydrogen
 hydrogen_at (const EnlSitePlan *plan, uint32_t atom, double angle)
 {
   const EnlTheme *theme = plan->outline->theme;
-  Hydrogen h = {.atom = atom, .site = plan->site_of[atom]};
+  EnlDrawnHydrogen h = {.atom = atom, .site = plan->site_of[atom]};
 
   h.at =
       enl_point_add (plan->outline->at[atom], enl_point_polar (angle), H_BOND * theme->bond_length);
@@ -96,13 +83,13 @@ hydrogen_at (const EnlSitePlan *plan, uint32_t atom, double angle)
 }
 
 static double
-collision (const EnlSitePlan *plan, const Hydrogen *h)
+collision (const EnlSitePlan *plan, const EnlDrawnHydrogen *h)
 {
   return enl_obstacles_in_box (plan->outline->taken, enl_rect_grow (h->box, 1.5));
 }
 
 static void
-keep_hydrogen (EnlSitePlan *plan, const Hydrogen *h)
+keep_hydrogen (EnlSitePlan *plan, const EnlDrawnHydrogen *h)
 {
   g_array_append_val (plan->hydrogen, *h);
   enl_obstacles_add_box (plan->outline->taken, h->box);
@@ -122,8 +109,8 @@ draw_out (EnlSitePlan *plan, uint32_t atom)
   double spread = count == 2 ? fmin (H_SPREAD, size / 5) : 0;
   for (uint32_t i = 0; i < ENL_COUNT (turn); i++) {
     double angle = middle + turn[i] * size / 4;
-    Hydrogen h[2] = {hydrogen_at (plan, atom, angle + spread),
-                     hydrogen_at (plan, atom, angle - spread)};
+    EnlDrawnHydrogen h[2] = {hydrogen_at (plan, atom, angle + spread),
+                             hydrogen_at (plan, atom, angle - spread)};
     bool apart = count == 1 || enl_rect_overlap (h[0].box, h[1].box) == 0;
     if (!apart || collision (plan, &h[0]) > 0 || (count == 2 && collision (plan, &h[1]) > 0))
       continue;
@@ -153,9 +140,9 @@ enl_site_plan_draw_hydrogens (const EnlSitePlan *plan, EnlScene *scene)
   const EnlTheme *theme = plan->outline->theme;
 
   for (guint i = 0; i < plan->hydrogen->len; i++) {
-    const Hydrogen *h = &g_array_index (plan->hydrogen, Hydrogen, i);
+    const EnlDrawnHydrogen *h = &g_array_index (plan->hydrogen, EnlDrawnHydrogen, i);
     EnlPoint from = plan->outline->at[h->atom];
-    EnlTone tone = site_tone (plan->look, h->site);
+    EnlTone tone = enl_site_tone (plan->look, h->site);
     EnlPoint u = enl_point_direction (from, h->at);
     EnlRect room = enl_rect_grow (h->box, 0.1 * theme->atom_size);
     double length = enl_point_distance (from, h->at) - enl_segment_inside (from, h->at, room);
@@ -218,11 +205,4 @@ enl_site_plan_draw_area (const EnlSitePlan *plan, EnlScene *scene)
     light_atom (plan, scene, site->atom[k]);
   if (plan->look->forms)
     light_system (plan, scene, plan->look->forms);
-}
-
-void
-enl_site_plan_draw_badges (EnlSitePlan *plan, EnlScene *scene)
-{
-  (void)plan;
-  (void)scene;
 }

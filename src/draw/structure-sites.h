@@ -4,7 +4,19 @@
 #include "draw/outline.h"
 #include "draw/structure-scene.h"
 
-typedef struct EnlSitePlan EnlSitePlan;
+/* A hydrogen on a short bond of its own. */
+typedef struct {
+  uint32_t atom, site;
+  EnlPoint at; /* middle of the letter */
+  EnlRect box;
+} EnlDrawnHydrogen;
+
+typedef struct {
+  EnlOutline *outline;          /* borrowed */
+  const EnlStructureLook *look; /* borrowed */
+  uint32_t *site_of;            /* per atom, ENL_NONE outside the sites */
+  GArray *hydrogen;             /* of EnlDrawnHydrogen */
+} EnlSitePlan;
 
 /* Borrows both. Marks in the outline which labels carry acidic hydrogens; call it before the labels
  * are planned. */
@@ -18,5 +30,7 @@ void enl_site_plan_hydrogens (EnlSitePlan *plan);
 /* Soft area behind the delocalised system of the selected site. */
 void enl_site_plan_draw_area (const EnlSitePlan *plan, EnlScene *scene);
 void enl_site_plan_draw_hydrogens (const EnlSitePlan *plan, EnlScene *scene);
-/* One badge a site at its roomiest atom, a dot at the others. */
+/* Tone of a site's hydrogens and badge. */
+EnlTone enl_site_tone (const EnlStructureLook *look, uint32_t site);
+/* One badge with the value a site, at its roomiest atom; the mark alone at the others. */
 void enl_site_plan_draw_badges (EnlSitePlan *plan, EnlScene *scene);

@@ -146,6 +146,28 @@ enl_text_wrap (const char *family, const char *plain, double size, bool bold, do
   return g_markup_escape_text (out->str, -1);
 }
 
+double
+enl_scene_paragraph (EnlScene *scene, EnlPoint at, double width, const char *plain, double size,
+                     bool bold, EnlTone tone)
+{
+  const char *family = enl_scene_theme (scene)->family;
+  g_autofree char *markup = enl_text_wrap (family, plain, size, bold, width);
+  double w, h;
+
+  enl_text_measure (family, markup, size, bold, &w, &h);
+  enl_scene_text (scene, at, markup, size, bold, 0, 0, tone);
+  return at.y + h;
+}
+
+double
+enl_text_line_height (const char *family, double size)
+{
+  double width, height;
+
+  enl_text_measure (family, "H", size, false, &width, &height);
+  return height;
+}
+
 static char *
 shifted (const char *markup, double rise)
 {

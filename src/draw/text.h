@@ -27,6 +27,13 @@ double enl_text_lift (PangoLayout *layout);
 char *enl_text_wrap (const char *family, const char *plain, double size, bool bold,
                      double width) ENL_MUST_USE;
 
+/* Wrapped plain text with its left top corner at `at`; returns the y below it. */
+double enl_scene_paragraph (EnlScene *scene, EnlPoint at, double width, const char *plain,
+                            double size, bool bold, EnlTone tone);
+
+/* Height of one line of plain text, px. */
+double enl_text_line_height (const char *family, double size);
+
 /* Markup for subscript and superscript: lowered and raised small text at font size `size`. Pango's
  * own <sub> and <sup> come out wrong under a scaled context. New string (g_free). */
 char *enl_text_lowered (const char *markup, double size) ENL_MUST_USE;
