@@ -181,23 +181,6 @@ acid_orbital (const EnlPi *pi, const EnlPiOrbital *orbital)
   return o;
 }
 
-/* Energy of those systems of the acid that the anion's system unites. */
-static double
-energy_of_parts (const EnlPi *pi, const EnlPiBasis *basis, const EnlPiSolution *anion)
-{
-  g_autofree bool *seen = g_new0 (bool, pi->basis.n_systems + 1);
-  double energy = 0.0;
-
-  for (uint32_t i = 0; i < anion->n; i++) {
-    uint32_t o = acid_orbital (pi, &basis->orbital[anion->orbital[i]]);
-    if (o == ENL_NONE || seen[pi->basis.system[o]])
-      continue;
-    seen[pi->basis.system[o]] = true;
-    energy += pi->system_energy[pi->basis.system[o]];
-  }
-  return energy;
-}
-
 static double
 participation_of (const double *shift, uint32_t n)
 {
@@ -222,25 +205,83 @@ fill_levels (EnlPiChange *out, const EnlPiSolution *s)
   }
 }
 
-/* Electrons of the anion's system beyond the uncharged atoms, and beyond the acid. */
+/* Electrons of one system of the anion beyond the uncharged atoms. */
 static void
-fill_electrons (EnlPiChange *out, const EnlPi *pi, const EnlPiBasis *basis, const EnlPiSolution *s,
-                uint32_t atom)
+add_electrons (EnlPiChange *out, const EnlPiBasis *basis, const EnlPiSolution *s)
+{
+  for (uint32_t i = 0; i < s->n; i++) {
+    const EnlPiOrbital *orbital = &basis->orbital[s->orbital[i]];
+    double now = s->population[i] - (double)orbital->core;
+    out->excess[orbital->atom] += now;
+    out->shift[orbital->atom] += now;
+  }
+}
+
+/* The same electrons in the acid leave what moved; the part that the pi system did not take stays
+ * in a sigma lone pair of the site. */
+static void
+subtract_acid (EnlPiChange *out, const EnlPi *pi, const bool *system, uint32_t site)
 {
   double moved = 0.0;
 
-  for (uint32_t i = 0; i < s->n; i++) {
-    const EnlPiOrbital *orbital = &basis->orbital[s->orbital[i]];
-    uint32_t o = acid_orbital (pi, orbital);
-    double before = o == ENL_NONE ? 0.0 : pi->population[o] - (double)pi->basis.orbital[o].core;
-    double now = s->population[i] - (double)orbital->core;
-    out->excess[orbital->atom] += now;
-    out->shift[orbital->atom] += now - before;
-    moved += now - before;
+  for (uint32_t o = 0; o < pi->basis.n_orbitals; o++)
+    if (system[pi->basis.system[o]])
+      out->shift[pi->basis.orbital[o].atom] -=
+          pi->population[o] - (double)pi->basis.orbital[o].core;
+  for (uint32_t i = 0; i < out->n_atoms; i++)
+    moved += out->shift[i];
+  out->excess[site] += 1.0 - moved;
+  out->shift[site] += 1.0 - moved;
+}
+
+static bool
+site_is_linear (const EnlPiBasis *basis, uint32_t atom)
+{
+  uint32_t first = basis->of_atom[atom];
+
+  return first != ENL_NONE && first + 1 < basis->n_orbitals &&
+         basis->orbital[first + 1].atom == atom;
+}
+
+/* Marks the systems of the acid that have become part of the system of the anion. */
+static void
+mark_parts (const EnlPi *pi, const EnlPiBasis *basis, const EnlPiSolution *anion, bool *part)
+{
+  for (uint32_t i = 0; i < anion->n; i++) {
+    uint32_t o = acid_orbital (pi, &basis->orbital[anion->orbital[i]]);
+    if (o != ENL_NONE)
+      part[pi->basis.system[o]] = true;
   }
-  /* What the pi system did not take stays in a sigma lone pair. */
-  out->excess[atom] += 1.0 - moved;
-  out->shift[atom] += 1.0 - moved;
+}
+
+/* A lone pair in the second plane of a linear site turns planes round: there the whole molecule is
+ * compared, else only the system that holds the site. */
+static void
+compare_systems (EnlPiChange *out, const EnlPi *pi, const EnlPiBasis *basis, uint32_t atom)
+{
+  uint32_t own = basis->system[basis->of_atom[atom]];
+  bool whole = site_is_linear (basis, atom);
+  g_autofree bool *part = g_new0 (bool, pi->basis.n_systems + 1);
+
+  for (uint32_t system = 0; system < basis->n_systems; system++) {
+    if (!whole && system != own)
+      continue;
+    EnlPiSolution solution;
+    enl_pi_solution_init (&solution, basis, system, NULL);
+    out->energy_gain += solution.energy;
+    add_electrons (out, basis, &solution);
+    mark_parts (pi, basis, &solution, part);
+    if (system == own) {
+      out->n_orbitals = solution.n;
+      fill_levels (out, &solution);
+    }
+    enl_pi_solution_clear (&solution);
+  }
+  for (uint32_t system = 0; system < pi->basis.n_systems; system++)
+    if (part[system])
+      out->energy_gain -= pi->system_energy[system];
+  out->energy_gain += localised_energy (&pi->basis, atom) - localised_energy (basis, atom);
+  subtract_acid (out, pi, part, atom);
 }
 
 void
@@ -249,7 +290,6 @@ enl_pi_deprotonate (const EnlPi *pi, uint32_t atom, EnlPiChange *out)
   uint32_t n = enl_molecule_atoms (pi->mol);
   g_autofree EnlConjugationAtom *fact = g_memdup2 (pi->fact, n * sizeof *fact);
   EnlPiBasis basis;
-  EnlPiSolution solution;
 
   g_assert (atom < n && enl_molecule_total_hydrogens (pi->mol, atom) > 0);
   memset (out, 0, sizeof *out);
@@ -259,20 +299,11 @@ enl_pi_deprotonate (const EnlPi *pi, uint32_t atom, EnlPiChange *out)
   out->highest = out->lowest = NAN;
   enl_conjugation_deprotonate (fact, atom);
   enl_pi_basis_init (&basis, pi->mol, fact);
-  if (basis.of_atom[atom] == ENL_NONE) {
+  if (basis.of_atom[atom] == ENL_NONE)
     out->excess[atom] = out->shift[atom] = 1.0;
-    out->participation = 1.0;
-  } else {
-    enl_pi_solution_init (&solution, &basis, basis.system[basis.of_atom[atom]], NULL);
-    out->n_orbitals = solution.n;
-    out->energy_gain = solution.energy - localised_energy (&basis, atom) -
-                       energy_of_parts (pi, &basis, &solution) +
-                       localised_energy (&pi->basis, atom);
-    fill_levels (out, &solution);
-    fill_electrons (out, pi, &basis, &solution, atom);
-    out->participation = participation_of (out->shift, n);
-    enl_pi_solution_clear (&solution);
-  }
+  else
+    compare_systems (out, pi, &basis, atom);
+  out->participation = participation_of (out->shift, n);
   enl_pi_basis_clear (&basis);
 }
 
