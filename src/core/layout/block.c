@@ -25,6 +25,9 @@ static const double template_bonus = 4, solid_malus = 1.5, fused_template_malus 
  * neighbours fit better by this much each. */
 static const double later_template_malus = 0.6;
 
+/* Mirror images of templates are for neighbours that do not fit otherwise. */
+static const double mirror_malus = 0.3;
+
 /* Bonds of redrawn cages may be foreshortened within these. */
 static const double short_bond = 0.75, long_bond = 1.35;
 
@@ -108,7 +111,9 @@ consider_template (const uint32_t *image, const EnlSpot *spot, void *data)
       ring->spot[image[t]] = (EnlSpot){mirror ? -spot[t].x : spot[t].x, spot[t].y};
     double own = enl_strain_crowding (ring) + enl_strain_stretch (ring);
     consider (trial->choice, ring->spot,
-              later_template_malus * trial->n_earlier - template_bonus - own, ENL_BLOCK_TEMPLATE);
+              later_template_malus * trial->n_earlier + mirror * mirror_malus - template_bonus -
+                  own,
+              ENL_BLOCK_TEMPLATE);
   }
   return true;
 }

@@ -162,13 +162,12 @@ draw_rest (EnlSketch *sketch, const EnlTemplates *templates, bool *upright)
 {
   Cutout cut;
 
-  *upright = true;
+  *upright = false;
   if (sketch->n_atoms <= 1)
     return;
   enl_blocks_find (sketch);
   if (sketch->n_atoms > coordgen_limit || !enl_coordgen_draw (sketch, NULL)) {
     enl_assemble (sketch, templates);
-    *upright = false;
   } else {
     if (choose_block (sketch, templates, &cut)) {
       draw_around (sketch, &cut, templates);

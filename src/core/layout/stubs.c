@@ -11,6 +11,10 @@
  * of fused rings free. */
 static const double wide_enough = 100 * G_PI / 180;
 
+/* Room the end and the bond should have; the first is more than the radius of a six-ring, so that
+ * nothing points into one. */
+static const double end_apart = 1.15, bond_apart = 0.45, end_off_bond = 0.5;
+
 typedef struct {
   EnlSketch *part;
   const bool *core;
@@ -48,8 +52,8 @@ direction_cost (const Seat *seat, double angle)
   for (uint32_t i = 0; i < s->n_atoms; i++) {
     if (!seat->core[i] || i == seat->centre)
       continue;
-    double lack = 1 - enl_spot_distance (end, s->spot[i]) / 0.9;
-    double hidden = 1 - enl_spot_to_segment (s->spot[i], centre, end) / 0.45;
+    double lack = 1 - enl_spot_distance (end, s->spot[i]) / end_apart;
+    double hidden = 1 - enl_spot_to_segment (s->spot[i], centre, end) / bond_apart;
     cost += (lack > 0 ? 8 * lack * lack : 0) + (hidden > 0 ? 8 * hidden * hidden : 0);
   }
   for (uint32_t b = 0; b < s->n_bonds; b++) {
@@ -57,7 +61,8 @@ direction_cost (const Seat *seat, double angle)
     if (!seat->core[bond->from] || !seat->core[bond->to] || bond->from == seat->centre ||
         bond->to == seat->centre)
       continue;
-    double lack = 1 - enl_spot_to_segment (end, s->spot[bond->from], s->spot[bond->to]) / 0.5;
+    double lack =
+        1 - enl_spot_to_segment (end, s->spot[bond->from], s->spot[bond->to]) / end_off_bond;
     cost += lack > 0 ? 6 * lack * lack : 0;
     cost += enl_segments_cross (centre, end, s->spot[bond->from], s->spot[bond->to]) ? 5 : 0;
   }
