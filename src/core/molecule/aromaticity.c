@@ -153,6 +153,7 @@ typedef struct {
   Offer *offer;       /* per atom */
   uint32_t n;         /* candidate rings */
   uint32_t *ring;     /* their numbers in the molecule */
+  uint32_t *bond;     /* beside mol->ring_atom: the bond to the next atom of the ring */
   uint8_t *seen_atom; /* times an atom lies in the set at hand */
   uint8_t *seen_bond; /* the same for a bond */
   uint8_t *beside;    /* n x n: two candidates share a bond */
@@ -182,13 +183,24 @@ ring_size (const EnlMolecule *mol, uint32_t ring)
   return mol->ring_first[ring + 1] - mol->ring_first[ring];
 }
 
-/* Bond between neighbour `i` of the ring list and the one after it. */
+/* Bond between atom `i` of the ring and the one after it. */
 static uint32_t
-ring_bond (const EnlMolecule *mol, uint32_t ring, uint32_t i)
+ring_bond (const Counter *c, uint32_t ring, uint32_t i)
 {
-  const uint32_t *atom = mol->ring_atom + mol->ring_first[ring];
+  return c->bond[c->mol->ring_first[ring] + i];
+}
 
-  return enl_molecule_bond_between (mol, atom[i], atom[(i + 1) % ring_size (mol, ring)]);
+static void
+look_up_bonds (Counter *c)
+{
+  const EnlMolecule *mol = c->mol;
+
+  for (uint32_t k = 0; k < c->n; k++) {
+    uint32_t start = mol->ring_first[c->ring[k]], size = ring_size (mol, c->ring[k]);
+    for (uint32_t i = 0; i < size; i++)
+      c->bond[start + i] = enl_molecule_bond_between (mol, mol->ring_atom[start + i],
+                                                      mol->ring_atom[start + (i + 1) % size]);
+  }
 }
 
 static void
@@ -199,7 +211,7 @@ count_in (Counter *c, uint32_t candidate, int step)
 
   for (uint32_t i = 0; i < ring_size (mol, ring); i++) {
     c->seen_atom[mol->ring_atom[mol->ring_first[ring] + i]] += (uint8_t)step;
-    c->seen_bond[ring_bond (mol, ring, i)] += (uint8_t)step;
+    c->seen_bond[ring_bond (c, ring, i)] += (uint8_t)step;
   }
 }
 
@@ -245,7 +257,7 @@ mark_aromatic (Counter *c, const uint32_t *set, uint32_t n)
   for (uint32_t k = 0; k < n; k++) {
     uint32_t ring = c->ring[set[k]];
     for (uint32_t i = 0; i < ring_size (mol, ring); i++) {
-      uint32_t bond = ring_bond (mol, ring, i);
+      uint32_t bond = ring_bond (c, ring, i);
       mol->atom[mol->ring_atom[mol->ring_first[ring] + i]].aromatic = true;
       if (c->seen_bond[bond] == 1)
         mol->bond[bond].aromatic = true;
@@ -314,7 +326,7 @@ all_bonds_are_aromatic (const Counter *c)
 {
   for (uint32_t m = 0; m < c->n_member; m++)
     for (uint32_t i = 0; i < ring_size (c->mol, c->ring[c->member[m]]); i++)
-      if (!c->mol->bond[ring_bond (c->mol, c->ring[c->member[m]], i)].aromatic)
+      if (!c->mol->bond[ring_bond (c, c->ring[c->member[m]], i)].aromatic)
         return false;
   return true;
 }
@@ -330,23 +342,28 @@ judge_system (Counter *c)
   }
 }
 
+static uint32_t
+count_common_bonds (const Counter *c, uint32_t candidate)
+{
+  uint32_t n = 0;
+
+  for (uint32_t i = 0; i < ring_size (c->mol, c->ring[candidate]); i++)
+    n += c->seen_bond[ring_bond (c, c->ring[candidate], i)] != 0;
+  return n;
+}
+
+/* Rings are fused when they have exactly one bond in common; the big ring of a porphyrin, which
+ * shares two bonds with each small one, stands alone. */
 static void
 find_neighbours (Counter *c)
 {
-  const EnlMolecule *mol = c->mol;
-
   for (uint32_t a = 0; a < c->n; a++) {
-    if (ring_size (mol, c->ring[a]) > MAX_FUSED_SIZE)
+    if (ring_size (c->mol, c->ring[a]) > MAX_FUSED_SIZE)
       continue;
     count_in (c, a, 1);
-    for (uint32_t b = a + 1; b < c->n; b++) {
-      uint32_t size = ring_size (mol, c->ring[b]);
-      if (size > MAX_FUSED_SIZE)
-        continue;
-      for (uint32_t i = 0; i < size; i++)
-        if (c->seen_bond[ring_bond (mol, c->ring[b], i)])
-          c->beside[(size_t)a * c->n + b] = c->beside[(size_t)b * c->n + a] = 1;
-    }
+    for (uint32_t b = a + 1; b < c->n; b++)
+      if (ring_size (c->mol, c->ring[b]) <= MAX_FUSED_SIZE && count_common_bonds (c, b) == 1)
+        c->beside[(size_t)a * c->n + b] = c->beside[(size_t)b * c->n + a] = 1;
     count_in (c, a, -1);
   }
 }
@@ -379,10 +396,11 @@ enl_molecule_find_aromatic (EnlMolecule *mol)
   if (mol->n_rings == 0)
     return;
   g_autofree Offer *offer = g_new (Offer, mol->n_atoms);
-  g_autofree uint32_t *rings = g_new (uint32_t, 2 * (size_t)mol->n_rings);
+  g_autofree uint32_t *rings = g_new (uint32_t, 2 * (size_t)mol->n_rings + mol->n_ring_atoms);
   c.offer = offer;
   c.ring = rings;
   c.member = rings + mol->n_rings;
+  c.bond = rings + 2 * (size_t)mol->n_rings;
   for (uint32_t a = 0; a < mol->n_atoms; a++)
     c.offer[a] = mol->smallest[a] ? judge_atom (mol, a) : no_offer;
   for (uint32_t r = 0; r < mol->n_rings; r++)
@@ -396,6 +414,7 @@ enl_molecule_find_aromatic (EnlMolecule *mol)
   c.seen_atom = seen;
   c.seen_bond = seen + mol->n_atoms;
   c.beside = beside;
+  look_up_bonds (&c);
   find_neighbours (&c);
   for (uint32_t k = 0; k < c.n; k++)
     if (!done[k]) {

@@ -84,43 +84,45 @@ height_across (EnlSmilesReader *r, uint32_t atom, uint32_t i)
   return r->mol->bond[bond].from == atom ? direction : -direction;
 }
 
-/* The first marked neighbour of one end of a double bond. */
-static EnlStatus
-find_mark (EnlSmilesReader *r, uint32_t atom, uint32_t *neighbour, int *height)
+/* What the marks tell of one end of a double bond. */
+typedef struct {
+  uint32_t neighbour; /* the first marked one */
+  int height;         /* of it, 0 when no neighbour is marked */
+  uint32_t clash;     /* bond whose mark contradicts the first, or ENL_NONE */
+} End;
+
+static End
+look_at_end (EnlSmilesReader *r, uint32_t atom)
 {
-  *height = 0;
+  End end = {ENL_NONE, 0, ENL_NONE};
+
   for (uint32_t i = r->mol->first[atom]; i < r->mol->first[atom + 1]; i++) {
-    int found = height_across (r, atom, i);
-    if (!found)
-      continue;
-    if (found == *height)
-      return enl_smiles_locate (
-          r, bond_note (r, r->mol->via[i])->offset, 1,
-          enl_error_set (r->err, ENL_ERROR_SYNTAX, "turn one of them or leave it out",
-                         "'/' and '\\' put both neighbours on one side of a double bond"));
-    if (!*height) {
-      *height = found;
-      *neighbour = r->mol->neighbour[i];
-    }
+    int height = height_across (r, atom, i);
+    if (height && height == end.height)
+      end.clash = r->mol->via[i];
+    if (height && !end.height)
+      end = (End){r->mol->neighbour[i], height, ENL_NONE};
   }
-  return ENL_OK;
+  return end;
 }
 
 static EnlStatus
 set_side (EnlSmilesReader *r, EnlBond *bond)
 {
-  uint32_t near_from = ENL_NONE, near_to = ENL_NONE;
-  int from = 0, to = 0;
-  EnlStatus status = find_mark (r, bond->from, &near_from, &from);
+  End from = look_at_end (r, bond->from), to = look_at_end (r, bond->to);
 
-  if (status == ENL_OK)
-    status = find_mark (r, bond->to, &near_to, &to);
-  if (status == ENL_OK && from && to) {
-    bond->side = from == to ? ENL_SIDE_SAME : ENL_SIDE_OPPOSITE;
-    bond->side_from = near_from;
-    bond->side_to = near_to;
-  }
-  return status;
+  if (!from.height || !to.height)
+    return ENL_OK;
+  uint32_t clash = from.clash != ENL_NONE ? from.clash : to.clash;
+  if (clash != ENL_NONE)
+    return enl_smiles_locate (
+        r, bond_note (r, clash)->offset, 1,
+        enl_error_set (r->err, ENL_ERROR_SYNTAX, "turn one of them or leave it out",
+                       "'/' and '\\' put both neighbours on one side of a double bond"));
+  bond->side = from.height == to.height ? ENL_SIDE_SAME : ENL_SIDE_OPPOSITE;
+  bond->side_from = from.neighbour;
+  bond->side_to = to.neighbour;
+  return ENL_OK;
 }
 
 static EnlStatus
