@@ -12,7 +12,8 @@ typedef enum {
   ENL_SITE_OXYGEN,     /* O-H */
   ENL_SITE_CHALCOGEN,  /* S-H, Se-H, Te-H */
   ENL_SITE_PHOSPHORUS, /* P-H */
-  ENL_SITE_CATION,     /* H on a positively charged N, O, S, P */
+  ENL_SITE_CATION,     /* H on a positively charged N, O, S, P, or on an N that shares the charge */
+  ENL_SITE_HALOGEN,    /* hydrogen halides, as in a salt written with HCl */
   ENL_N_SITE_KINDS
 } EnlSiteKind;
 
