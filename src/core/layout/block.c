@@ -174,19 +174,20 @@ consider_views (Choice *choice)
   }
 }
 
-/* The present picture counts with its own strain, neighbours left where they are; a relaxed copy
- * of it competes. */
+/* The present picture counts as it stands, neighbours included; the same block with its neighbours
+ * placed anew and a relaxed copy of it compete. */
 static void
 consider_present (Choice *choice)
 {
   uint32_t n = choice->ring->n_atoms;
 
-  choice->best_cost = picture_cost (choice->ring);
+  choice->best_cost = picture_cost (choice->part);
   memcpy (choice->best, choice->part->spot, choice->part->n_atoms * sizeof (EnlSpot));
   choice->kind = ENL_BLOCK_KEPT;
   if (choice->best_cost < good_enough)
     return;
   g_autofree EnlSpot *before = g_memdup2 (choice->ring->spot, n * sizeof (EnlSpot));
+  consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
   enl_relax (choice->ring, short_bond, long_bond, false, NULL);
   consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
   memcpy (choice->ring->spot, before, n * sizeof (EnlSpot));

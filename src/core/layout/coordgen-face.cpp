@@ -100,6 +100,8 @@ place (EnlCoordgenAtom *atom, uint32_t n_atoms, const EnlCoordgenBond *bond, uin
 {
   load_templates_once ();
   sketcherMinimizer minimizer (static_cast<float> (effort));
+  /* Else bonds to metals come out two or three lengths long. */
+  minimizer.setTreatNonterminalBondsToMetalAsZOBs (false);
   auto *mol = new sketcherMinimizerMolecule; /* `minimizer` owns it after initialize */
   Atoms at = add_atoms (mol, atom, n_atoms);
   auto made = add_bonds (mol, at, bond, n_bonds);

@@ -10,10 +10,16 @@
 #include "core/layout/geometry.h"
 #include "core/layout/orient.h"
 #include "core/layout/repair.h"
+#include "core/layout/strain.h"
 
 /* CoordGen's time grows steeply with size (seconds above a hundred atoms): beyond this our own
  * assembly is used. */
 static const uint32_t coordgen_limit = 100;
+
+/* A picture with less strain than this is final; another must be better by that. */
+static const double good_enough = 0.3, better_by = 0.1;
+
+static const double wrong_side_cost = 20;
 
 static void draw_rest (EnlSketch *sketch, const EnlTemplates *templates, bool *upright);
 
@@ -156,27 +162,61 @@ draw_around (EnlSketch *sketch, const Cutout *cut, const EnlTemplates *templates
   }
 }
 
-/* Everything but the final turn; `upright` tells that the picture has an orientation of its own. */
+/* CoordGen's picture with its poor ring blocks redrawn. False when it gives none. */
+static bool
+draw_by_coordgen (EnlSketch *sketch, const EnlTemplates *templates, bool *upright)
+{
+  Cutout cut;
+
+  if (sketch->n_atoms > coordgen_limit || !enl_coordgen_draw (sketch, NULL))
+    return false;
+  if (choose_block (sketch, templates, &cut)) {
+    draw_around (sketch, &cut, templates);
+    *upright = cut.kind == ENL_BLOCK_TEMPLATE;
+  }
+  cutout_clear (&cut);
+  return true;
+}
+
+static void
+repair (EnlSketch *sketch)
+{
+  enl_repair_sides (sketch);
+  enl_repair_crowding (sketch);
+}
+
+static double
+cost_of (const EnlSketch *sketch)
+{
+  return enl_strain_crowding (sketch) + enl_strain_stretch (sketch) +
+         (enl_sketch_sides_right (sketch) ? 0 : wrong_side_cost);
+}
+
+/* Everything but the final turn; `upright` tells that the picture has an orientation of its own.
+ * CoordGen clears crowded places by stretching bonds: then our own assembly competes. */
 static void
 draw_rest (EnlSketch *sketch, const EnlTemplates *templates, bool *upright)
 {
-  Cutout cut;
+  size_t size = sketch->n_atoms * sizeof (EnlSpot);
 
   *upright = false;
   if (sketch->n_atoms <= 1)
     return;
   enl_blocks_find (sketch);
-  if (sketch->n_atoms > coordgen_limit || !enl_coordgen_draw (sketch, NULL)) {
+  if (!draw_by_coordgen (sketch, templates, upright)) {
     enl_assemble (sketch, templates);
-  } else {
-    if (choose_block (sketch, templates, &cut)) {
-      draw_around (sketch, &cut, templates);
-      *upright = cut.kind == ENL_BLOCK_TEMPLATE;
-    }
-    cutout_clear (&cut);
+    repair (sketch);
+    return;
   }
-  enl_repair_sides (sketch);
-  enl_repair_crowding (sketch);
+  repair (sketch);
+  double cost = cost_of (sketch);
+  if (*upright || cost < good_enough)
+    return;
+  g_autofree EnlSpot *before = g_memdup2 (sketch->spot, size);
+  enl_assemble (sketch, templates);
+  repair (sketch);
+  if (cost_of (sketch) >= cost - better_by)
+    memcpy (sketch->spot, before, size);
 }
 
 void
