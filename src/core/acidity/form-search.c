@@ -228,6 +228,7 @@ typedef struct {
   uint32_t distance; /* edges and charges unlike the first form */
   bool first;        /* nearest of its charge pattern */
   bool twice;        /* found before, by another search */
+  uint32_t place;    /* in the order of compare_pattern: breaks ties */
 } Ranked;
 
 /* By charge pattern, in it by distance; equal states become neighbours. */
@@ -252,7 +253,9 @@ compare_rank (const void *a, const void *b)
     return x->twice ? 1 : -1;
   if (x->first != y->first)
     return x->first ? -1 : 1;
-  return (x->distance > y->distance) - (x->distance < y->distance);
+  if (x->distance != y->distance)
+    return x->distance < y->distance ? -1 : 1;
+  return (x->place > y->place) - (x->place < y->place);
 }
 
 static uint32_t
@@ -278,6 +281,7 @@ rank_states (const EnlFormStates *states, Ranked *ranked)
   }
   g_qsort_with_data (ranked, (int)states->n, sizeof *ranked, compare_pattern, network);
   for (uint32_t i = 0; i < states->n; i++) {
+    ranked[i].place = i;
     ranked[i].first = i == 0 || memcmp (ranked[i].byte, ranked[i - 1].byte, nodes) != 0;
     ranked[i].twice = i > 0 && memcmp (ranked[i].byte, ranked[i - 1].byte, size) == 0;
   }
