@@ -19,6 +19,7 @@ static const double bend[] = {0.42, 0.6, 0.3, 0.85, 1.15, 1.6};
 #define COST_CROSS  14.0 /* per bond or arrow crossed */
 #define COST_BEND   6.0
 #define COST_INSIDE 3.0 /* bending towards the middle of the molecule */
+#define TIE         1e-6
 #define SAMPLES     16
 
 EnlLonePair
@@ -161,7 +162,7 @@ enl_curved_arrow_draw (EnlOutline *outline, EnlScene *scene, const EnlArrow *arr
       Shaft shaft;
       aim (outline, arrow, pair, side * bend[i], &shaft);
       shaft.cost = shaft_cost (outline, &shaft) + COST_BEND * fabs (bend[i] - bend[0]);
-      if (shaft.cost < best.cost)
+      if (shaft.cost < best.cost - TIE)
         best = shaft;
     }
   enl_scene_curve (scene, best.curve, theme->bond_width, ENL_TONE_ARROW);

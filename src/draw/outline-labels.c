@@ -17,6 +17,7 @@
 #define STACK_STEP    0.93 /* from a symbol to hydrogens above or below it */
 #define STACK_LOWERED 0.10 /* more when hydrogens above it have a lowered count */
 #define CHARGE_RISE   0.36 /* of the centre of a charge above that of the symbol */
+#define TIE           1e-6
 #define SCRIPT_SIZE   0.72
 
 typedef enum { SIDE_RIGHT, SIDE_LEFT, SIDE_ABOVE, SIDE_BELOW, N_SIDES } Side;
@@ -200,7 +201,7 @@ choose_side (const EnlOutline *outline, uint32_t atom, double symbol_width)
     score -= 0.15 * bonds_under (outline, box);
     score -= 0.15 * enl_obstacles_in_box (outline->taken, piece.box);
     g_free (piece.markup);
-    if (score > best_score) {
+    if (score > best_score + TIE) {
       best_score = score;
       best = side;
     }
@@ -267,7 +268,7 @@ plan_charge (EnlOutline *outline, uint32_t atom)
     EnlRect box = enl_rect_grow (piece.box, 1);
     double score = 2 * i + 10 * bonds_under (outline, enl_rect_grow (box, 1.5)) +
                    10 * enl_obstacles_in_box (outline->taken, piece.box);
-    if (score < best_score) {
+    if (score < best_score - TIE) {
       best_score = score;
       best = piece;
     }

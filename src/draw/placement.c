@@ -10,6 +10,7 @@
 #define DIRECTIONS    32
 #define FIRST_GAP     2.0
 #define GAP_GROWTH    1.32
+#define TIE           1e-6 /* equal costs: the first candidate, whatever rounding says */
 #define SMALLEST_STEP 2.5
 
 #define COST_OF_TURN   7.0  /* for a half turn away from the preferred direction */
@@ -172,7 +173,7 @@ enl_obstacles_place (const EnlObstacles *obstacles, const EnlPlaceQuery *query)
     for (int i = 0; i < DIRECTIONS; i++) {
       EnlPlace place =
           judge (obstacles, query, query->toward + 2 * G_PI * i / DIRECTIONS, gap, best.cost);
-      if (place.cost < best.cost)
+      if (place.cost < best.cost - TIE)
         best = place;
     }
   return best;

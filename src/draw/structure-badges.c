@@ -12,6 +12,7 @@
 #define LEADER_GAP  0.42 /* bond lengths to the badge above which a leader helps */
 #define PAD         0.10 /* kept free around a badge, bond lengths */
 #define MIRROR_COST 4.0  /* reading order is mark, value; the other way round must pay */
+#define TIE         1e-6 /* px; see placement.c */
 #define PASSES      3
 #define MARK_REACH  1.0  /* bond lengths searched for a mark without value */
 #define LEADER      0.55 /* bond widths */
@@ -115,7 +116,7 @@ choose_place (const EnlSitePlan *plan, const EnlObstacles *taken, EnlRect crowd,
       enl_badge_size (&choice->badge, theme, &query.width, &query.height);
       EnlPlace place = enl_obstacles_place (taken, &query);
       place.cost += mirrored ? MIRROR_COST : 0;
-      if (place.cost >= best)
+      if (place.cost >= best - TIE)
         continue;
       best = place.cost;
       choice->place = place;
