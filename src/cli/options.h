@@ -1,0 +1,26 @@
+/* What was asked for on the command line. */
+#pragma once
+
+#include "cli/output.h"
+#include "core/bases/compare.h"
+
+typedef struct {
+  EnlFormat format;
+  EnlConditions conditions;
+  uint32_t atom; /* 1-based position in the input, 0: the most acidic C-H */
+  const char *view, *out, *theme, *fold;
+  double width_mm, dpi;
+  char **input; /* NULL-terminated */
+} EnlOptions;
+
+typedef struct {
+  const char *name, *summary;
+  const char *options; /* letters of the options it takes, see options.c */
+  bool needs_input;
+  int (*run) (const EnlOptions *options);
+} EnlVerb;
+
+/* Parses the arguments behind the verb. Returns -1 to go on, else the exit code: 0 after --help, 2
+ * after a wrong use, which has been explained on standard error. */
+int enl_options_parse (const EnlVerb *verb, int argc, char **argv, EnlOptions *out);
+void enl_options_clear (EnlOptions *options);

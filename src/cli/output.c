@@ -1,0 +1,197 @@
+#include "cli/output.h"
+
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+#include <jansson.h>
+
+typedef struct {
+  char *text;
+  bool number; /* aligned to the right, unquoted in json */
+  bool missing;
+} Cell;
+
+struct EnlOutput {
+  EnlFormat format;
+  const char *const *column;
+  uint32_t n_columns;
+  GArray *cell; /* of the rows held back (text) or of the present row */
+};
+
+static void
+clear_cell (gpointer data)
+{
+  g_free (((Cell *)data)->text);
+}
+
+EnlOutput *
+enl_output_new (EnlFormat format, const char *const *column)
+{
+  EnlOutput *out = g_new0 (EnlOutput, 1);
+
+  out->format = format;
+  out->column = column;
+  out->n_columns = g_strv_length ((char **)column);
+  out->cell = g_array_new (FALSE, FALSE, sizeof (Cell));
+  g_array_set_clear_func (out->cell, clear_cell);
+  if (format == ENL_FORMAT_TSV)
+    for (uint32_t i = 0; i < out->n_columns; i++)
+      printf ("%s%c", column[i], i + 1 < out->n_columns ? '\t' : '\n');
+  return out;
+}
+
+static const Cell *
+cell_at (const EnlOutput *out, uint32_t row, uint32_t column)
+{
+  return &g_array_index (out->cell, Cell, row * out->n_columns + column);
+}
+
+/* A cell must stay one cell whatever a person typed into a name. */
+static void
+print_tsv_cell (const char *text)
+{
+  for (; *text; text++)
+    putchar ((unsigned char)*text < ' ' ? ' ' : *text);
+}
+
+static void
+print_tsv_row (const EnlOutput *out)
+{
+  for (uint32_t i = 0; i < out->n_columns; i++) {
+    print_tsv_cell (cell_at (out, 0, i)->text);
+    putchar (i + 1 < out->n_columns ? '\t' : '\n');
+  }
+}
+
+static void
+print_json_string (const char *text)
+{
+  g_autofree char *valid = g_utf8_make_valid (text, -1);
+  json_t *string = json_string (valid);
+  char *quoted = json_dumps (string, JSON_ENCODE_ANY);
+
+  fputs (quoted, stdout);
+  free (quoted);
+  json_decref (string);
+}
+
+static void
+print_json_row (const EnlOutput *out)
+{
+  for (uint32_t i = 0; i < out->n_columns; i++) {
+    const Cell *cell = cell_at (out, 0, i);
+    fputs (i ? ", " : "{", stdout);
+    print_json_string (out->column[i]);
+    fputs (": ", stdout);
+    if (cell->missing)
+      fputs ("null", stdout);
+    else if (cell->number)
+      fputs (cell->text, stdout);
+    else
+      print_json_string (cell->text);
+  }
+  fputs ("}\n", stdout);
+}
+
+static void
+add_cell (EnlOutput *out, char *text, bool number, bool missing)
+{
+  Cell cell = {text, number, missing};
+
+  g_array_append_val (out->cell, cell);
+  if (out->format == ENL_FORMAT_TEXT || out->cell->len < out->n_columns)
+    return;
+  if (out->format == ENL_FORMAT_TSV)
+    print_tsv_row (out);
+  else
+    print_json_row (out);
+  g_array_set_size (out->cell, 0);
+}
+
+void
+enl_output_text (EnlOutput *out, const char *text)
+{
+  add_cell (out, g_strdup (text ? text : ""), false, !text);
+}
+
+void
+enl_output_number (EnlOutput *out, double value, int decimals)
+{
+  char format[16], buffer[64];
+
+  if (!isfinite (value)) {
+    add_cell (out, g_strdup (""), true, true);
+    return;
+  }
+  g_snprintf (format, sizeof format, "%%.%df", decimals);
+  g_ascii_formatd (buffer, sizeof buffer, format, value);
+  /* "-0.0" is no number that a reader expects */
+  if (buffer[0] == '-' && strspn (buffer + 1, "0.") == strlen (buffer + 1))
+    memmove (buffer, buffer + 1, strlen (buffer));
+  add_cell (out, g_strdup (buffer), true, false);
+}
+
+void
+enl_output_integer (EnlOutput *out, int64_t value)
+{
+  add_cell (out, g_strdup_printf ("%" G_GINT64_FORMAT, value), true, false);
+}
+
+static size_t
+width_of (const char *text)
+{
+  return g_utf8_validate (text, -1, NULL) ? (size_t)g_utf8_strlen (text, -1) : strlen (text);
+}
+
+static void
+print_padded (const char *text, size_t width, bool right, bool last)
+{
+  size_t pad = width - MIN (width, width_of (text));
+
+  for (size_t i = 0; right && i < pad; i++)
+    putchar (' ');
+  print_tsv_cell (text);
+  for (size_t i = 0; !right && !last && i < pad; i++)
+    putchar (' ');
+  fputs (last ? "\n" : "  ", stdout);
+}
+
+static void
+print_block (const EnlOutput *out)
+{
+  uint32_t rows = out->cell->len / out->n_columns;
+  g_autofree size_t *width = g_new0 (size_t, out->n_columns);
+
+  for (uint32_t c = 0; c < out->n_columns; c++) {
+    width[c] = width_of (out->column[c]);
+    for (uint32_t r = 0; r < rows; r++)
+      width[c] = MAX (width[c], width_of (cell_at (out, r, c)->text));
+  }
+  for (uint32_t c = 0; c < out->n_columns; c++)
+    print_padded (out->column[c], width[c], cell_at (out, 0, c)->number, c + 1 == out->n_columns);
+  for (uint32_t r = 0; r < rows; r++)
+    for (uint32_t c = 0; c < out->n_columns; c++)
+      print_padded (cell_at (out, r, c)->text, width[c], cell_at (out, r, c)->number,
+                    c + 1 == out->n_columns);
+}
+
+void
+enl_output_block (EnlOutput *out, const char *line)
+{
+  if (out->format != ENL_FORMAT_TEXT)
+    return;
+  if (out->cell->len >= out->n_columns)
+    print_block (out);
+  if (line)
+    printf ("%s\n", line);
+  g_array_set_size (out->cell, 0);
+}
+
+void
+enl_output_finish (EnlOutput *out)
+{
+  enl_output_block (out, NULL);
+  g_array_unref (out->cell);
+  g_free (out);
+}

@@ -1,0 +1,118 @@
+#include <math.h>
+
+#include "cli/verbs.h"
+#include "core/molecule/elements.h"
+
+static const char *const column[] = {"substrate", "rank",     "atoms",      "element",
+                                     "hydrogens", "position", "pka",        "low",
+                                     "high",      "basis",    "precedents", NULL};
+
+typedef struct {
+  const EnlKnowledge *knowledge;
+  const EnlOptions *options;
+  EnlOutput *out;
+} Run;
+
+/* "ethyl acetoacetate 14.2 (Olmstead & Bordwell ...) | ..." */
+static char *
+precedents (const EnlReference *reference, const EnlEstimate *e)
+{
+  GString *out = g_string_new (NULL);
+
+  for (uint32_t i = 0; i < e->n_precedents; i++) {
+    const EnlReferenceRow *row = enl_reference_row (reference, e->precedent[i].row);
+    g_autofree char *value = g_strdup_printf ("%.4g", row->pka);
+    g_string_append_printf (out, "%s%s %s in %s (%s)", i ? " | " : "", row->name, value,
+                            enl_solvent_label (row->solvent), row->source);
+  }
+  return g_string_free (out, FALSE);
+}
+
+/* A full source would make the table of the terminal several screens wide. */
+static char *
+short_precedents (const EnlReference *reference, const EnlEstimate *e)
+{
+  GString *out = g_string_new (NULL);
+
+  for (uint32_t i = 0; i < MIN (e->n_precedents, 2); i++) {
+    const EnlReferenceRow *row = enl_reference_row (reference, e->precedent[i].row);
+    g_string_append_printf (out, "%s%s %.4g", i ? "; " : "", row->name, row->pka);
+  }
+  return g_string_free (out, FALSE);
+}
+
+static void
+print_site (const Run *run, const char *name, const EnlAnalysis *a, uint32_t rank)
+{
+  const EnlSite *site = &a->sites->site[a->rank[rank]];
+  const EnlEstimate *e = &a->estimate[a->rank[rank]];
+  g_autofree char *atoms = enl_cli_atoms (a->mol, site);
+  g_autofree char *rows = run->options->format == ENL_FORMAT_TEXT
+                              ? short_precedents (run->knowledge->reference, e)
+                              : precedents (run->knowledge->reference, e);
+
+  enl_output_text (run->out, name);
+  enl_output_integer (run->out, rank + 1);
+  enl_output_text (run->out, atoms);
+  enl_output_text (run->out, enl_element_symbol (site->element));
+  enl_output_integer (run->out, site->hydrogens);
+  enl_output_text (run->out, site->position);
+  enl_output_number (run->out, e->value, 2);
+  enl_output_number (run->out, e->low, 2);
+  enl_output_number (run->out, e->high, 2);
+  enl_output_text (run->out, enl_basis_text (e->basis));
+  enl_output_text (run->out, rows);
+}
+
+static void
+print_reason (const Run *run, const char *name, const char *reason)
+{
+  enl_output_text (run->out, name);
+  enl_output_integer (run->out, 0);
+  enl_output_text (run->out, "");
+  enl_output_text (run->out, "");
+  enl_output_integer (run->out, 0);
+  enl_output_text (run->out, reason);
+  for (int i = 0; i < 3; i++)
+    enl_output_number (run->out, NAN, 2);
+  enl_output_text (run->out, "");
+  enl_output_text (run->out, "");
+}
+
+static EnlStatus
+visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
+{
+  const Run *run = data;
+  g_autoptr (EnlAnalysis) a = NULL;
+  EnlStatus status =
+      enl_analysis_new (run->knowledge, mol, run->options->conditions.solvent, false, &a, err);
+
+  if (status != ENL_OK)
+    return status;
+  if (a->sites->no_enol)
+    print_reason (run, name, a->sites->no_enol);
+  for (uint32_t i = 0; i < a->sites->n_sites; i++)
+    print_site (run, name, a, i);
+  GString *remarks = g_string_new (NULL);
+  for (uint32_t i = 0; i < a->sites->n_sites; i++)
+    if (a->estimate[a->rank[i]].remark)
+      g_string_append_printf (remarks, "  site %u: %s\n", i + 1, a->estimate[a->rank[i]].remark);
+  enl_output_block (run->out, remarks->str);
+  g_string_free (remarks, TRUE);
+  return ENL_OK;
+}
+
+int
+enl_verb_sites (const EnlOptions *options)
+{
+  EnlKnowledge *knowledge = enl_cli_knowledge ();
+  if (!knowledge)
+    return 1;
+  Run run = {knowledge, options, enl_output_new (options->format, column)};
+  uint32_t failed = enl_input_each (knowledge->names, options->input,
+                                    options->format == ENL_FORMAT_TEXT, visit, &run);
+
+  enl_output_finish (run.out);
+  enl_knowledge_free (knowledge);
+  return failed > 0;
+}

@@ -1,0 +1,26 @@
+/* The verbs of the terminal; each has a file of its own. */
+#pragma once
+
+#include "cli/input.h"
+#include "core/workset/analysis.h"
+
+int enl_verb_molecule (const EnlOptions *options);
+int enl_verb_sites (const EnlOptions *options);
+int enl_verb_forms (const EnlOptions *options);
+int enl_verb_bases (const EnlOptions *options);
+int enl_verb_figure (const EnlOptions *options);
+int enl_verb_validate (const EnlOptions *options);
+
+/* What several verbs need. */
+
+/* The knowledge inside the program; explains itself on standard error and returns NULL when a
+ * table is damaged (a broken build). Caller: enl_knowledge_free. */
+EnlKnowledge *enl_cli_knowledge (void);
+
+/* Site that --atom names (1-based position in the input), or the default one. ENL_ERROR_UNKNOWN
+ * with advice when it is no acidic atom. */
+EnlStatus enl_cli_site (const EnlAnalysis *analysis, uint32_t position, uint32_t *site,
+                        EnlError *err);
+
+/* "2,4" : 1-based input positions of the atoms of a site. New string (g_free). */
+char *enl_cli_atoms (const EnlMolecule *mol, const EnlSite *site) ENL_MUST_USE;
