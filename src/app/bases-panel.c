@@ -1,0 +1,258 @@
+#include "app/bases-panel.h"
+
+#include <math.h>
+
+#include "app/base-item.h"
+
+struct _EnlBasesPanel {
+  GtkWidget parent;
+  EnlSession *session; /* owned */
+  GListStore *items;
+  GtkSingleSelection *selection;
+  gboolean filling;
+
+  GtkWidget *box;
+  GtkLabel *heading, *details, *deferral;
+  GtkSpinButton *equivalents, *concentration;
+  GtkColumnView *view;
+};
+
+G_DEFINE_FINAL_TYPE (EnlBasesPanel, enl_bases_panel, GTK_TYPE_WIDGET)
+
+/* ---- cells ---- */
+
+static void
+on_setup (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
+{
+  EnlBaseCell cell = (EnlBaseCell) GPOINTER_TO_INT (data);
+  gboolean number = cell >= ENL_CELL_PKAH && cell <= ENL_CELL_CONVERSION;
+  GtkWidget *label = gtk_label_new (NULL);
+
+  (void) factory;
+  gtk_label_set_xalign (GTK_LABEL (label), number ? 1.0f : 0.0f);
+  gtk_label_set_ellipsize (GTK_LABEL (label), number ? PANGO_ELLIPSIZE_NONE : PANGO_ELLIPSIZE_END);
+  if (cell == ENL_CELL_NAME)
+    gtk_label_set_width_chars (GTK_LABEL (label), 18);
+  if (cell == ENL_CELL_VERDICT)
+    gtk_label_set_width_chars (GTK_LABEL (label), 19);
+  if (cell == ENL_CELL_REASON)
+    gtk_label_set_width_chars (GTK_LABEL (label), 24);
+  if (number)
+    gtk_widget_add_css_class (label, "numeric");
+  gtk_list_item_set_child (item, label);
+}
+
+static void
+on_bind (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
+{
+  EnlBaseItem *base = gtk_list_item_get_item (item);
+  GtkWidget *label = gtk_list_item_get_child (item);
+  const char *text = enl_base_item_cell (base, (EnlBaseCell) GPOINTER_TO_INT (data));
+
+  (void) factory;
+  gtk_label_set_text (GTK_LABEL (label), text);
+  gtk_widget_set_tooltip_text (label, text);
+}
+
+static void
+add_column (EnlBasesPanel *self, const char *title, EnlBaseCell cell, gboolean expand)
+{
+  GtkListItemFactory *factory = gtk_signal_list_item_factory_new ();
+
+  g_signal_connect (factory, "setup", G_CALLBACK (on_setup), GINT_TO_POINTER (cell));
+  g_signal_connect (factory, "bind", G_CALLBACK (on_bind), GINT_TO_POINTER (cell));
+  g_autoptr (GtkColumnViewColumn) column = gtk_column_view_column_new (title, factory);
+  gtk_column_view_column_set_expand (column, expand);
+  gtk_column_view_column_set_resizable (column, TRUE);
+  gtk_column_view_append_column (self->view, column);
+}
+
+/* ---- filling ---- */
+
+static void
+show_details (EnlBasesPanel *self)
+{
+  EnlBaseItem *item = gtk_single_selection_get_selected_item (self->selection);
+
+  if (!item) {
+    gtk_label_set_text (self->details, "");
+    return;
+  }
+  g_autofree char *text =
+      g_strdup_printf ("%s: %s\n%s", enl_base_item_cell (item, ENL_CELL_NAME),
+                       enl_base_item_cell (item, ENL_CELL_REASON), enl_base_item_details (item));
+  gtk_label_set_text (self->details, text);
+}
+
+static void
+select_wanted (EnlBasesPanel *self)
+{
+  const char *wanted = enl_workset_selection (enl_session_set (self->session))->base;
+  guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items)), found = n ? 0 : GTK_INVALID_LIST_POSITION;
+
+  for (guint i = 0; i < n; i++) {
+    g_autoptr (EnlBaseItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
+    if (g_strcmp0 (enl_base_item_id (item), wanted) == 0)
+      found = i;
+  }
+  gtk_single_selection_set_selected (self->selection, found);
+}
+
+static void
+fill (EnlBasesPanel *self, const EnlAnalysis *a, uint32_t site)
+{
+  const EnlKnowledge *k = enl_session_knowledge (self->session);
+  g_autoptr (EnlComparison) comparison = NULL;
+  g_autoptr (GPtrArray) items = g_ptr_array_new_with_free_func (g_object_unref);
+  EnlConditions conditions = *enl_workset_conditions (enl_session_set (self->session));
+  EnlError err;
+
+  conditions.solvent = a->solvent; /* until a new analysis arrives the old one stays consistent */
+  if (enl_bases_compare (k->bases, k->cautions, a->sites, a->estimate, site, &conditions,
+                         &comparison, &err) != ENL_OK) {
+    g_autofree char *message = enl_error_message (&err);
+    gtk_label_set_text (self->heading, message);
+    g_list_store_remove_all (self->items);
+    return;
+  }
+  for (uint32_t i = 0; i < comparison->n_candidates; i++) {
+    const EnlCandidate *c = &comparison->candidate[i];
+    g_ptr_array_add (items, enl_base_item_new (enl_base_table_get (k->bases, c->base), c));
+  }
+  g_list_store_splice (self->items, 0, g_list_model_get_n_items (G_LIST_MODEL (self->items)),
+                       items->pdata, items->len);
+  g_autofree char *text = g_strdup_printf (
+      "Bases for site %u, %s, in %s", enl_analysis_rank (a, site), a->sites->site[site].position,
+      enl_solvent_label (a->solvent));
+  gtk_label_set_text (self->heading, text);
+}
+
+static void
+refresh (EnlBasesPanel *self)
+{
+  const EnlWorkset *set = enl_session_set (self->session);
+  const EnlConditions *conditions = enl_workset_conditions (set);
+  uint32_t site = enl_session_site (self->session);
+
+  self->filling = TRUE;
+  if (fabs (gtk_spin_button_get_value (self->equivalents) - conditions->equivalents) > 1e-9)
+    gtk_spin_button_set_value (self->equivalents, conditions->equivalents);
+  if (fabs (gtk_spin_button_get_value (self->concentration) - conditions->concentration) > 1e-9)
+    gtk_spin_button_set_value (self->concentration, conditions->concentration);
+  if (site == ENL_NONE) {
+    g_list_store_remove_all (self->items);
+    gtk_label_set_text (self->heading, "Bases: select an acidic hydrogen");
+  } else {
+    uint32_t substrate = enl_workset_selection (set)->substrate;
+    fill (self, enl_session_outcome (self->session, substrate).analysis, site);
+  }
+  select_wanted (self);
+  self->filling = FALSE;
+  show_details (self);
+}
+
+/* ---- events ---- */
+
+static void
+on_session_changed (EnlSession *session, EnlBasesPanel *self)
+{
+  (void) session;
+  refresh (self);
+}
+
+static void
+on_selected (GtkSingleSelection *selection, GParamSpec *pspec, EnlBasesPanel *self)
+{
+  EnlBaseItem *item = gtk_single_selection_get_selected_item (selection);
+
+  (void) pspec;
+  if (self->filling)
+    return;
+  show_details (self);
+  if (item) {
+    self->filling = TRUE; /* our own echo need not fill the list anew */
+    enl_session_select_base (self->session, enl_base_item_id (item));
+    self->filling = FALSE;
+  }
+}
+
+static void
+on_conditions (GtkSpinButton *button, EnlBasesPanel *self)
+{
+  EnlConditions c = *enl_workset_conditions (enl_session_set (self->session));
+
+  (void) button;
+  if (self->filling)
+    return;
+  c.equivalents = gtk_spin_button_get_value (self->equivalents);
+  c.concentration = gtk_spin_button_get_value (self->concentration);
+  enl_session_set_conditions (self->session, &c, NULL);
+}
+
+static void
+on_selection_changed (EnlSession *session, EnlBasesPanel *self)
+{
+  (void) session;
+  if (!self->filling)
+    refresh (self);
+}
+
+/* ---- object ---- */
+
+static void
+enl_bases_panel_dispose (GObject *object)
+{
+  EnlBasesPanel *self = ENL_BASES_PANEL (object);
+
+  g_clear_pointer (&self->box, gtk_widget_unparent);
+  g_clear_object (&self->session);
+  g_clear_object (&self->selection);
+  G_OBJECT_CLASS (enl_bases_panel_parent_class)->dispose (object);
+}
+
+static void
+enl_bases_panel_class_init (EnlBasesPanelClass *klass)
+{
+  GtkWidgetClass *widget_class = GTK_WIDGET_CLASS (klass);
+
+  G_OBJECT_CLASS (klass)->dispose = enl_bases_panel_dispose;
+  gtk_widget_class_set_css_name (widget_class, "panel");
+  gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
+  gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/bases-panel.ui");
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, box);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, heading);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, details);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, deferral);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, equivalents);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, concentration);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, view);
+  gtk_widget_class_bind_template_callback (widget_class, on_conditions);
+}
+
+static void
+enl_bases_panel_init (EnlBasesPanel *self)
+{
+  gtk_widget_init_template (GTK_WIDGET (self));
+  self->items = g_list_store_new (ENL_TYPE_BASE_ITEM);
+  self->selection = gtk_single_selection_new (G_LIST_MODEL (self->items));
+  gtk_single_selection_set_autoselect (self->selection, FALSE);
+  gtk_column_view_set_model (self->view, GTK_SELECTION_MODEL (self->selection));
+  add_column (self, "Base", ENL_CELL_NAME, TRUE);
+  add_column (self, "pKaH", ENL_CELL_PKAH, FALSE);
+  add_column (self, "Gap", ENL_CELL_GAP, FALSE);
+  add_column (self, "Anion", ENL_CELL_CONVERSION, FALSE);
+  add_column (self, "Verdict", ENL_CELL_VERDICT, FALSE);
+  g_signal_connect (self->selection, "notify::selected-item", G_CALLBACK (on_selected), self);
+}
+
+void
+enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session)
+{
+  g_assert (!self->session);
+  self->session = g_object_ref (session);
+  gtk_label_set_text (self->deferral,
+                      enl_caution_deferral (enl_session_knowledge (session)->cautions));
+  g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self, 0);
+  g_signal_connect_object (session, "conditions-changed", G_CALLBACK (on_session_changed), self, 0);
+  refresh (self);
+}
