@@ -24,11 +24,11 @@ G_DEFINE_FINAL_TYPE (EnlBasesPanel, enl_bases_panel, GTK_TYPE_WIDGET)
 static void
 on_setup (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
 {
-  EnlBaseCell cell = (EnlBaseCell) GPOINTER_TO_INT (data);
+  EnlBaseCell cell = (EnlBaseCell)GPOINTER_TO_INT (data);
   gboolean number = cell >= ENL_CELL_PKAH && cell <= ENL_CELL_CONVERSION;
   GtkWidget *label = gtk_label_new (NULL);
 
-  (void) factory;
+  (void)factory;
   gtk_label_set_xalign (GTK_LABEL (label), number ? 1.0f : 0.0f);
   gtk_label_set_ellipsize (GTK_LABEL (label), number ? PANGO_ELLIPSIZE_NONE : PANGO_ELLIPSIZE_END);
   if (cell == ENL_CELL_NAME)
@@ -47,9 +47,9 @@ on_bind (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
 {
   EnlBaseItem *base = gtk_list_item_get_item (item);
   GtkWidget *label = gtk_list_item_get_child (item);
-  const char *text = enl_base_item_cell (base, (EnlBaseCell) GPOINTER_TO_INT (data));
+  const char *text = enl_base_item_cell (base, (EnlBaseCell)GPOINTER_TO_INT (data));
 
-  (void) factory;
+  (void)factory;
   gtk_label_set_text (GTK_LABEL (label), text);
   gtk_widget_set_tooltip_text (label, text);
 }
@@ -88,7 +88,8 @@ static void
 select_wanted (EnlBasesPanel *self)
 {
   const char *wanted = enl_workset_selection (enl_session_set (self->session))->base;
-  guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items)), found = n ? 0 : GTK_INVALID_LIST_POSITION;
+  guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items)),
+        found = n ? 0 : GTK_INVALID_LIST_POSITION;
 
   for (guint i = 0; i < n; i++) {
     g_autoptr (EnlBaseItem) item = g_list_model_get_item (G_LIST_MODEL (self->items), i);
@@ -121,9 +122,9 @@ fill (EnlBasesPanel *self, const EnlAnalysis *a, uint32_t site)
   }
   g_list_store_splice (self->items, 0, g_list_model_get_n_items (G_LIST_MODEL (self->items)),
                        items->pdata, items->len);
-  g_autofree char *text = g_strdup_printf (
-      "Bases for site %u, %s, in %s", enl_analysis_rank (a, site), a->sites->site[site].position,
-      enl_solvent_label (a->solvent));
+  g_autofree char *text =
+      g_strdup_printf ("Bases for site %u, %s, in %s", enl_analysis_rank (a, site),
+                       a->sites->site[site].position, enl_solvent_label (a->solvent));
   gtk_label_set_text (self->heading, text);
 }
 
@@ -156,7 +157,7 @@ refresh (EnlBasesPanel *self)
 static void
 on_session_changed (EnlSession *session, EnlBasesPanel *self)
 {
-  (void) session;
+  (void)session;
   refresh (self);
 }
 
@@ -165,7 +166,7 @@ on_selected (GtkSingleSelection *selection, GParamSpec *pspec, EnlBasesPanel *se
 {
   EnlBaseItem *item = gtk_single_selection_get_selected_item (selection);
 
-  (void) pspec;
+  (void)pspec;
   if (self->filling)
     return;
   show_details (self);
@@ -181,7 +182,7 @@ on_conditions (GtkSpinButton *button, EnlBasesPanel *self)
 {
   EnlConditions c = *enl_workset_conditions (enl_session_set (self->session));
 
-  (void) button;
+  (void)button;
   if (self->filling)
     return;
   c.equivalents = gtk_spin_button_get_value (self->equivalents);
@@ -192,7 +193,7 @@ on_conditions (GtkSpinButton *button, EnlBasesPanel *self)
 static void
 on_selection_changed (EnlSession *session, EnlBasesPanel *self)
 {
-  (void) session;
+  (void)session;
   if (!self->filling)
     refresh (self);
 }
@@ -252,7 +253,8 @@ enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session)
   self->session = g_object_ref (session);
   gtk_label_set_text (self->deferral,
                       enl_caution_deferral (enl_session_knowledge (session)->cautions));
-  g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self, 0);
+  g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self,
+                           0);
   g_signal_connect_object (session, "conditions-changed", G_CALLBACK (on_session_changed), self, 0);
   refresh (self);
 }

@@ -31,8 +31,8 @@ transform (EnlCanvas *self, double *scale, double *dx, double *dy)
 
   *scale = 1.0;
   if (self->fit && frame.width > 0.0 && frame.height > 0.0)
-    *scale = MIN (self->largest, MIN ((width - 2 * MARGIN) / frame.width,
-                                      (height - 2 * MARGIN) / frame.height));
+    *scale = MIN (self->largest,
+                  MIN ((width - 2 * MARGIN) / frame.width, (height - 2 * MARGIN) / frame.height));
   *scale = MAX (*scale, 0.01);
   *dx = self->fit ? (width - *scale * frame.width) / 2 - *scale * frame.x : -frame.x;
   *dy = self->fit ? (height - *scale * frame.height) / 2 - *scale * frame.y : -frame.y;
@@ -42,7 +42,7 @@ static GskRenderNode *
 paint (EnlCanvas *self, int width, int height)
 {
   GtkSnapshot *snapshot = gtk_snapshot_new ();
-  graphene_rect_t area = GRAPHENE_RECT_INIT (0, 0, (float) width, (float) height);
+  graphene_rect_t area = GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height);
   cairo_t *cr = gtk_snapshot_append_cairo (snapshot, &area);
   double scale, dx, dy;
 
@@ -71,9 +71,9 @@ enl_canvas_snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
 static void
 enl_canvas_size_allocate (GtkWidget *widget, int width, int height, int baseline)
 {
-  (void) width;
-  (void) height;
-  (void) baseline;
+  (void)width;
+  (void)height;
+  (void)baseline;
   g_clear_pointer (&ENL_CANVAS (widget)->node, gsk_render_node_unref);
 }
 
@@ -83,12 +83,12 @@ enl_canvas_measure (GtkWidget *widget, GtkOrientation orientation, int for_size,
 {
   EnlCanvas *self = ENL_CANVAS (widget);
 
-  (void) for_size;
+  (void)for_size;
   *minimum_baseline = *natural_baseline = -1;
   *minimum = *natural = 40;
   if (self->scene) {
     EnlRect frame = enl_scene_frame (self->scene);
-    *natural = (int) (orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height) + 1;
+    *natural = (int)(orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height) + 1;
     if (!self->fit)
       *minimum = *natural;
   }
@@ -112,8 +112,8 @@ on_pressed (GtkGestureClick *gesture, int n, double x, double y, gpointer data)
   EnlCanvas *self = data;
   const EnlShape *shape = shape_at (self, x, y);
 
-  (void) gesture;
-  (void) n;
+  (void)gesture;
+  (void)n;
   g_signal_emit (self, picked_signal, 0, shape ? shape->site : ENL_NONE,
                  shape ? shape->atom : ENL_NONE);
 }
@@ -124,7 +124,7 @@ on_motion (GtkEventControllerMotion *controller, double x, double y, gpointer da
   EnlCanvas *self = data;
   const EnlShape *shape = shape_at (self, x, y);
 
-  (void) controller;
+  (void)controller;
   gtk_widget_set_cursor_from_name (GTK_WIDGET (self),
                                    shape && shape->site != ENL_NONE ? "pointer" : NULL);
 }

@@ -68,10 +68,10 @@ refresh_picture (EnlColumn *self)
     enl_canvas_describe (self->canvas, "Structure", "empty");
     return;
   }
-  if (site != ENL_NONE
-      && enl_forms_of_site (a->mol, a->sites->site[site].atom[0], &forms, NULL) != ENL_OK)
+  if (site != ENL_NONE &&
+      enl_forms_of_site (a->mol, a->sites->site[site].atom[0], &forms, NULL) != ENL_OK)
     forms = NULL;
-  EnlStructureLook look = { a->sites, a->estimate, a->rank, site, forms, false };
+  EnlStructureLook look = {a->sites, a->estimate, a->rank, site, forms, false};
   enl_canvas_take_scene (self->canvas,
                          enl_structure_scene (a->mol, &look, enl_look_theme (self->look)));
   g_autofree char *text = describe (a);
@@ -91,8 +91,8 @@ mark_fault (EnlColumn *self, const EnlError *error)
 
   if (error && error->line) {
     PangoAttribute *under = pango_attr_underline_new (PANGO_UNDERLINE_ERROR);
-    under->start_index = (guint) error->offset;
-    under->end_index = (guint) (error->offset + error->length);
+    under->start_index = (guint)error->offset;
+    under->end_index = (guint)(error->offset + error->length);
     pango_attr_list_insert (marks, under);
   }
   gtk_entry_set_attributes (self->line, marks);
@@ -227,7 +227,7 @@ refresh (EnlColumn *self)
 static void
 on_substrate_changed (EnlSession *session, guint index, EnlColumn *self)
 {
-  (void) session;
+  (void)session;
   if (index == self->index)
     refresh (self);
   else if (index < enl_workset_size (enl_session_set (self->session)))
@@ -239,7 +239,7 @@ on_selection_changed (EnlSession *session, EnlColumn *self)
 {
   gboolean was = gtk_widget_has_css_class (GTK_WIDGET (self), "selected");
 
-  (void) session;
+  (void)session;
   if (self->index >= enl_workset_size (enl_session_set (self->session)))
     return;
   if (!was && !is_selected (self))
@@ -252,7 +252,7 @@ on_selection_changed (EnlSession *session, EnlColumn *self)
 static void
 on_look_changed (EnlLook *look, EnlColumn *self)
 {
-  (void) look;
+  (void)look;
   refresh (self);
 }
 
@@ -282,7 +282,7 @@ select_this (EnlColumn *self)
 static void
 on_focus_enter (GtkEventControllerFocus *controller, EnlColumn *self)
 {
-  (void) controller;
+  (void)controller;
   if (self->index < enl_workset_size (enl_session_set (self->session)))
     select_this (self);
 }
@@ -299,7 +299,7 @@ pick_site (EnlColumn *self, uint32_t site)
 static void
 on_row_selected (GtkListBox *list, GtkListBoxRow *row, EnlColumn *self)
 {
-  (void) list;
+  (void)list;
   if (!self->filling && row && enl_site_row_site (row) != ENL_NONE)
     pick_site (self, enl_site_row_site (row));
 }
@@ -309,10 +309,10 @@ on_picked (EnlCanvas *canvas, guint site, guint atom, EnlColumn *self)
 {
   const EnlAnalysis *a = enl_session_outcome (self->session, self->index).analysis;
 
-  (void) canvas;
+  (void)canvas;
   if (site == ENL_NONE && atom != ENL_NONE && a) {
     const EnlSite *of_atom = enl_sites_of_atom (a->sites, atom);
-    site = of_atom ? (uint32_t) (of_atom - a->sites->site) : ENL_NONE;
+    site = of_atom ? (uint32_t)(of_atom - a->sites->site) : ENL_NONE;
   }
   if (site != ENL_NONE)
     pick_site (self, site);
@@ -323,21 +323,21 @@ on_picked (EnlCanvas *canvas, guint site, guint atom, EnlColumn *self)
 static void
 on_left (GtkButton *button, EnlColumn *self)
 {
-  (void) button;
+  (void)button;
   enl_session_move (self->session, self->index, self->index - 1);
 }
 
 static void
 on_right (GtkButton *button, EnlColumn *self)
 {
-  (void) button;
+  (void)button;
   enl_session_move (self->session, self->index, self->index + 1);
 }
 
 static void
 on_remove (GtkButton *button, EnlColumn *self)
 {
-  (void) button;
+  (void)button;
   enl_session_remove (self->session, self->index);
 }
 
@@ -412,8 +412,10 @@ enl_column_new (EnlSession *session, EnlLook *look, uint32_t index)
   self->session = g_object_ref (session);
   self->look = g_object_ref (look);
   self->index = index;
-  g_signal_connect_object (session, "substrate-changed", G_CALLBACK (on_substrate_changed), self, 0);
-  g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self, 0);
+  g_signal_connect_object (session, "substrate-changed", G_CALLBACK (on_substrate_changed), self,
+                           0);
+  g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self,
+                           0);
   g_signal_connect_object (look, "changed", G_CALLBACK (on_look_changed), self, 0);
   refresh (self);
   return GTK_WIDGET (self);

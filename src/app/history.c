@@ -10,7 +10,7 @@ struct EnlHistory {
 static GPtrArray *
 new_pile (void)
 {
-  return g_ptr_array_new_with_free_func ((GDestroyNotify) enl_workset_free);
+  return g_ptr_array_new_with_free_func ((GDestroyNotify)enl_workset_free);
 }
 
 EnlHistory *
@@ -59,7 +59,7 @@ void
 enl_history_drop (EnlHistory *history)
 {
   g_assert (history->past->len);
-  g_ptr_array_set_size (history->past, (int) history->past->len - 1);
+  g_ptr_array_set_size (history->past, (int)history->past->len - 1);
 }
 
 bool

@@ -17,6 +17,7 @@ void enl_history_drop (EnlHistory *history);
 
 bool enl_history_can_undo (const EnlHistory *history);
 bool enl_history_can_redo (const EnlHistory *history);
-/* The set to go to, owned by the caller, or NULL at the end; `now` is remembered for the way back. */
+/* The set to go to, owned by the caller, or NULL at the end; `now` is remembered for the way back.
+ */
 EnlWorkset *enl_history_undo (EnlHistory *history, const EnlWorkset *now);
 EnlWorkset *enl_history_redo (EnlHistory *history, const EnlWorkset *now);

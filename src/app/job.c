@@ -35,11 +35,11 @@ work (GTask *task, gpointer source, gpointer data, GCancellable *cancellable)
   g_autoptr (EnlMolecule) mol = NULL;
   g_autoptr (EnlJobResult) result = g_new0 (EnlJobResult, 1);
 
-  (void) source;
+  (void)source;
   if (g_task_return_error_if_cancelled (task))
     return;
-  EnlStatus status = enl_read_structure (order->knowledge->names, order->text,
-                                         strlen (order->text), &mol, NULL, &result->error);
+  EnlStatus status = enl_read_structure (order->knowledge->names, order->text, strlen (order->text),
+                                         &mol, NULL, &result->error);
   if (g_cancellable_is_cancelled (cancellable)) {
     g_task_return_error_if_cancelled (task);
     return;
@@ -47,7 +47,7 @@ work (GTask *task, gpointer source, gpointer data, GCancellable *cancellable)
   if (status == ENL_OK)
     status = enl_analysis_new (order->knowledge, mol, order->solvent, true, &result->analysis,
                                &result->error);
-  g_task_return_pointer (task, g_steal_pointer (&result), (GDestroyNotify) enl_job_result_free);
+  g_task_return_pointer (task, g_steal_pointer (&result), (GDestroyNotify)enl_job_result_free);
 }
 
 void

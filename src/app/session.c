@@ -5,11 +5,7 @@
 
 #include "app/history.h"
 #include "app/job.h"
-
-/* Axis shown before anything is known, and the margin beyond the outermost bound, pK units. */
-#define AXIS_LOW 10.0
-#define AXIS_HIGH 35.0
-#define AXIS_MARGIN 1.0
+#include "draw/whisker.h"
 
 /* What the session holds beside each substrate of the set, in the same order. */
 typedef struct {
@@ -76,7 +72,7 @@ job_done (GObject *source, GAsyncResult *result, gpointer data)
   g_autoptr (EnlJobResult) done = enl_job_finish (result);
   guint index;
 
-  (void) source;
+  (void)source;
   if (!done || !g_ptr_array_find (self->slot, errand->slot, &index))
     return;
   Slot *slot = slot_at (self, index);
@@ -167,8 +163,8 @@ enl_session_outcome (EnlSession *self, uint32_t substrate)
 {
   const Slot *slot = slot_at (self, substrate);
 
-  return (EnlOutcome){ slot->analysis, slot->current, slot->cancellable != NULL,
-                       slot->has_error ? &slot->error : NULL };
+  return (EnlOutcome){slot->analysis, slot->current, slot->cancellable != NULL,
+                      slot->has_error ? &slot->error : NULL};
 }
 
 bool
@@ -187,14 +183,8 @@ enl_session_range (EnlSession *self, double *low, double *high)
   *high = -INFINITY;
   for (uint32_t i = 0; i < self->slot->len; i++) {
     const EnlAnalysis *a = slot_at (self, i)->analysis;
-    for (uint32_t s = 0; a && s < a->sites->n_sites; s++) {
-      *low = fmin (*low, a->estimate[s].low - AXIS_MARGIN);
-      *high = fmax (*high, a->estimate[s].high + AXIS_MARGIN);
-    }
-  }
-  if (!(*high > *low)) {
-    *low = AXIS_LOW;
-    *high = AXIS_HIGH;
+    if (a)
+      enl_whisker_range (a->estimate, a->sites->n_sites, low, high);
   }
 }
 
@@ -271,7 +261,7 @@ enl_session_add (EnlSession *self, const char *name, const char *text, EnlError 
     enl_history_drop (self->history);
     return status;
   }
-  g_ptr_array_insert (self->slot, (int) index, g_new0 (Slot, 1));
+  g_ptr_array_insert (self->slot, (int)index, g_new0 (Slot, 1));
   enl_workset_select (self->set, index, ENL_NONE, NULL);
   slot_start (self, index);
   announce_set (self);
@@ -295,7 +285,7 @@ enl_session_move (EnlSession *self, uint32_t from, uint32_t to)
   remember (self, NULL);
   enl_workset_move (self->set, from, to);
   Slot *slot = g_ptr_array_steal_index (self->slot, from);
-  g_ptr_array_insert (self->slot, (int) to, slot);
+  g_ptr_array_insert (self->slot, (int)to, slot);
   announce_set (self);
 }
 
@@ -333,8 +323,7 @@ static void
 step (EnlSession *self, EnlWorkset *to)
 {
   g_autoptr (EnlWorkset) before = self->set;
-  bool solvent =
-      enl_workset_conditions (before)->solvent != enl_workset_conditions (to)->solvent;
+  bool solvent = enl_workset_conditions (before)->solvent != enl_workset_conditions (to)->solvent;
 
   self->set = to;
   rebuild_slots (self, before);

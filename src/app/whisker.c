@@ -1,5 +1,8 @@
 #include "app/whisker.h"
 
+#include "draw/paint.h"
+#include "draw/whisker.h"
+
 struct _EnlWhisker {
   GtkWidget parent;
   EnlEstimate estimate;
@@ -9,48 +12,28 @@ struct _EnlWhisker {
 
 G_DEFINE_FINAL_TYPE (EnlWhisker, enl_whisker, GTK_TYPE_WIDGET)
 
-static float
-place (const EnlWhisker *self, double value, double width)
-{
-  double share = (value - self->low) / (self->high - self->low);
-
-  return (float) (CLAMP (share, 0.0, 1.0) * width);
-}
-
-static void
-fill (GtkSnapshot *snapshot, const EnlColour *c, double opacity, float x, float y, float width,
-      float height)
-{
-  GdkRGBA rgba = { (float) c->red, (float) c->green, (float) c->blue,
-                   (float) (c->alpha * opacity) };
-
-  gtk_snapshot_append_color (snapshot, &rgba, &GRAPHENE_RECT_INIT (x, y, width, height));
-}
-
 static void
 enl_whisker_snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
 {
   EnlWhisker *self = ENL_WHISKER (widget);
-  float width = (float) gtk_widget_get_width (widget);
-  float middle = (float) gtk_widget_get_height (widget) / 2;
-  float low = place (self, self->estimate.low, width), high = place (self, self->estimate.high, width);
-  float value = place (self, self->estimate.value, width);
-  const EnlColour *muted = &self->theme->tone[ENL_TONE_MUTED];
-  const EnlColour *tone = &self->theme->tone[ENL_TONE_SITE];
+  int width = gtk_widget_get_width (widget), height = gtk_widget_get_height (widget);
+  g_autoptr (EnlScene) scene =
+      enl_whisker_scene (&self->estimate, self->low, self->high, width, height, false, self->theme);
+  graphene_rect_t area = GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height);
+  cairo_t *cr = gtk_snapshot_append_cairo (snapshot, &area);
 
-  fill (snapshot, muted, 0.35, 0, middle - 0.5f, width, 1);
-  fill (snapshot, tone, 0.45, low, middle - 2.5f, MAX (high - low, 1), 5);
-  fill (snapshot, tone, 1.0, MIN (value, width - 2) - 1, middle - 6, 3, 12);
+  enl_scene_paint (scene, cr);
+  cairo_destroy (cr);
 }
 
 static void
 enl_whisker_measure (GtkWidget *widget, GtkOrientation orientation, int for_size, int *minimum,
                      int *natural, int *minimum_baseline, int *natural_baseline)
 {
-  (void) widget;
-  (void) for_size;
-  *minimum = orientation == GTK_ORIENTATION_HORIZONTAL ? 48 : 14;
-  *natural = orientation == GTK_ORIENTATION_HORIZONTAL ? 90 : 14;
+  (void)widget;
+  (void)for_size;
+  *minimum = orientation == GTK_ORIENTATION_HORIZONTAL ? 48 : 16;
+  *natural = orientation == GTK_ORIENTATION_HORIZONTAL ? 90 : 16;
   *minimum_baseline = *natural_baseline = -1;
 }
 

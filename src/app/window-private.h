@@ -1,0 +1,38 @@
+/* The inside of the window, for its own files only. */
+#pragma once
+
+#include "app/bases-panel.h"
+#include "app/forms-panel.h"
+#include "app/window.h"
+
+struct _EnlWindow {
+  GtkApplicationWindow parent;
+  EnlSession *session;
+  EnlLook *look;
+  gboolean closing; /* unsaved changes were settled */
+
+  GtkLabel *title, *subtitle;
+  GtkInfoBar *bar;
+  GtkLabel *message;
+  GtkScrolledWindow *scroller;
+  GtkBox *columns;
+  GtkLabel *hint;
+  EnlFormsPanel *forms;
+  EnlBasesPanel *bases;
+  GtkPaned *panes, *lower;
+};
+
+/* window-actions.c */
+void enl_window_add_actions (EnlWindow *window);
+void enl_window_add_bindings (GtkWidgetClass *klass);
+/* Brings enabled flags and states in line with the session. */
+void enl_window_sync_actions (EnlWindow *window);
+
+/* window-files.c */
+void enl_window_choose_open (EnlWindow *window);
+void enl_window_choose_save (EnlWindow *window, gboolean then_close);
+/* Asks once about unsaved changes; closes when they are settled. */
+void enl_window_ask_close (EnlWindow *window);
+
+/* window-state.c: the "state" action, a JSON text that tests read. */
+char *enl_window_state (EnlWindow *window);

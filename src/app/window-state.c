@@ -1,0 +1,69 @@
+#include <jansson.h>
+
+#include "app/window-private.h"
+
+static json_t *
+site_state (const EnlAnalysis *a, uint32_t place)
+{
+  uint32_t s = a->rank[place];
+  const EnlSite *site = &a->sites->site[s];
+
+  return json_pack ("{s:i, s:s, s:i, s:f, s:s}", "rank", (int)place + 1, "position", site->position,
+                    "hydrogens", (int)site->hydrogens, "pka", a->estimate[s].value, "basis",
+                    enl_basis_text (a->estimate[s].basis));
+}
+
+static json_t *
+substrate_state (EnlWindow *self, uint32_t index)
+{
+  const EnlSubstrate *s = enl_workset_get (enl_session_set (self->session), index);
+  EnlOutcome outcome = enl_session_outcome (self->session, index);
+  json_t *object = json_object (), *sites = json_array ();
+
+  json_object_set_new (object, "name", json_string (s->name));
+  json_object_set_new (object, "text", json_string (s->text));
+  json_object_set_new (object, "running", json_boolean (outcome.running));
+  json_object_set_new (object, "current", json_boolean (outcome.current));
+  if (outcome.error) {
+    g_autofree char *message = enl_error_message (outcome.error);
+    json_object_set_new (object, "error", json_string (message));
+  }
+  if (outcome.analysis) {
+    json_object_set_new (object, "smiles", json_string (outcome.analysis->smiles));
+    if (outcome.analysis->sites->no_enol)
+      json_object_set_new (object, "reason", json_string (outcome.analysis->sites->no_enol));
+    for (uint32_t i = 0; i < outcome.analysis->sites->n_sites; i++)
+      json_array_append_new (sites, site_state (outcome.analysis, i));
+  }
+  json_object_set_new (object, "sites", sites);
+  return object;
+}
+
+char *
+enl_window_state (EnlWindow *self)
+{
+  const EnlWorkset *set = enl_session_set (self->session);
+  const EnlSelection *selection = enl_workset_selection (set);
+  json_t *root = json_object (), *substrates = json_array ();
+  uint32_t site = enl_session_site (self->session);
+
+  /* A long set would make every change slow: the probe shows its beginning. */
+  for (uint32_t i = 0; i < MIN (enl_workset_size (set), 12); i++)
+    json_array_append_new (substrates, substrate_state (self, i));
+  json_object_set_new (root, "size", json_integer (enl_workset_size (set)));
+  json_object_set_new (root, "substrates", substrates);
+  json_object_set_new (root, "solvent",
+                       json_string (enl_solvent_id (enl_workset_conditions (set)->solvent)));
+  json_object_set_new (
+      root, "substrate",
+      json_integer (selection->substrate == ENL_NONE ? -1 : (int)selection->substrate));
+  json_object_set_new (root, "site", json_integer (site == ENL_NONE ? -1 : (int)site));
+  json_object_set_new (root, "base", json_string (selection->base));
+  json_object_set_new (root, "busy", json_boolean (enl_session_busy (self->session)));
+  json_object_set_new (root, "unsaved", json_boolean (enl_session_unsaved (self->session)));
+  char *text = json_dumps (root, JSON_COMPACT);
+  char *out = g_strdup (text ? text : "");
+  free (text);
+  json_decref (root);
+  return out;
+}
