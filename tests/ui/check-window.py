@@ -1,0 +1,217 @@
+"""Starts the real window, drives it with real key events and looks at what it shows.
+
+Usage (inside dbus-run-session and xvfb-run): check-window.py PROGRAM OUTPUT_FOLDER
+State is read from the window's "state" action over D-Bus; pictures go to OUTPUT_FOLDER.
+Expected pKa: resources/acids.tsv, i.e. acetophenone 24.7 (Matthews et al., JACS 1975, 97, 7006),
+ethyl acetoacetate 14.2 in DMSO (Olmstead & Bordwell, J. Org. Chem. 1980, 45, 3299) and 10.68 in
+water (Pearson & Dillon, JACS 1953, 75, 2439).
+"""
+import ast
+import json
+import os
+import pathlib
+import subprocess
+import sys
+import tempfile
+import time
+
+APP = 'org.enolith.Enolith'
+WINDOW = '/org/enolith/Enolith/window/1'
+PATIENCE = 30.0
+
+
+def run(*command, **options):
+    return subprocess.run(command, check=True, capture_output=True, text=True, **options).stdout
+
+
+def call(path, method, *arguments):
+    return run('gdbus', 'call', '--session', '--dest', APP, '--object-path', path, '--method',
+               'org.gtk.Actions.' + method, *arguments)
+
+
+def activate(action, parameter='[]'):
+    call(WINDOW, 'Activate', action, parameter, '{}')
+
+
+def state():
+    text = call(WINDOW, 'Describe', 'state')
+    start = text.index('[<') + 2
+    return json.loads(ast.literal_eval(text[start:text.rindex('>]')]))
+
+
+def wait(what, condition):
+    end = time.monotonic() + PATIENCE
+    while time.monotonic() < end:
+        now = state()
+        if not now['busy'] and condition(now):
+            print('ok: %s' % what)
+            return now
+        time.sleep(0.05)
+    raise SystemExit('failed: %s\nstate: %s' % (what, json.dumps(state(), indent=1)))
+
+
+def key(*names):
+    run('xdotool', 'key', '--delay', '30', *names)
+
+
+def type_text(text):
+    run('xdotool', 'type', '--delay', '15', text)
+
+
+def window_id():
+    end = time.monotonic() + PATIENCE
+    while time.monotonic() < end:
+        found = subprocess.run(['xdotool', 'search', '--onlyvisible', '--name', 'Enolith$'],
+                               capture_output=True, text=True).stdout.split()
+        if found:
+            return found[0]
+        time.sleep(0.05)
+    raise SystemExit('no window appeared')
+
+
+class Picture:
+    def __init__(self, folder, name):
+        self.path = str(pathlib.Path(folder) / (name + '.png'))
+        time.sleep(0.5)
+        run('import', '-window', 'root', self.path)
+
+    def brightness(self):
+        return float(run('convert', self.path, '-colorspace', 'Gray', '-format', '%[fx:mean]', 'info:'))
+
+    def colours(self):
+        return int(run('convert', self.path, '-format', '%k', 'info:'))
+
+
+def expect(what, fact):
+    if not fact:
+        raise SystemExit('failed: %s\nstate: %s' % (what, json.dumps(state(), indent=1)))
+    print('ok: %s' % what)
+
+
+def top_site(now, index):
+    return now['substrates'][index]['sites'][0]
+
+
+def check_first_start(folder):
+    now = wait('the first start shows a worked set', lambda s: s['size'] == 3 and all(
+        x['current'] for x in s['substrates']))
+    site = top_site(now, 0)
+    expect('ethyl acetoacetate is measured, 14.2', site['basis'] == 'measured' and site['pka'] == 14.2
+           and site['hydrogens'] == 2)
+    expect('an anisyl ketone is estimated', top_site(now, 1)['basis'] == 'estimated')
+    light = Picture(folder, 'first-start')
+    expect('the light window is bright and not empty', light.brightness() > 0.7 and light.colours() > 200)
+
+
+def check_typing(folder):
+    key('ctrl+t')
+    wait('a new substrate is selected', lambda s: s['size'] == 4 and s['substrate'] == 1)
+    type_text('acetophenone')
+    now = wait('acetophenone is read while typing', lambda s: s['substrates'][1].get('smiles') and
+               s['substrates'][1]['current'])
+    site = top_site(now, 1)
+    expect('three alpha hydrogens, 24.7 measured', site['pka'] == 24.7 and site['hydrogens'] == 3 and
+           site['basis'] == 'measured')
+    key('ctrl+l', 'ctrl+a')
+    type_text('CC(=O)C1CC')
+    now = wait('an open ring is an error', lambda s: 'error' in s['substrates'][1])
+    error = now['substrates'][1]['error']
+    expect('the error has a place and advice', 'line 1, column' in error and ';' in error)
+    expect('the last good structure stays', now['substrates'][1].get('smiles'))
+    Picture(folder, 'typing-error')
+    key('ctrl+a')
+    type_text('O=C(c1ccccc1)c1ccccc1')
+    now = wait('benzophenone is read', lambda s: s['substrates'][1]['current'])
+    expect('it says why it cannot enolise', 'reason' in now['substrates'][1])
+
+
+def check_history():
+    last = 'O=C(c1ccccc1)c1ccccc1'
+    activate('undo')
+    wait('undo goes back before the typing', lambda s: s['substrates'][1]['text'] != last)
+    activate('redo')
+    wait('redo brings it back', lambda s: s['substrates'][1]['text'] == last)
+
+
+def check_solvent():
+    def settled(solvent):
+        return lambda s: s['solvent'] == solvent and all(x['current'] for x in s['substrates'])
+    key('ctrl+2')
+    now = wait('water', settled('water'))
+    expect('ethyl acetoacetate in water 10.68', top_site(now, 0)['pka'] == 10.68)
+    key('ctrl+3')
+    now = wait('THF', settled('thf'))
+    expect('nothing is called measured in THF', top_site(now, 0)['basis'] == 'estimated')
+    key('ctrl+1')
+    wait('DMSO again', settled('dmso'))
+
+
+def check_keys_select():
+    key('alt+Left')
+    now = wait('Alt+Left selects the substrate before', lambda s: s['substrate'] == 0)
+    key('alt+Down')
+    wait('Alt+Down selects the next site', lambda s: s['site'] != now['site'])
+
+
+def check_looks(folder):
+    call(WINDOW, 'SetState', 'look', "<'dark'>", '{}')
+    dark = Picture(folder, 'dark')
+    expect('the dark window is dark and not empty', dark.brightness() < 0.45 and dark.colours() > 200)
+    key('F5')
+    Picture(folder, 'projector')
+    key('F5')
+
+
+def check_files(folder):
+    with tempfile.TemporaryDirectory() as place:
+        path = os.path.join(place, 'kept.enolith')
+        activate('save-path', "[<'%s'>]" % path)
+        before = wait('saved', lambda s: not s['unsaved'])
+        broken = os.path.join(place, 'broken.enolith')
+        pathlib.Path(broken).write_text(pathlib.Path(path).read_text()[:200])
+        activate('open-path', "[<'%s'>]" % broken)
+        after = wait('a damaged set changes nothing', lambda s: s['size'] == before['size'])
+        expect('the substrates are still there', after['substrates'] == before['substrates'])
+        Picture(folder, 'damaged-set')
+        activate('open-path', "[<'%s'>]" % path)
+        after = wait('the saved set opens', lambda s: all(x['current'] for x in s['substrates']))
+        expect('it holds the same', [x['text'] for x in after['substrates']] ==
+               [x['text'] for x in before['substrates']])
+
+
+def drive(folder):
+    run('gdbus', 'wait', '--session', '--timeout', '30', APP)
+    window_id()
+    time.sleep(0.4)
+    check_first_start(folder)
+    check_typing(folder)
+    check_history()
+    check_solvent()
+    check_keys_select()
+    check_looks(folder)
+    check_files(folder)
+
+
+def main():
+    program, folder = sys.argv[1], sys.argv[2]
+    os.makedirs(folder, exist_ok=True)
+    with tempfile.TemporaryDirectory() as home, tempfile.TemporaryFile('w+') as complaints:
+        environment = dict(os.environ, HOME=home, XDG_CONFIG_HOME=home, XDG_DATA_HOME=home)
+        process = subprocess.Popen([program], stderr=complaints, env=environment)
+        try:
+            drive(folder)
+            call('/org/enolith/Enolith', 'Activate', 'quit', '[]', '{}')
+            code = process.wait(PATIENCE)
+        finally:
+            process.kill()
+        complaints.seek(0)
+        text = complaints.read()
+    if text:
+        sys.exit('the program complained:\n' + text)
+    if code != 0:
+        sys.exit('exit code %d' % code)
+    print('ok: it ends cleanly')
+
+
+if __name__ == '__main__':
+    main()
