@@ -112,63 +112,107 @@ set_mark (Marks *m, uint32_t u, uint32_t row, uint32_t ligand)
   }
 }
 
-static void
-state_end (Marks *m, uint32_t u, uint32_t row)
+/* The ligand that states the end best for the unit's present side: by cost, then by written
+ * position. ENL_NONE with the cost of the written-out hydrogen, or G_MAXINT where there is none. */
+static uint32_t
+best_ligand (const Marks *m, uint32_t u, uint32_t row, int *cost)
 {
   const EnlUnit *unit = &m->walk->graph->unit[u];
   const EnlAtom *end = enl_molecule_atom (m->walk->mol, unit->end[row]);
   uint32_t best = ENL_NONE;
-  int best_cost = end->hydrogens == 1 ? COST_HYDROGEN : G_MAXINT;
 
+  *cost = end->hydrogens == 1 ? COST_HYDROGEN : G_MAXINT;
   for (uint32_t i = 0; i < unit->ligands[row]; i++) {
-    int cost = cost_of (m, u, row, unit->ligand[row][i]);
-    if (cost == 0)
-      return;
-    if (cost > 0 && cost < best_cost) {
-      best_cost = cost;
-      best = unit->ligand[row][i];
-    }
+    uint32_t ligand = unit->ligand[row][i];
+    int this_cost = cost_of (m, u, row, ligand);
+    if (this_cost < 0 || this_cost > *cost)
+      continue;
+    if (this_cost == *cost && best != ENL_NONE && m->walk->visit[ligand] > m->walk->visit[best])
+      continue;
+    *cost = this_cost;
+    best = ligand;
   }
+  return best;
+}
+
+static void
+state_end (Marks *m, uint32_t u, uint32_t row)
+{
+  const EnlUnit *unit = &m->walk->graph->unit[u];
+  int cost;
+  uint32_t best = best_ligand (m, u, row, &cost);
+
+  if (cost == 0)
+    return;
   if (best != ENL_NONE)
     set_mark (m, u, row, best);
-  else if (end->hydrogens == 1)
+  else if (cost == COST_HYDROGEN)
     m->walk->hydrogen_mark[unit->end[row]] =
         (int8_t)-ligand_sign (unit, row, unit->ligand[row][unit->ligands[row] - 1], m->side[u]);
 }
 
-/* The next unit: one whose side is tied already, else the one that is written first. */
+static int
+cost_of_side (Marks *m, uint32_t u, int side)
+{
+  int cost[2];
+
+  m->side[u] = (int8_t)side;
+  for (uint32_t row = 0; row < 2; row++) {
+    best_ligand (m, u, row, &cost[row]);
+    cost[row] = MIN (cost[row], 1 << 20);
+  }
+  m->side[u] = 0;
+  return cost[0] + cost[1];
+}
+
+/* A free unit takes the side that costs less with the marks around it; where both cost the same,
+ * the one that makes '/' the first mark written. */
+static void
+choose_side (Marks *m, uint32_t u, uint32_t first_row)
+{
+  const EnlUnit *unit = &m->walk->graph->unit[u];
+  int plus = cost_of_side (m, u, 1), minus = cost_of_side (m, u, -1), cost;
+
+  m->side[u] = plus <= minus ? 1 : -1;
+  uint32_t ligand = best_ligand (m, u, first_row, &cost);
+  if (plus == minus && ligand != ENL_NONE)
+    m->side[u] = (int8_t)side_from_mark (m->walk, unit, first_row, ligand, 1);
+}
+
+static bool
+touches_done (const Marks *m, const EnlUnit *unit)
+{
+  for (uint32_t row = 0; row < 2; row++)
+    for (uint32_t i = 0; i < unit->ligands[row]; i++) {
+      uint32_t other = unit_ending_at (m->walk, unit->ligand[row][i]);
+      if (other != ENL_NONE && m->done[other])
+        return true;
+    }
+  return false;
+}
+
+/* The next unit: one whose side is tied already, else one beside a unit that is done (so that
+ * conjugated units are settled from one end), else the one that is written first. */
 static uint32_t
 next_unit (const Marks *m)
 {
   const EnlSmilesWalk *walk = m->walk;
-  uint32_t best = ENL_NONE, best_visit = ENL_NONE;
+  uint32_t best = ENL_NONE;
+  uint64_t best_order = UINT64_MAX;
 
   for (uint32_t u = 0; u < walk->graph->units; u++) {
     const EnlUnit *unit = &walk->graph->unit[u];
     if (unit->bond == ENL_NONE || !unit->value || m->done[u])
       continue;
-    uint32_t visit = MIN (walk->visit[unit->end[0]], walk->visit[unit->end[1]]);
-    if (m->side[u])
-      return u;
-    if (visit < best_visit) {
-      best_visit = visit;
+    uint64_t order = MIN (walk->visit[unit->end[0]], walk->visit[unit->end[1]]);
+    if (!m->side[u])
+      order += touches_done (m, unit) ? UINT64_C (1) << 32 : UINT64_C (2) << 32;
+    if (order < best_order) {
+      best_order = order;
       best = u;
     }
   }
   return best;
-}
-
-/* A free unit takes the side that makes '/' the first mark written. */
-static void
-choose_side (Marks *m, uint32_t u, uint32_t first_row)
-{
-  const EnlUnit *unit = &m->walk->graph->unit[u];
-  uint32_t ligand = unit->ligand[first_row][0];
-
-  for (uint32_t i = 1; i < unit->ligands[first_row]; i++)
-    if (m->walk->parent[unit->end[first_row]] == unit->ligand[first_row][i])
-      ligand = unit->ligand[first_row][i];
-  m->side[u] = (int8_t)side_from_mark (m->walk, unit, first_row, ligand, 1);
 }
 
 void

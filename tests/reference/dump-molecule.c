@@ -1,0 +1,103 @@
+/* Prints what the core makes of SMILES, one a line on standard input, as tab-separated columns for
+ * check-molecules.py:
+ * input positions of the atoms, formula, heavy atoms, hydrogens per atom, rings, aromatic atoms,
+ * symmetry classes without and with stereo, stereocentres, stereo double bonds, canonical SMILES,
+ * the same without stereo, Kekulé, in input order, and CIP labels. An unreadable line gives "error"
+ * and the message.
+ */
+#include <stdio.h>
+#include <string.h>
+
+#include "core/molecule/molecule.h"
+#include "core/molecule/symmetry.h"
+#include "core/notation/smiles.h"
+
+static void
+print_numbers (const uint32_t *number, uint32_t n)
+{
+  for (uint32_t v = 0; v < n; v++)
+    printf (v ? ",%u" : "%u", number[v]);
+  putchar ('\t');
+}
+
+static void
+print_atoms (const EnlMolecule *mol)
+{
+  uint32_t n = enl_molecule_atoms (mol);
+  g_autofree char *formula = enl_molecule_formula (mol);
+  g_autofree uint32_t *number = g_new (uint32_t, n + 1);
+
+  for (uint32_t v = 0; v < n; v++)
+    number[v] = enl_molecule_atom (mol, v)->input;
+  print_numbers (number, n);
+  printf ("%s\t%u\t", formula, enl_molecule_heavy_atoms (mol));
+  for (uint32_t v = 0; v < n; v++)
+    number[v] = enl_molecule_total_hydrogens (mol, v);
+  print_numbers (number, n);
+  printf ("%u\t", enl_molecule_rings (mol));
+  for (uint32_t v = 0; v < n; v++)
+    number[v] = enl_molecule_atom (mol, v)->aromatic;
+  print_numbers (number, n);
+  for (int stereo = 0; stereo < 2; stereo++) {
+    enl_symmetry_classes (mol, stereo, number);
+    print_numbers (number, n);
+  }
+}
+
+static void
+print_stereo (const EnlMolecule *mol)
+{
+  uint32_t centres = 0, double_bonds = 0;
+
+  for (uint32_t v = 0; v < enl_molecule_atoms (mol); v++)
+    centres += enl_molecule_atom (mol, v)->winding != ENL_WINDING_NONE;
+  for (uint32_t b = 0; b < enl_molecule_bonds (mol); b++)
+    double_bonds += enl_molecule_bond (mol, b)->side != ENL_SIDE_NONE;
+  printf ("%u\t%u\t", centres, double_bonds);
+}
+
+static void
+print_smiles (const EnlMolecule *mol)
+{
+  static const EnlSmilesFlags kind[] = { ENL_SMILES_DEFAULT, ENL_SMILES_NO_STEREO,
+                                         ENL_SMILES_KEKULE, ENL_SMILES_INPUT_ORDER };
+
+  for (size_t k = 0; k < ENL_COUNT (kind); k++) {
+    g_autofree char *text = enl_smiles_write (mol, kind[k], NULL);
+    printf (k ? "\t%s" : "%s", text);
+  }
+}
+
+static void
+dump_line (const char *line, size_t size)
+{
+  EnlError err;
+  EnlMolecule *mol = NULL;
+
+  if (enl_smiles_parse (line, size, &mol, &err) != ENL_OK) {
+    g_autofree char *message = enl_error_message (&err);
+    printf ("error\t%s\n", message);
+    return;
+  }
+  print_atoms (mol);
+  print_stereo (mol);
+  print_smiles (mol);
+  putchar ('\n');
+  enl_molecule_free (mol);
+}
+
+int
+main (void)
+{
+  char *line = NULL;
+  size_t room = 0;
+  ssize_t size;
+
+  while ((size = getline (&line, &room, stdin)) >= 0) {
+    if (size > 0 && line[size - 1] == '\n')
+      size--;
+    dump_line (line, (size_t) size);
+  }
+  free (line);
+  return 0;
+}
