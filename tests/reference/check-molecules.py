@@ -16,12 +16,13 @@ import subprocess
 import sys
 
 from rdkit import Chem, RDLogger
-from rdkit.Chem import rdMolDescriptors
+from rdkit.Chem import rdCIPLabeler, rdMolDescriptors
 
 RDLogger.DisableLog("rdApp.*")
 
 COLUMNS = ["input", "formula", "heavy", "hydrogens", "rings", "aromatic", "classes",
-           "stereo_classes", "centres", "double_bonds", "smiles", "flat", "kekule", "as_input"]
+           "stereo_classes", "centres", "double_bonds", "smiles", "flat", "kekule", "as_input",
+           "labels"]
 TOKEN = re.compile(r"[A-Za-z\[\]()=#@+\-/\\%.:0-9*~$]+$")
 PATTERN = re.compile(r"\[#\d|~|^[^BCNOPSFIcnops]*$")  # query patterns, not SMILES
 TEXT_FILES = {"CMakeLists.txt", "README.txt", "readme.txt", "requirements.txt"}
@@ -202,6 +203,35 @@ def compare_classes(tally, name, smiles, row, mol, stereo):
     tally.check(name, smiles, same, f"{sorted(map(sorted, ours ^ theirs))}")
 
 
+def labels(mol):
+    """CIP labels by RDKit's implementation of the full sequence rules (rdCIPLabeler)."""
+    rdCIPLabeler.AssignCIPLabels(mol)
+    found = {}
+    for atom in mol.GetAtoms():
+        if atom.HasProp("_CIPCode") and atom.GetChiralTag() != Chem.ChiralType.CHI_UNSPECIFIED:
+            found[f"{atom.GetIntProp('at')}"] = atom.GetProp("_CIPCode")
+    for bond in mol.GetBonds():
+        if bond.HasProp("_CIPCode") and bond.GetStereo() > Chem.BondStereo.STEREOANY:
+            ends = sorted([bond.GetBeginAtom().GetIntProp("at"), bond.GetEndAtom().GetIntProp("at")])
+            found[f"{ends[0]}={ends[1]}"] = bond.GetProp("_CIPCode")
+    return found
+
+
+def compare_labels(tally, smiles, row, mol):
+    """Every label we give is RDKit's; labels that only RDKit gives are counted, since the core
+    leaves out what rule 4b and dependent rings decide."""
+    ours = {label[:-1]: label[-1] for label in row["labels"].split(",") if label}
+    if not ours and not count_stereo(mol) > (0, 0):
+        return
+    theirs = labels(mol)
+    wrong = {k: (v, theirs.get(k)) for k, v in ours.items() if theirs.get(k) != v}
+    tally.check("CIP labels", smiles, not wrong, str(wrong))
+    tally.remarks["CIP labels given by both"] += len(ours) - len(wrong)
+    tally.remarks["CIP labels given by RDKit alone"] += len(theirs.keys() - ours.keys())
+    if theirs.keys() - ours.keys() and "--missing" in sys.argv:
+        print("missing", smiles, {k: theirs[k] for k in theirs.keys() - ours.keys()})
+
+
 def compare_rings(tally, smiles, row, mol):
     """The size of a smallest set of smallest rings is bonds - atoms + fragments; RDKit's own set
     misses it for some bridged rings, which are counted apart."""
@@ -238,6 +268,7 @@ def compare(tally, smiles, row):
                 f"{row['centres']} against {centres}")
     tally.check("stereo double bonds", smiles, int(row["double_bonds"]) == bonds,
                 f"{row['double_bonds']} against {bonds}")
+    compare_labels(tally, smiles, row, mol)
     whole = canonical(mol)
     for name in ("smiles", "kekule", "as_input"):
         tally.check(f"RDKit reads ours ({name})", smiles, canonical(read(row[name])) == whole,

@@ -8,6 +8,7 @@
 #include <stdio.h>
 #include <string.h>
 
+#include "core/molecule/cip.h"
 #include "core/molecule/molecule.h"
 #include "core/molecule/symmetry.h"
 #include "core/notation/smiles.h"
@@ -59,13 +60,39 @@ print_stereo (const EnlMolecule *mol)
 static void
 print_smiles (const EnlMolecule *mol)
 {
-  static const EnlSmilesFlags kind[] = { ENL_SMILES_DEFAULT, ENL_SMILES_NO_STEREO,
-                                         ENL_SMILES_KEKULE, ENL_SMILES_INPUT_ORDER };
+  static const EnlSmilesFlags kind[] = {ENL_SMILES_DEFAULT, ENL_SMILES_NO_STEREO, ENL_SMILES_KEKULE,
+                                        ENL_SMILES_INPUT_ORDER};
 
   for (size_t k = 0; k < ENL_COUNT (kind); k++) {
     g_autofree char *text = enl_smiles_write (mol, kind[k], NULL);
     printf (k ? "\t%s" : "%s", text);
   }
+}
+
+/* "3R,5S,2=3E": labels with the input positions of their atoms. */
+static void
+print_labels (const EnlMolecule *mol)
+{
+  uint32_t n = enl_molecule_atoms (mol), bonds = enl_molecule_bonds (mol);
+  g_autofree EnlCip *atom_label = g_new (EnlCip, n + 1);
+  g_autofree EnlCip *bond_label = g_new (EnlCip, bonds + 1);
+  const char *comma = "";
+
+  enl_cip_label (mol, atom_label, bond_label);
+  putchar ('\t');
+  for (uint32_t v = 0; v < n; v++)
+    if (atom_label[v] != ENL_CIP_NONE) {
+      printf ("%s%u%s", comma, enl_molecule_atom (mol, v)->input, enl_cip_text (atom_label[v]));
+      comma = ",";
+    }
+  for (uint32_t b = 0; b < bonds; b++)
+    if (bond_label[b] != ENL_CIP_NONE) {
+      const EnlBond *bond = enl_molecule_bond (mol, b);
+      uint32_t from = enl_molecule_atom (mol, bond->from)->input;
+      uint32_t to = enl_molecule_atom (mol, bond->to)->input;
+      printf ("%s%u=%u%s", comma, MIN (from, to), MAX (from, to), enl_cip_text (bond_label[b]));
+      comma = ",";
+    }
 }
 
 static void
@@ -82,6 +109,7 @@ dump_line (const char *line, size_t size)
   print_atoms (mol);
   print_stereo (mol);
   print_smiles (mol);
+  print_labels (mol);
   putchar ('\n');
   enl_molecule_free (mol);
 }
@@ -96,7 +124,7 @@ main (void)
   while ((size = getline (&line, &room, stdin)) >= 0) {
     if (size > 0 && line[size - 1] == '\n')
       size--;
-    dump_line (line, (size_t) size);
+    dump_line (line, (size_t)size);
   }
   free (line);
   return 0;

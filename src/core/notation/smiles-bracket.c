@@ -144,7 +144,8 @@ read_hydrogens (EnlSmilesReader *r, EnlAtom *atom)
                                              "give at most 9 hydrogens with one digit",
                                              "too many hydrogens on one atom"));
   atom->hydrogens = (uint8_t)(count < 0 ? 1 : count);
-  if (atom->element == 1 && atom->hydrogens)
+  /* OpenSMILES has no hydrogen count on hydrogen, but [HH] for H2 is common in public files. */
+  if (atom->element == 1 && atom->hydrogens > 1)
     return enl_smiles_locate (r, start, r->at - start,
                               enl_error_set (r->err, ENL_ERROR_SYNTAX, "write H2 as [H][H]",
                                              "a hydrogen atom cannot carry hydrogens"));
