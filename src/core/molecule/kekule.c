@@ -15,6 +15,7 @@ typedef struct {
   const EnlMolecule *mol;
   const bool *delocalised;
   uint8_t *need;
+  bool spare;       /* optional atoms may take part */
   uint32_t *mate;   /* partner of the double bond, or ENL_NONE */
   uint32_t *parent; /* of an inner atom: the outer atom before it */
   uint32_t *base;   /* stem of the blossom that holds the atom */
@@ -27,8 +28,10 @@ is_usable (const Matching *m, uint32_t link)
 {
   uint32_t bond = m->mol->via[link];
 
+  Need need = (Need)m->need[m->mol->neighbour[link]];
+
   return m->delocalised[bond] && m->mol->bond[bond].ring &&
-         m->need[m->mol->neighbour[link]] != NEED_NONE;
+         (need == NEED_DOUBLE || (need == NEED_OPTIONAL && m->spare));
 }
 
 /* A double bond is needed when the bonds counted once fall short of a usual valence. */
@@ -214,21 +217,34 @@ match_by_search (Matching *m, uint32_t root)
   return false;
 }
 
+/* Pairs what still needs a partner; returns the first atom that finds none, or ENL_NONE. */
+static uint32_t
+match_rest (Matching *m)
+{
+  uint32_t left_over = ENL_NONE;
+
+  for (uint32_t a = 0; a < m->mol->n_atoms; a++)
+    if (m->need[a] == NEED_DOUBLE && m->mate[a] == ENL_NONE && !match_by_search (m, a) &&
+        left_over == ENL_NONE)
+      left_over = a;
+  return left_over;
+}
+
+/* Optional atoms are called in only where it does not work without them. */
 static bool
 match_all (Matching *m, uint32_t *culprit)
 {
-  uint32_t n = m->mol->n_atoms;
-
-  for (uint32_t a = 0; a < n; a++)
+  for (uint32_t a = 0; a < m->mol->n_atoms; a++)
     if (m->need[a] == NEED_DOUBLE && m->mate[a] == ENL_NONE)
       match_greedily (m, a);
-  for (uint32_t a = 0; a < n; a++)
-    if (m->need[a] == NEED_DOUBLE && m->mate[a] == ENL_NONE && !match_by_search (m, a)) {
-      if (culprit)
-        *culprit = a;
-      return false;
-    }
-  return true;
+  uint32_t left_over = match_rest (m);
+  if (left_over != ENL_NONE) {
+    m->spare = true;
+    left_over = match_rest (m);
+  }
+  if (culprit)
+    *culprit = left_over;
+  return left_over == ENL_NONE;
 }
 
 static void

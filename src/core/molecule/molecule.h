@@ -17,6 +17,7 @@
 #define ENL_NONE      UINT32_MAX /* no atom, no bond */
 #define ENL_MAX_HEAVY 400        /* comfortable size; analysis refuses more, readers do not */
 #define ENL_MAX_ATOMS 4000       /* readers refuse more */
+#define ENL_MAX_RINGS 600        /* readers refuse more; keeps finish below about a second */
 
 /* Turn of the neighbours of a tetrahedral atom. Order them by ascending atom index, with an
  * unwritten hydrogen (or lone pair) FIRST; looking from the first one towards the centre the other
@@ -72,6 +73,10 @@ uint32_t enl_molecule_add_atom (EnlMolecule *mol, const EnlAtom *atom);
 
 /* Returns the index of the bond, or ENL_NONE when the atoms are equal or already bonded. */
 uint32_t enl_molecule_add_bond (EnlMolecule *mol, uint32_t from, uint32_t to, uint8_t order);
+
+/* ENL_OK, or ENL_ERROR_LIMIT (without position) for more than ENL_MAX_ATOMS atoms or ENL_MAX_RINGS
+ * rings. Readers call it before finish. */
+EnlStatus enl_molecule_check_size (const EnlMolecule *mol, EnlError *err);
 
 /* Builds adjacency, rings and aromatic flags. Does not change hydrogens, and does not judge
  * valence (enl_valence_check does). Cannot fail. */

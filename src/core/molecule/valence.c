@@ -159,26 +159,23 @@ describe_charge (int charge, char *buffer, size_t size)
     buffer[0] = '\0';
 }
 
-static EnlStatus
-report_too_many (const EnlAtom *atom, uint32_t bonds, EnlError *err)
+/* "3", "3 or 5", "2, 4 or 6" */
+static void
+list_valences (const uint8_t *valence, size_t count, char *buffer, size_t size)
 {
-  size_t count;
-  const uint8_t *valence = enl_valence_usual (atom->element, atom->charge, &count);
-  g_autofree char *advice = NULL;
-  char charge[32];
+  size_t used = 0;
 
-  describe_charge (atom->charge, charge, sizeof charge);
-  if (count)
-    advice = g_strdup_printf ("with this charge it takes %u; remove a bond or hydrogen%s",
-                              valence[count - 1], find_charge_that_fits (atom, bonds));
-  if (count && atom->charge == 0) {
-    g_free (advice);
-    advice = g_strdup_printf ("neutral %s takes %u; remove a bond or hydrogen%s",
-                              enl_element_name (atom->element), valence[0],
-                              find_charge_that_fits (atom, bonds));
-  }
-  enl_error_set (err, ENL_ERROR_CHEMISTRY, advice ? advice : "remove bonds", "%s with %u bonds%s",
-                 enl_element_name (atom->element), bonds, charge);
+  for (size_t i = 0; i < count && used < size; i++)
+    used += (size_t)g_snprintf (buffer + used, size - used, "%s%u",
+                                i == 0           ? ""
+                                : i + 1 == count ? " or "
+                                                 : ", ",
+                                valence[i]);
+}
+
+static EnlStatus
+report (const EnlAtom *atom, EnlError *err)
+{
   if (err) {
     err->offset = atom->offset;
     err->length = MAX (atom->length, 1);
@@ -186,20 +183,70 @@ report_too_many (const EnlAtom *atom, uint32_t bonds, EnlError *err)
   return ENL_ERROR_CHEMISTRY;
 }
 
+static EnlStatus
+report_too_many (const EnlAtom *atom, uint32_t bonds, EnlError *err)
+{
+  size_t count;
+  const uint8_t *valence = enl_valence_usual (atom->element, atom->charge, &count);
+  char charge[32], list[40] = "", advice[160] = "remove bonds";
+
+  describe_charge (atom->charge, charge, sizeof charge);
+  list_valences (valence, count, list, sizeof list);
+  if (count)
+    g_snprintf (advice, sizeof advice, "%s %s takes %s; remove a bond or hydrogen%s",
+                atom->charge ? "so charged," : "neutral", enl_element_name (atom->element), list,
+                find_charge_that_fits (atom, bonds));
+  enl_error_set (err, ENL_ERROR_CHEMISTRY, advice, "%s with %u bond%s%s",
+                 enl_element_name (atom->element), bonds, bonds == 1 ? "" : "s", charge);
+  return report (atom, err);
+}
+
+static EnlStatus
+report_halogen (const EnlAtom *atom, EnlError *err)
+{
+  const char *name = enl_element_name (atom->element);
+  char advice[120];
+
+  g_snprintf (advice, sizeof advice, "%s ends a chain; check the parentheses around it", name);
+  enl_error_set (err, ENL_ERROR_CHEMISTRY, advice, "%s between carbon atoms", name);
+  return report (atom, err);
+}
+
+static EnlStatus
+report_crowd (const EnlAtom *atom, uint32_t neighbours, EnlError *err)
+{
+  enl_error_set (err, ENL_ERROR_CHEMISTRY, "remove bonds; no atom holds so many",
+                 "%s with %u neighbours", enl_element_name (atom->element), neighbours);
+  return report (atom, err);
+}
+
+static EnlStatus
+check_atom (const EnlMolecule *mol, uint32_t a, EnlError *err)
+{
+  const EnlAtom *atom = &mol->atom[a];
+  uint32_t written = enl_molecule_order_sum (mol, a), bonds = written + atom->hydrogens;
+
+  if (enl_molecule_degree (mol, a) > MAX_NEIGHBOURS)
+    return report_crowd (atom, enl_molecule_degree (mol, a), err);
+  if (is_halogen_in_a_chain (mol, a))
+    return report_halogen (atom, err);
+  if (is_allowed (atom, bonds))
+    return ENL_OK;
+  /* Tell the number that the person can count in the text. */
+  return report_too_many (atom, atom->exact ? bonds : written, err);
+}
+
 EnlStatus
 enl_valence_check (const EnlMolecule *mol, uint32_t *atom, EnlError *err)
 {
   g_assert (mol->linked);
   for (uint32_t a = 0; a < mol->n_atoms; a++) {
-    uint32_t written = enl_molecule_order_sum (mol, a);
-    uint32_t bonds = written + mol->atom[a].hydrogens;
-    if (is_allowed (&mol->atom[a], bonds) && !is_halogen_in_a_chain (mol, a) &&
-        enl_molecule_degree (mol, a) <= MAX_NEIGHBOURS)
+    EnlStatus status = check_atom (mol, a, err);
+    if (status == ENL_OK)
       continue;
     if (atom)
       *atom = a;
-    /* Tell the number that the person can count in the text. */
-    return report_too_many (&mol->atom[a], mol->atom[a].exact ? bonds : written, err);
+    return status;
   }
   return ENL_OK;
 }

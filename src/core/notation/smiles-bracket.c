@@ -207,7 +207,7 @@ report_unclosed (EnlSmilesReader *r, size_t start)
 
 /* The bracket has something behind its last part: a part out of order, or a stray character. */
 static EnlStatus
-report_order (EnlSmilesReader *r)
+report_order (EnlSmilesReader *r, size_t symbol)
 {
   static const struct {
     char start;
@@ -224,13 +224,20 @@ report_order (EnlSmilesReader *r)
           enl_error_set (r->err, ENL_ERROR_SYNTAX,
                          "use the order isotope, element, chirality, hydrogens, charge, :map",
                          "%s in the brackets", part[i].what));
-  return enl_smiles_report_character (r);
+  if (g_ascii_isalpha (peek (r)) && g_ascii_isalpha (r->text[r->at - 1]))
+    return enl_smiles_report_element (r, symbol);
+  if ((unsigned char)peek (r) >= 0x80)
+    return enl_smiles_report_character (r);
+  return enl_smiles_locate (r, r->at, 1,
+                            enl_error_set (r->err, ENL_ERROR_SYNTAX,
+                                           "close the brackets before it, or remove it",
+                                           "'%c' has no meaning in the brackets", peek (r)));
 }
 
 EnlStatus
 enl_smiles_read_bracket (EnlSmilesReader *r, EnlAtom *atom, EnlSmilesAtom *more)
 {
-  size_t start = r->at++;
+  size_t start = r->at++, symbol;
   EnlStatus status = ENL_OK;
 
   if (peek (r) == ']')
@@ -243,6 +250,7 @@ enl_smiles_read_bracket (EnlSmilesReader *r, EnlAtom *atom, EnlSmilesAtom *more)
     return status;
   if (peek (r) < 0)
     return report_unclosed (r, start);
+  symbol = r->at;
   if ((status = read_symbol (r, atom, more)) != ENL_OK ||
       (status = read_chirality (r, more)) != ENL_OK ||
       (status = read_hydrogens (r, atom)) != ENL_OK || (status = read_charge (r, atom)) != ENL_OK ||
@@ -251,6 +259,6 @@ enl_smiles_read_bracket (EnlSmilesReader *r, EnlAtom *atom, EnlSmilesAtom *more)
   if (peek (r) < 0 || peek (r) == '[' || peek (r) == '(' || peek (r) == ')')
     return report_unclosed (r, start);
   if (!take (r, ']'))
-    return report_order (r);
+    return report_order (r, symbol);
   return ENL_OK;
 }

@@ -274,6 +274,8 @@ enl_smiles_build (EnlSmilesReader *r)
 {
   EnlStatus status;
 
+  if ((status = enl_molecule_check_size (r->mol, r->err)) != ENL_OK)
+    return enl_smiles_locate (r, 0, r->size, status);
   enl_molecule_link (r->mol);
   set_windings (r);
   if ((status = set_sides (r)) != ENL_OK)

@@ -77,22 +77,44 @@ static const struct {
     {"i", "'i' is no atom", "iodine is written I, silicon [Si]"},
 };
 
+/* Bytes of an element symbol at `start` that stands without its brackets, 0 when there is none. */
+static size_t
+measure_bare_element (const char *start, size_t left)
+{
+  if (!g_ascii_isupper (*start) || *start == 'H')
+    return 0;
+  for (size_t length = 2; length; length--)
+    if (length <= left && (length == 1 || g_ascii_islower (start[1])) &&
+        enl_element_find (start, length) >= 0)
+      return length;
+  return 0;
+}
+
+static EnlStatus
+report_bare_element (EnlSmilesReader *r, size_t offset, size_t length)
+{
+  const char *start = r->text + offset;
+  char advice[80];
+
+  g_snprintf (advice, sizeof advice, "write [%.*s], with charge and hydrogens inside", (int)length,
+              start);
+  return enl_smiles_locate (r, offset, length,
+                            enl_error_set (r->err, ENL_ERROR_SYNTAX, advice,
+                                           "element '%.*s' needs brackets", (int)length, start));
+}
+
 static EnlStatus
 report_letter (EnlSmilesReader *r)
 {
   const char *start = r->text + r->at;
-  bool two = r->size - r->at > 1 && g_ascii_islower (start[1]);
-  char advice[80];
+  size_t length = measure_bare_element (start, r->size - r->at);
 
-  for (size_t length = two ? 2 : 1; length; length--)
-    if (g_ascii_isupper (*start) && *start != 'H' && enl_element_find (start, length) >= 0) {
-      g_snprintf (advice, sizeof advice, "write [%.*s], with charge and hydrogens inside",
-                  (int)length, start);
-      return enl_smiles_locate (r, r->at, length,
-                                enl_error_set (r->err, ENL_ERROR_SYNTAX, advice,
-                                               "element '%.*s' needs brackets", (int)length,
-                                               start));
-    }
+  if (length)
+    return report_bare_element (r, r->at, length);
+  /* "Na": N was read as nitrogen, and now there is an 'a'. */
+  if (g_ascii_islower (*start) && r->at > 0 && g_ascii_isupper (start[-1]) &&
+      enl_element_find (start - 1, 2) >= 0)
+    return report_bare_element (r, r->at - 1, 2);
   for (size_t i = 0; i < ENL_COUNT (habit); i++)
     if (habit[i].written[0] == *start)
       return enl_smiles_locate (
@@ -143,11 +165,26 @@ enl_smiles_report_character (EnlSmilesReader *r)
                                            "'%c' has no meaning here", c));
 }
 
+/* The right spelling of two letters in wrong case, for the advice. */
+static void
+advise_on_element (const char *start, size_t length, char *advice, size_t size)
+{
+  char fixed[3] = "";
+
+  for (size_t i = 0; i < length && i < 2; i++)
+    fixed[i] = (char)(i ? g_ascii_tolower (start[i]) : g_ascii_toupper (start[i]));
+  if (length <= 2 && enl_element_find (fixed, strlen (fixed)) >= 0)
+    g_snprintf (advice, size, "write %s, with capital and small letter", fixed);
+  else
+    g_snprintf (advice, size, "use the symbol of an element, or * for any atom");
+}
+
 EnlStatus
 enl_smiles_report_element (EnlSmilesReader *r, size_t offset)
 {
   const char *start = r->text + offset;
   size_t length = 0, left = r->size - offset;
+  char advice[80];
 
   if (left && (unsigned char)*start >= 0x80)
     return report_wide_character (r);
@@ -158,10 +195,10 @@ enl_smiles_report_element (EnlSmilesReader *r, size_t offset)
                               enl_error_set (r->err, ENL_ERROR_SYNTAX,
                                              "write an element symbol first, such as [NH4+]",
                                              "no element symbol in the brackets"));
-  while (length > 1 && !g_ascii_islower (start[length - 1]))
+  if (length == 3 && start[2] == 'H')
     length--;
+  advise_on_element (start, length, advice, sizeof advice);
   return enl_smiles_locate (r, offset, length,
-                            enl_error_set (r->err, ENL_ERROR_UNKNOWN,
-                                           "check capital and small letters (Cl, not CL or cl)",
+                            enl_error_set (r->err, ENL_ERROR_UNKNOWN, advice,
                                            "unknown element '%.*s'", (int)length, start));
 }

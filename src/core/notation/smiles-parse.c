@@ -15,14 +15,15 @@ report_dangling_bond (EnlSmilesReader *r)
                                            "bond '%c' leads to no atom", r->symbol));
 }
 
+/* `fluid`: both ends are aromatic, so that an unwritten bond is, too. */
 static void
-set_bond (char symbol, bool aromatic_ends, EnlBond *bond, EnlSmilesBond *more)
+set_bond (char symbol, bool fluid, EnlBond *bond, EnlSmilesBond *more)
 {
   static const char orders[] = "-=#$"; /* 1 to 4 */
   const char *place = symbol ? strchr (orders, symbol) : NULL;
 
   bond->order = (uint8_t)(place ? place - orders + 1 : 1);
-  more->soft = symbol == ':' || (!symbol && aromatic_ends);
+  more->soft = symbol == ':' || (!symbol && fluid);
   more->direction = (int8_t)(symbol == '/' ? 1 : symbol == '\\' ? -1 : 0);
 }
 
@@ -34,10 +35,14 @@ report_bond_limit (EnlSmilesReader *r)
                                            "more than %d bonds", ENL_SMILES_MAX_BONDS));
 }
 
+/* '*' goes with the atoms beside it. */
 static bool
-is_aromatic (const EnlSmilesReader *r, uint32_t atom)
+are_aromatic (const EnlSmilesReader *r, uint32_t a, uint32_t b)
 {
-  return g_array_index (r->atom, EnlSmilesAtom, atom).aromatic;
+  const EnlSmilesAtom *atom = (const EnlSmilesAtom *)(const void *)r->atom->data;
+
+  return (atom[a].aromatic || enl_molecule_atom (r->mol, a)->element == 0) &&
+         (atom[b].aromatic || enl_molecule_atom (r->mol, b)->element == 0);
 }
 
 /* Adds the pending bond from the previous atom to the new one. */
@@ -47,8 +52,8 @@ add_chain_bond (EnlSmilesReader *r, uint32_t atom, size_t offset)
   EnlSmilesBond more = {.key_from = (uint32_t)offset + 2, .offset = (uint32_t)r->symbol_at};
   uint32_t index = enl_molecule_add_bond (r->mol, r->previous, atom, 1);
 
-  set_bond (r->symbol, is_aromatic (r, r->previous) && is_aromatic (r, atom),
-            enl_molecule_edit_bond (r->mol, index), &more);
+  set_bond (r->symbol, are_aromatic (r, r->previous, atom), enl_molecule_edit_bond (r->mol, index),
+            &more);
   g_array_append_val (r->bond, more);
 }
 
@@ -329,7 +334,7 @@ close_ring (EnlSmilesReader *r, EnlSmilesRing *ring, int number, size_t length)
                         "bonds two atoms that are bonded already");
   EnlSmilesBond more = {
       .key_from = ring->offset + 2, .key_to = (uint32_t)r->at + 2, .offset = (uint32_t)symbol_at};
-  set_bond (symbol, is_aromatic (r, ring->atom) && is_aromatic (r, r->previous),
+  set_bond (symbol, are_aromatic (r, ring->atom, r->previous),
             enl_molecule_edit_bond (r->mol, index), &more);
   g_array_append_val (r->bond, more);
   ring->open = false;

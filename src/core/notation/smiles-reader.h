@@ -5,7 +5,7 @@
 #include "core/molecule/molecule.h"
 
 #define ENL_SMILES_MAX_SIZE  1000000 /* bytes; longer text is refused at once */
-#define ENL_SMILES_MAX_BONDS (2 * ENL_MAX_ATOMS)
+#define ENL_SMILES_MAX_BONDS (ENL_MAX_ATOMS + ENL_MAX_RINGS)
 
 typedef enum { TURN_NONE, TURN_ANTICLOCKWISE, TURN_CLOCKWISE } EnlSmilesTurn;
 
