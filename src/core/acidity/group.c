@@ -130,6 +130,8 @@ acyl_chalcogen_group (const EnlMolecule *mol, uint32_t carbonyl, uint32_t x)
     return enl_molecule_total_hydrogens (mol, x) > 0 ? ENL_GROUP_ACID : ENL_GROUP_ESTER;
   if (is_acyl (mol, next))
     return ENL_GROUP_ANHYDRIDE;
+  if (element_of (mol, next) == O && enl_molecule_total_hydrogens (mol, next) > 0)
+    return ENL_GROUP_ACID; /* peracid */
   return element_of (mol, x) == O ? ENL_GROUP_ESTER : ENL_GROUP_THIOESTER;
 }
 
@@ -211,28 +213,47 @@ imine_group (const EnlMolecule *mol, uint32_t nitrogen)
 }
 
 static EnlGroup
+double_bond_group (const EnlMolecule *mol, uint32_t atom, uint32_t partner)
+{
+  const uint8_t e = element_of (mol, partner);
+
+  if (e == O)
+    return carbonyl_group (mol, atom, partner);
+  if (is_chalcogen (e))
+    return thiocarbonyl_group (mol, atom);
+  if (e == N)
+    return imine_group (mol, partner);
+  return e == C ? ENL_GROUP_VINYL : ENL_GROUP_OTHER;
+}
+
+/* Of two double bonds (ketene, isocyanate) the one to the heteroatom counts. An aromatic carbon is
+ * something else than aryl only through C=O, C=S and their like outside the ring. */
+static EnlGroup
 carbon_group (const EnlMolecule *mol, uint32_t atom)
 {
-  static const uint8_t thio[] = {S, SE, TE};
-  uint32_t other = enl_atom_partner (mol, atom, 2, O);
+  EnlGroup group = enl_molecule_atom (mol, atom)->aromatic ? ENL_GROUP_ARYL : ENL_GROUP_ALKYL;
+  const uint32_t degree = enl_molecule_degree (mol, atom);
 
-  if (other != ENL_NONE)
-    return carbonyl_group (mol, atom, other);
-  for (size_t i = 0; i < ENL_COUNT (thio); i++)
-    if (enl_atom_partner (mol, atom, 2, thio[i]) != ENL_NONE)
-      return thiocarbonyl_group (mol, atom);
-  if (enl_molecule_atom (mol, atom)->aromatic)
-    return ENL_GROUP_ARYL;
-  if (enl_atom_partner (mol, atom, 3, N) != ENL_NONE)
-    return ENL_GROUP_NITRILE;
-  if (enl_atom_partner (mol, atom, 3, C) != ENL_NONE)
-    return ENL_GROUP_ALKYNYL;
-  other = enl_atom_partner (mol, atom, 2, N);
-  if (other != ENL_NONE)
-    return imine_group (mol, other);
-  if (enl_atom_partner (mol, atom, 2, C) != ENL_NONE)
-    return ENL_GROUP_VINYL;
-  return enl_atom_is_saturated (mol, atom) ? ENL_GROUP_ALKYL : ENL_GROUP_OTHER;
+  for (uint32_t k = 0; k < degree; k++) {
+    const EnlBond *bond = enl_molecule_bond (mol, enl_molecule_bond_at (mol, atom, k));
+    const uint32_t other = enl_molecule_neighbour (mol, atom, k);
+
+    if (bond->aromatic || bond->order < 2)
+      continue;
+    if (element_of (mol, other) == O && bond->order == 2)
+      return carbonyl_group (mol, atom, other);
+    if (group == ENL_GROUP_ARYL && !is_chalcogen (element_of (mol, other)))
+      continue;
+    if (bond->order == 2)
+      group = group == ENL_GROUP_ALKYL || group == ENL_GROUP_ARYL || group == ENL_GROUP_VINYL
+                  ? double_bond_group (mol, atom, other)
+                  : group;
+    else
+      group = element_of (mol, other) == N   ? ENL_GROUP_NITRILE
+              : element_of (mol, other) == C ? ENL_GROUP_ALKYNYL
+                                             : ENL_GROUP_OTHER;
+  }
+  return group;
 }
 
 /* C-N=N=N has its charges on the two outer nitrogens. */

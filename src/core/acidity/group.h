@@ -23,7 +23,7 @@ typedef enum {
   ENL_GROUP_THIOESTER,   /* C(=O)S, C(=O)Se */
   ENL_GROUP_AMIDE,       /* lactams by ENL_TRAIT_RING; hydrazides and hydroxamic acids too */
   ENL_GROUP_IMIDE,       /* C(=O)N-C=O and C(=O)N-C=S */
-  ENL_GROUP_ACID,        /* C(=O)OH, C(=O)SH */
+  ENL_GROUP_ACID,        /* C(=O)OH, C(=O)SH, C(=O)OOH */
   ENL_GROUP_CARBOXYLATE, /* C(=O)O-, C(=O)S- */
   ENL_GROUP_ANHYDRIDE,   /* acyl O on C=O, C=S, S=O or P=O */
   ENL_GROUP_ACYL_HALIDE,

@@ -3,7 +3,7 @@
 
 #include "core/acidity/site-private.h"
 
-enum { C = 6, N = 7, O = 8, S = 16 };
+enum { C = 6, N = 7, O = 8, S = 16, SE = 34 };
 
 /* Longest position before the suffix that keeps two of them apart. */
 enum { MAX_WORDS = 48 };
@@ -13,6 +13,9 @@ acceptor_label (const EnlMolecule *mol, uint32_t atom, EnlGroup group)
 {
   const bool ring = (enl_group_traits (mol, atom) & ENL_TRAIT_RING) != 0;
 
+  if ((group == ENL_GROUP_THIOCARBONYL || group == ENL_GROUP_THIOAMIDE) &&
+      enl_atom_partner (mol, atom, 2, SE) != ENL_NONE)
+    return "C=Se";
   if (group == ENL_GROUP_ESTER && ring)
     return "lactone C=O";
   if (group == ENL_GROUP_THIOESTER && ring)
@@ -51,16 +54,25 @@ append_joint (GString *words, uint32_t done, uint32_t parts)
     g_string_append (words, done + 1 == parts ? " and " : ", ");
 }
 
+/* A C=O whose label ends so, and which may be counted with others as "both C=O". */
+static bool
+is_plain_carbonyl (EnlGroup group)
+{
+  return enl_group_is_carbonyl (group) && group != ENL_GROUP_CARBOXYLATE;
+}
+
 /* "the ketone C=O and the nitrile": carbonyls count together when there are several. */
 static void
 append_acceptors (GString *words, const EnlMolecule *mol, const EnlCarbonFacts *facts,
                   uint32_t extra_parts)
 {
   const char *label[ENL_MAX_ALPHA];
-  uint32_t count[ENL_MAX_ALPHA] = {0}, n = 0;
+  uint32_t count[ENL_MAX_ALPHA] = {0}, n = 0, plain = 0;
 
+  for (uint32_t i = 0; i < facts->n_acceptors; i++)
+    plain += is_plain_carbonyl (facts->group[i]);
   for (uint32_t i = 0; i < facts->n_acceptors; i++) {
-    const bool merge = facts->n_carbonyls > 1 && enl_group_is_carbonyl (facts->group[i]);
+    const bool merge = plain > 1 && is_plain_carbonyl (facts->group[i]);
     const char *text = merge ? "C=O" : acceptor_label (mol, facts->acceptor[i], facts->group[i]);
     uint32_t j = 0;
 
@@ -78,22 +90,25 @@ append_acceptors (GString *words, const EnlMolecule *mol, const EnlCarbonFacts *
 
 /* ---- ketones with a longer story ---- */
 
-/* Saturated CH that loses its hydrogen between two carbonyls. */
 static bool
-is_middle_of_dicarbonyl (const EnlMolecule *mol, uint32_t middle)
+carries_oxide (const EnlMolecule *mol, uint32_t atom)
 {
-  EnlCarbonFacts facts;
-
-  return enl_molecule_atom (mol, middle)->element == C &&
-         enl_site_carbon_facts (mol, middle, &facts) && facts.n_carbonyls >= 2;
+  const uint32_t oxygen = enl_atom_partner (mol, atom, 1, O);
+  return oxygen != ENL_NONE && enl_molecule_atom (mol, oxygen)->charge < 0;
 }
 
+/* O=C-C=C-O- (an end of a 1,3-dicarbonyl anion) or O=C-C- (an enolate drawn with its charge on
+ * C). */
 static bool
-is_gamma_of_dicarbonyl (const EnlMolecule *mol, uint32_t atom, uint32_t ketone)
+is_beside_enolate (const EnlMolecule *mol, uint32_t ketone)
 {
   for (uint32_t k = 0; k < enl_molecule_degree (mol, ketone); k++) {
     uint32_t other = enl_molecule_neighbour (mol, ketone, k);
-    if (other != atom && is_middle_of_dicarbonyl (mol, other))
+    uint32_t end = enl_atom_partner (mol, other, 2, C);
+
+    if (enl_molecule_atom (mol, other)->element == C && enl_molecule_atom (mol, other)->charge < 0)
+      return true;
+    if (end != ENL_NONE && carries_oxide (mol, end))
       return true;
   }
   return false;
@@ -105,8 +120,10 @@ special_ketone (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *fac
 {
   if (facts->n_acceptors != 1 || facts->group[0] != ENL_GROUP_KETONE)
     return NULL;
-  if (is_gamma_of_dicarbonyl (mol, atom, facts->acceptor[0]))
+  if (enl_site_is_dicarbonyl_gamma (mol, atom, facts))
     return "gamma of the 1,3-dicarbonyl";
+  if (is_beside_enolate (mol, facts->acceptor[0]))
+    return "alpha' of the enolate";
   if ((enl_group_traits (mol, facts->acceptor[0]) & ENL_TRAIT_VINYL) != 0 &&
       facts->n_vinyls + facts->n_alkynyls == 0)
     return "alpha' of the enone";
@@ -147,8 +164,10 @@ acceptor_words (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *fac
   }
   length = words->len;
   append_unsaturation (words, facts);
-  if (words->len > MAX_WORDS && aryl) {
-    g_string_truncate (words, length);
+  if (words->len > MAX_WORDS && aryl && special == NULL) {
+    g_string_assign (words, "alpha to ");
+    append_acceptors (words, mol, facts, 0);
+    length = words->len;
     g_string_append (words, ", benzylic");
   }
   if (words->len > MAX_WORDS)
@@ -198,13 +217,17 @@ vinylogous_words (const EnlMolecule *mol, const EnlCarbonFacts *facts)
 {
   static const char *const letter[] = {"alpha", "gamma", "epsilon", "eta", "iota"};
   GString *words = g_string_new (NULL);
+  size_t length;
 
   g_string_printf (words, "%s of the %s (vinylogous)", letter[MIN (facts->depth, 4)],
                    vinylogous_noun (mol, facts));
+  length = words->len;
   if (facts->ring5 > 0)
     append_unsaturation (words, facts);
   else if (facts->n_aryls > 0)
     g_string_append (words, ", benzylic");
+  if (words->len > MAX_WORDS)
+    g_string_truncate (words, length);
   return g_string_free (words, FALSE);
 }
 
@@ -298,19 +321,25 @@ single_benzylic_words (const EnlMolecule *mol, uint32_t aryl)
   return g_strdup (stem);
 }
 
-/* Is the C=C neighbour of `atom` the C=C of an enolate drawn with its charge on O? */
-static bool
-is_enolate_neighbour (const EnlMolecule *mol, uint32_t atom)
+/* "alpha' of the enolate", "alpha' of the enol": beside C=C that carries O- or OH. NULL for other
+ * carbons. */
+static const char *
+enol_side_words (const EnlMolecule *mol, uint32_t atom)
 {
+  const char *words = NULL;
+
   for (uint32_t k = 0; k < enl_molecule_degree (mol, atom); k++) {
     uint32_t vinyl = enl_molecule_neighbour (mol, atom, k);
     uint32_t oxygen = enl_atom_partner (mol, vinyl, 1, O);
 
-    if (enl_group_of (mol, vinyl) == ENL_GROUP_VINYL && oxygen != ENL_NONE &&
-        enl_molecule_atom (mol, oxygen)->charge < 0)
-      return true;
+    if (enl_group_of (mol, vinyl) != ENL_GROUP_VINYL || oxygen == ENL_NONE)
+      continue;
+    if (enl_molecule_atom (mol, oxygen)->charge < 0)
+      return "alpha' of the enolate";
+    if (enl_molecule_total_hydrogens (mol, oxygen) > 0)
+      words = "alpha' of the enol";
   }
-  return false;
+  return words;
 }
 
 static char *
@@ -319,10 +348,15 @@ pi_words (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *facts)
   static const char *const ring[] = {"", "cyclopentadiene CH", "indene C1-H", "fluorene C9-H"};
   const uint32_t unsaturated = facts->n_vinyls + facts->n_alkynyls;
 
-  if (is_enolate_neighbour (mol, atom))
-    return g_strdup ("alpha' of the enolate");
-  if (facts->depth > 0)
+  const char *enol = enol_side_words (mol, atom);
+
+  if (facts->depth > 0 && (enol == NULL || !g_str_has_suffix (enol, "enolate")))
     return vinylogous_words (mol, facts);
+  if (enol != NULL && facts->n_aryls == 0)
+    return g_strdup (enol);
+  if (facts->across != ENL_NONE)
+    return g_strdup_printf ("vinylogous to the %s across the ring",
+                            acceptor_label (mol, facts->across, enl_group_of (mol, facts->across)));
   if (facts->ring5 > 0)
     return g_strdup (ring[facts->ring5]);
   if (facts->n_aryls > 0 && unsaturated > 0)

@@ -167,15 +167,28 @@ is_usable_acceptor (const EnlMolecule *mol, uint32_t atom, uint32_t other, EnlGr
   return true; /* S, P and onium neighbours need no planar carbon */
 }
 
+/* Keeps the acceptors in the order of their kinds, so that words do not depend on numbering. */
+static void
+add_acceptor (EnlCarbonFacts *facts, uint32_t atom, EnlGroup group)
+{
+  uint32_t i = facts->n_acceptors++;
+
+  for (; i > 0 && facts->group[i - 1] > group; i--) {
+    facts->group[i] = facts->group[i - 1];
+    facts->acceptor[i] = facts->acceptor[i - 1];
+  }
+  facts->group[i] = group;
+  facts->acceptor[i] = atom;
+  facts->n_carbonyls += enl_group_is_carbonyl (group);
+}
+
 static void
 add_neighbour (const EnlMolecule *mol, uint32_t atom, uint32_t other, EnlCarbonFacts *facts)
 {
   const EnlGroup group = enl_group_of (mol, other);
 
   if (is_usable_acceptor (mol, atom, other, group, facts)) {
-    facts->acceptor[facts->n_acceptors] = other;
-    facts->group[facts->n_acceptors++] = group;
-    facts->n_carbonyls += enl_group_is_carbonyl (group);
+    add_acceptor (facts, other, group);
   } else if (group == ENL_GROUP_ARYL && can_conjugate (mol, atom, other, facts)) {
     facts->aryl[facts->n_aryls++] = other;
   } else if (group == ENL_GROUP_VINYL && can_conjugate (mol, atom, other, facts)) {
@@ -262,6 +275,29 @@ ring5_kind (const EnlMolecule *mol, uint32_t atom)
   return 0;
 }
 
+/* C=O opposite the carbon in a six-membered ring whose four other atoms are sp2: anthrone and its
+ * like, whose enol is a phenol. */
+static uint32_t
+carbonyl_across (const EnlMolecule *mol, uint32_t atom)
+{
+  for (uint32_t r = 0; r < enl_molecule_rings (mol); r++) {
+    uint32_t size, at = 0, sp2 = 0;
+    const uint32_t *ring = enl_molecule_ring (mol, r, &size);
+
+    while (at < size && ring[at] != atom)
+      at++;
+    if (size != 6 || at == size)
+      continue;
+    for (uint32_t i = 0; i < size; i++) {
+      EnlGroup group = enl_group_of (mol, ring[i]);
+      sp2 += group == ENL_GROUP_ARYL || group == ENL_GROUP_VINYL;
+    }
+    if (sp2 == 4 && enl_group_is_carbonyl (enl_group_of (mol, ring[(at + 3) % 6])))
+      return ring[(at + 3) % 6];
+  }
+  return ENL_NONE;
+}
+
 /* ---- single carbons ---- */
 
 static uint32_t
@@ -299,8 +335,10 @@ saturated_reason (const EnlMolecule *mol, uint32_t atom, EnlCarbonFacts *facts)
       add_neighbour (mol, atom, enl_molecule_neighbour (mol, atom, k), facts);
   if (facts->n_vinyls + facts->n_alkynyls > 0)
     look_for_vinylogy (mol, atom, facts);
-  if (facts->n_vinyls + facts->n_aryls >= 2)
+  if (facts->n_vinyls + facts->n_aryls >= 2) {
     facts->ring5 = ring5_kind (mol, atom);
+    facts->across = carbonyl_across (mol, atom);
+  }
   if (facts->n_acceptors > 0)
     return ENL_CARBON_ACCEPTOR;
   if (facts->n_aryls + facts->n_vinyls + facts->n_alkynyls > 0)
@@ -368,10 +406,39 @@ enl_site_carbon_facts (const EnlMolecule *mol, uint32_t atom, EnlCarbonFacts *fa
   const EnlAtom *a = enl_molecule_atom (mol, atom);
 
   memset (facts, 0, sizeof *facts);
+  facts->across = ENL_NONE;
   if (a->element != C || a->charge != 0 || a->unpaired != 0 ||
       enl_molecule_total_hydrogens (mol, atom) == 0 || enl_atom_heavy_degree (mol, atom) > 3)
     return false;
   facts->reason = enl_atom_is_saturated (mol, atom) ? saturated_reason (mol, atom, facts)
                                                     : unsaturated_reason (mol, atom);
   return facts->reason != ENL_CARBON_NONE;
+}
+
+/* Saturated CH that loses its hydrogen between two carbonyls. */
+static bool
+is_dicarbonyl_middle (const EnlMolecule *mol, uint32_t atom)
+{
+  EnlCarbonFacts facts;
+  uint32_t carbonyls = 0;
+
+  if (enl_molecule_atom (mol, atom)->element != C || !enl_site_carbon_facts (mol, atom, &facts))
+    return false;
+  for (uint32_t i = 0; i < facts.n_acceptors; i++)
+    carbonyls += enl_group_is_carbonyl (facts.group[i]) && facts.group[i] != ENL_GROUP_CARBOXYLATE;
+  return carbonyls >= 2;
+}
+
+bool
+enl_site_is_dicarbonyl_gamma (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *facts)
+{
+  if (facts->reason != ENL_CARBON_ACCEPTOR || facts->n_acceptors != 1 ||
+      facts->group[0] != ENL_GROUP_KETONE)
+    return false;
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, facts->acceptor[0]); k++) {
+    uint32_t other = enl_molecule_neighbour (mol, facts->acceptor[0], k);
+    if (other != atom && is_dicarbonyl_middle (mol, other))
+      return true;
+  }
+  return false;
 }

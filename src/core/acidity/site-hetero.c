@@ -47,17 +47,38 @@ in_heteroaromatic_ring (const EnlMolecule *mol, uint32_t atom)
   return false;
 }
 
+static bool
+carries_carbonyl (const EnlMolecule *mol, uint32_t atom, uint32_t except, bool ring_only)
+{
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, atom); k++) {
+    uint32_t other = enl_molecule_neighbour (mol, atom, k);
+    const EnlBond *bond = enl_molecule_bond (mol, enl_molecule_bond_at (mol, atom, k));
+
+    if (other != except && (bond->aromatic || !ring_only) &&
+        enl_group_is_carbonyl (enl_group_of (mol, other)))
+      return true;
+  }
+  return false;
+}
+
 /* C=O on the far end of the C=C that carries the enol O-H: a vinylogous acid. */
 static bool
 is_vinylogous_acid (const EnlMolecule *mol, uint32_t carbon)
 {
   uint32_t end = enl_atom_partner (mol, carbon, 2, C);
+  return end != ENL_NONE && carries_carbonyl (mol, end, carbon, false);
+}
 
-  for (uint32_t k = 0; end != ENL_NONE && k < enl_molecule_degree (mol, end); k++) {
-    uint32_t other = enl_molecule_neighbour (mol, end, k);
-    if (other != carbon && enl_group_is_carbonyl (enl_group_of (mol, other)))
+/* The same in a ring that counts as aromatic with its C=O in it (4-hydroxycoumarin, tropolone). */
+static bool
+is_ring_enol (const EnlMolecule *mol, uint32_t carbon)
+{
+  if (carries_carbonyl (mol, carbon, ENL_NONE, true))
+    return true;
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, carbon); k++)
+    if (enl_molecule_bond (mol, enl_molecule_bond_at (mol, carbon, k))->aromatic &&
+        carries_carbonyl (mol, enl_molecule_neighbour (mol, carbon, k), carbon, true))
       return true;
-  }
   return false;
 }
 
@@ -121,6 +142,8 @@ carbon_oxygen_facts (const EnlMolecule *mol, uint32_t oxygen, uint32_t carbon,
   case ENL_GROUP_IMINIUM:
     return competing (facts, ENL_SITE_OXYGEN, "O-H of the imidic acid", ENL_TIER_OTHER);
   case ENL_GROUP_ARYL:
+    if (is_ring_enol (mol, carbon))
+      return competing (facts, ENL_SITE_OXYGEN, "enol O-H, conjugated with C=O", ENL_TIER_MILD);
     return competing (facts, ENL_SITE_OXYGEN,
                       in_heteroaromatic_ring (mol, carbon) ? "O-H on the heteroaromatic ring"
                                                            : "phenol O-H",

@@ -365,8 +365,20 @@ amidine_facts (const EnlMolecule *mol, uint32_t atom, const EnlAround *around,
   return tell (facts, guanidine ? "N-H of the guanidine" : "N-H of the amidine", ENL_TIER_ALCOHOL);
 }
 
+/* The neighbouring N of a hydrazine carries C=O. */
 static bool
-amine_facts (const EnlMolecule *mol, const EnlAround *around, EnlHeteroFacts *facts)
+is_outer_hydrazide (const EnlMolecule *mol, uint32_t atom)
+{
+  const uint32_t inner = enl_atom_partner (mol, atom, 1, N);
+
+  for (uint32_t k = 0; inner != ENL_NONE && k < enl_molecule_degree (mol, inner); k++)
+    if (enl_group_is_carbonyl (enl_group_of (mol, enl_molecule_neighbour (mol, inner, k))))
+      return true;
+  return false;
+}
+
+static bool
+amine_facts (const EnlMolecule *mol, uint32_t atom, const EnlAround *around, EnlHeteroFacts *facts)
 {
   if (around->imine_ns > 0)
     return tell (facts, "N-H of the hydrazone", ENL_TIER_OTHER);
@@ -375,7 +387,8 @@ amine_facts (const EnlMolecule *mol, const EnlAround *around, EnlHeteroFacts *fa
   if (around->aryls >= 2)
     return tell (facts, "N-H of the diarylamine", ENL_TIER_AMIDE);
   if (around->amines > 0 && around->aryls == 0)
-    return tell_amine (facts, "N-H of the hydrazine");
+    return tell_amine (facts, is_outer_hydrazide (mol, atom) ? "outer N-H of the hydrazide"
+                                                             : "N-H of the hydrazine");
   if (around->amines > 0)
     return tell (facts, "N-H of the arylhydrazine", ENL_TIER_ALCOHOL);
   if (around->aryls == 1)
@@ -417,7 +430,7 @@ single_bond_facts (const EnlMolecule *mol, uint32_t atom, EnlHeteroFacts *facts)
     return tell (facts, "N-H of the cyanamide", ENL_TIER_MILD);
   if (around.imines + around.iminiums > 0)
     return amidine_facts (mol, atom, &around, facts);
-  return amine_facts (mol, &around, facts);
+  return amine_facts (mol, atom, &around, facts);
 }
 
 bool

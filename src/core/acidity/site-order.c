@@ -110,6 +110,8 @@ single_acceptor_tier (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFact
   const unsigned traits = enl_group_traits (mol, acceptor);
 
   switch (facts->group[0]) {
+  case ENL_GROUP_THIOAMIDE:
+    return ENL_TIER_KETONE_CH;
   case ENL_GROUP_KETONE:
   case ENL_GROUP_ALDEHYDE:
     return (traits & ENL_TRAIT_CF3) == 0 && is_plain_ketone (mol, acceptor, atom)
@@ -117,14 +119,16 @@ single_acceptor_tier (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFact
                : ENL_TIER_OTHER;
   case ENL_GROUP_ESTER:
   case ENL_GROUP_SULFONE:
-    return (traits & (ENL_TRAIT_CF3 | ENL_TRAIT_HYDROGEN)) != 0 ||
-                   (facts->group[0] == ENL_GROUP_ESTER &&
-                    (traits & (ENL_TRAIT_RING | ENL_TRAIT_ARYL)) != 0)
+    return (traits & ENL_TRAIT_CF3) != 0 || (facts->group[0] == ENL_GROUP_ESTER &&
+                                             (traits & (ENL_TRAIT_RING | ENL_TRAIT_ARYL)) != 0)
                ? ENL_TIER_OTHER
                : ENL_TIER_ESTER_CH;
   case ENL_GROUP_NITRILE:
     return ENL_TIER_ESTER_CH;
   case ENL_GROUP_AMIDE:
+    if (traits & ENL_TRAIT_CF3)
+      return ENL_TIER_OTHER;
+    return traits & ENL_TRAIT_ARYL ? ENL_TIER_ESTER_CH : ENL_TIER_FEEBLE_CH;
   case ENL_GROUP_SULFOXIDE:
     return (traits & (ENL_TRAIT_CF3 | ENL_TRAIT_ARYL)) == 0 ? ENL_TIER_FEEBLE_CH : ENL_TIER_OTHER;
   case ENL_GROUP_CARBOXYLATE:
@@ -149,6 +153,7 @@ is_middle (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *facts)
   case ENL_GROUP_ALDEHYDE:
   case ENL_GROUP_ESTER:
   case ENL_GROUP_AMIDE:
+  case ENL_GROUP_CARBOXYLATE:
   case ENL_GROUP_NITRILE:
     return facts->n_vinyls == 0;
   default:
@@ -222,25 +227,51 @@ enl_site_carbon_tier (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFact
 
 /* ---- the flag ---- */
 
-/* C-H beside its own COOH or SO2OH: that O-H goes first unless a nitro group or two more acceptors
- * rival it. */
+/* S(=O)2OH or P(=O)OH. */
 static bool
-is_beside_own_acid (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *facts)
+is_oxoacid (const EnlMolecule *mol, uint32_t atom, EnlGroup group)
+{
+  return (group == ENL_GROUP_SULFONE || group == ENL_GROUP_PHOSPHORYL) &&
+         (enl_group_traits (mol, atom) & ENL_TRAIT_HYDROGEN) != 0 &&
+         enl_atom_partner (mol, atom, 1, N) == ENL_NONE;
+}
+
+/* C-H beside its own COOH, SO2OH or P(=O)OH: that O-H goes first unless a nitro group or two more
+ * acceptors rival it. */
+static bool
+is_beside_own_acid (const EnlMolecule *mol, const EnlCarbonFacts *facts)
 {
   uint32_t acids = 0, rivals = 0;
 
-  if (site->kind != ENL_SITE_CARBON || facts->carbon.reason != ENL_CARBON_ACCEPTOR)
-    return false;
-  for (uint32_t i = 0; i < facts->carbon.n_acceptors; i++) {
-    EnlGroup group = facts->carbon.group[i];
-    bool acid = group == ENL_GROUP_ACID ||
-                (group == ENL_GROUP_SULFONE &&
-                 (enl_group_traits (mol, facts->carbon.acceptor[i]) & ENL_TRAIT_HYDROGEN) != 0 &&
-                 enl_atom_partner (mol, facts->carbon.acceptor[i], 1, N) == ENL_NONE);
+  for (uint32_t i = 0; i < facts->n_acceptors; i++) {
+    EnlGroup group = facts->group[i];
+    bool acid = group == ENL_GROUP_ACID || is_oxoacid (mol, facts->acceptor[i], group);
+
     acids += acid;
     rivals += acid ? 0 : group == ENL_GROUP_NITRO ? 2 : is_strong_pair_group (group);
   }
   return acids > 0 && rivals < 2;
+}
+
+/* C2-H of an azolium ion that still has an N-H beside it. */
+static bool
+is_beside_own_cation (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *facts)
+{
+  for (uint32_t k = 0; facts->reason == ENL_CARBON_AZOLIUM && k < enl_molecule_degree (mol, atom);
+       k++) {
+    uint32_t other = enl_molecule_neighbour (mol, atom, k);
+    if (!enl_atom_is_hydrogen (mol, other) && enl_molecule_total_hydrogens (mol, other) > 0)
+      return true;
+  }
+  return false;
+}
+
+static bool
+follows_own_acceptor (const EnlMolecule *mol, const EnlSite *site, const EnlCarbonFacts *facts)
+{
+  return site->kind == ENL_SITE_CARBON &&
+         (is_beside_own_acid (mol, facts) || is_beside_own_cation (mol, site->atom[0], facts) ||
+          enl_site_is_dicarbonyl_gamma (mol, site->atom[0], facts));
 }
 
 void
@@ -250,7 +281,7 @@ enl_site_order_flags (const EnlMolecule *mol, EnlSites *sites, const EnlSiteFact
   for (uint32_t i = 0; i < sites->n_sites; i++) {
     EnlSite *site = &sites->site[i];
 
-    site->second = is_beside_own_acid (mol, site, &facts[i]);
+    site->second = follows_own_acceptor (mol, site, &facts[i].carbon);
     for (uint32_t j = 0; !site->second && j < sites->n_sites; j++)
       site->second = fragment[sites->site[j].atom[0]] == fragment[site->atom[0]] &&
                      enl_tier_precedes (facts[j].tier, facts[i].tier);

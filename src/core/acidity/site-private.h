@@ -33,6 +33,7 @@ typedef struct {
   uint32_t ring5;  /* aromatic-anion ring: 0 none, 1 cyclopentadiene, 2 indene, 3 fluorene */
   uint32_t depth;  /* C=C units between the carbon and the vinylogous acceptor, 0: none */
   uint32_t far;    /* atom of the vinylogous acceptor when depth > 0 */
+  uint32_t across; /* C=O opposite in an anthrone-like ring, ENL_NONE for none */
   bool far_alkyne; /* the path starts with C≡C */
   bool bredt;      /* an acceptor or pi neighbour is out of reach: bridgehead */
   bool strain;     /* ... because C=C would lie inside a three-membered ring */
@@ -41,6 +42,9 @@ typedef struct {
 /* Examines a carbon; true when its hydrogens make a site. With false, `bredt` and `strain` may
  * still tell why not. */
 bool enl_site_carbon_facts (const EnlMolecule *mol, uint32_t atom, EnlCarbonFacts *facts);
+/* The outer side of a 1,3-dicarbonyl whose middle can lose a hydrogen, and so loses it first. */
+bool enl_site_is_dicarbonyl_gamma (const EnlMolecule *mol, uint32_t atom,
+                                   const EnlCarbonFacts *facts);
 /* Position in words, new string. */
 char *enl_site_carbon_words (const EnlMolecule *mol, uint32_t atom, const EnlCarbonFacts *facts);
 

@@ -1,11 +1,13 @@
 /* Why a compound cannot give an enolate, or no carbanion at all. */
+#include <string.h>
+
 #include "core/acidity/site-private.h"
 
 enum { C = 6 };
 
 /* What stands beside the C=O groups of a molecule that has no enolate. */
 typedef struct {
-  uint32_t carbonyls, carbons; /* carbons next to C=O that are not C=O themselves, or are */
+  uint32_t carbonyls, carbons; /* C=O groups, and carbons next to them */
   bool bredt, strain, vinylic, formyl, other_sp2;
 } EnlCarbonylSides;
 
@@ -14,7 +16,7 @@ gives_enolate (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *
 {
   if (site->kind != ENL_SITE_CARBON)
     return false;
-  return site->alpha_carbonyl ||
+  return site->alpha_carbonyl || facts->carbon.across != ENL_NONE ||
          (facts->carbon.depth > 0 && enl_group_is_carbonyl (enl_group_of (mol, facts->carbon.far)));
 }
 
@@ -95,6 +97,18 @@ enol_reason (const EnlMolecule *mol)
   return NULL;
 }
 
+/* Acceptors other than C=O that a carbon carries. */
+static bool
+is_carbon_acceptor (const EnlMolecule *mol, uint32_t atom, EnlGroup group)
+{
+  if (!enl_group_is_acceptor (group) || group == ENL_GROUP_AMMONIUM || group == ENL_GROUP_IMINE_N)
+    return false;
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, atom); k++)
+    if (enl_molecule_atom (mol, enl_molecule_neighbour (mol, atom, k))->element == C)
+      return true;
+  return false;
+}
+
 static char *
 carbanion_reason (const EnlMolecule *mol)
 {
@@ -105,8 +119,7 @@ carbanion_reason (const EnlMolecule *mol)
     EnlGroup group = enl_group_of (mol, i);
     EnlCarbonFacts facts;
 
-    if (acceptor == ENL_GROUP_OTHER && enl_group_is_acceptor (group) &&
-        enl_atom_heavy_degree (mol, i) > 0 && group != ENL_GROUP_AMMONIUM)
+    if (acceptor == ENL_GROUP_OTHER && is_carbon_acceptor (mol, i, group))
       acceptor = group;
     if (enl_molecule_atom (mol, i)->element != C)
       continue;
@@ -123,7 +136,8 @@ carbanion_reason (const EnlMolecule *mol)
   if (strain)
     return g_strdup ("the anion would need C=C inside a three-membered ring");
   if (acceptor != ENL_GROUP_OTHER)
-    return g_strdup_printf ("the carbon next to the %s carries no acidic hydrogen",
+    return g_strdup_printf ("no carbon next to %s%s carries an acidic hydrogen",
+                            strchr (enl_group_label (acceptor), '=') != NULL ? "" : "the ",
                             enl_group_label (acceptor));
   return g_strdup ("no group here stabilises a carbanion");
 }

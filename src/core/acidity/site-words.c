@@ -51,20 +51,51 @@ by_carbinol (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *fa
   return g_strdup (word[MIN (n, 3)]);
 }
 
-static char *
-by_ketone (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *facts)
+/* "alpha to the ketone C=O" may read "alpha to the aryl ketone C=O": two ketones of different kind
+ * are told apart by their kind. NULL for other positions. */
+static const char *
+kind_of_ketone (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *facts)
 {
   unsigned traits;
 
   if (site->kind != ENL_SITE_CARBON || facts->carbon.n_acceptors != 1 ||
       facts->carbon.group[0] != ENL_GROUP_KETONE)
-    return g_strdup ("");
+    return NULL;
   traits = enl_group_traits (mol, facts->carbon.acceptor[0]);
   if (traits & ENL_TRAIT_ARYL)
-    return g_strdup ("aryl ketone");
-  if (traits & ENL_TRAIT_VINYL)
-    return g_strdup ("enone");
-  return g_strdup (traits & ENL_TRAIT_RING ? "ring ketone" : "open-chain ketone");
+    return "aryl";
+  return traits & ENL_TRAIT_RING ? "cyclic" : "open-chain";
+}
+
+static void
+insert_ketone_kind (EnlSite *site, const char *kind)
+{
+  const char *at = strstr (site->position, "ketone C=O");
+  char *longer;
+
+  if (at == NULL || kind == NULL)
+    return;
+  longer = g_strdup_printf ("%.*s%s %s", (int)(at - site->position), site->position, kind, at);
+  g_free (site->position);
+  site->position = longer;
+}
+
+/* Names the kinds of ketone where the molecule has more than one kind. */
+static void
+refine_ketones (const EnlMolecule *mol, EnlSites *sites, const EnlSiteFacts *facts)
+{
+  const char *first = NULL;
+  bool differ = false;
+
+  for (uint32_t i = 0; i < sites->n_sites; i++) {
+    const char *kind = kind_of_ketone (mol, &sites->site[i], &facts[i]);
+    if (kind == NULL)
+      continue;
+    differ |= first != NULL && strcmp (first, kind) != 0;
+    first = kind;
+  }
+  for (uint32_t i = 0; differ && i < sites->n_sites; i++)
+    insert_ketone_kind (&sites->site[i], kind_of_ketone (mol, &sites->site[i], &facts[i]));
 }
 
 /* The first heteroatom on the atom that is no acceptor: "next to O". */
@@ -116,8 +147,8 @@ by_atom (const EnlMolecule *mol, const EnlSite *site, const EnlSiteFacts *facts)
   return g_strdup_printf ("atom %u", input > 0 ? input : site->atom[0] + 1);
 }
 
-static const Distinction distinction[] = {by_hydrogens,  by_isotope, by_carbinol, by_ketone,
-                                          by_heteroatom, by_ring,    by_branch,   by_atom};
+static const Distinction distinction[] = {by_hydrogens, by_isotope, by_carbinol, by_heteroatom,
+                                          by_ring,      by_branch,  by_atom};
 
 typedef struct {
   const EnlMolecule *mol;
@@ -126,8 +157,8 @@ typedef struct {
   GString **suffix;
 } Telling;
 
-/* Sites whose position and suffix read the same share a group; tells the members of every group
- * that holds more than one apart by distinction number `level`. */
+/* Sites whose position and suffix read the same share a group. Adds the words of distinction number
+ * `level` to the members of every group in which they differ. */
 static void
 apply_level (Telling *t, uint32_t *group, size_t level)
 {
@@ -184,6 +215,7 @@ enl_site_words_distinct (const EnlMolecule *mol, EnlSites *sites, const EnlSiteF
   g_autofree GString **suffix = g_new (GString *, sites->n_sites);
   Telling t = {mol, sites, facts, suffix};
 
+  refine_ketones (mol, sites, facts);
   for (uint32_t i = 0; i < sites->n_sites; i++)
     suffix[i] = g_string_new (NULL);
   for (size_t level = 0; level < ENL_COUNT (distinction) && !regroup (&t, group); level++)

@@ -4,7 +4,7 @@
 #include "core/molecule/elements.h"
 #include "core/molecule/symmetry.h"
 
-enum { C = 6, N = 7, O = 8 };
+enum { C = 6, N = 7, O = 8, P = 15, S = 16, SE = 34 };
 
 /* ---- equivalence ---- */
 
@@ -68,8 +68,9 @@ needs_levelling (const EnlMolecule *mol)
 
 /* Symmetry classes as acidity sees them: mirror images count as equal (so the two CH of a meso
  * ketone are one site), cis and trans arms do not, and neither charge nor double bond of a
- * symmetric cation or anion is pinned to where it was drawn. */
-static void
+ * symmetric cation or anion is pinned to where it was drawn. True in this last case: the atoms of a
+ * class may be drawn differently. */
+static bool
 find_classes (const EnlMolecule *mol, uint32_t *class_of)
 {
   g_autoptr (EnlMolecule) level = NULL;
@@ -77,7 +78,7 @@ find_classes (const EnlMolecule *mol, uint32_t *class_of)
 
   if (!needs_levelling (mol)) {
     enl_symmetry_classes (mol, true, class_of);
-    return;
+    return false;
   }
   level = enl_molecule_copy (mol);
   for (uint32_t i = 0; i < enl_molecule_atoms (level); i++) {
@@ -92,6 +93,7 @@ find_classes (const EnlMolecule *mol, uint32_t *class_of)
   if (edited)
     enl_molecule_finish (level);
   enl_symmetry_classes (level, true, class_of);
+  return edited;
 }
 
 /* ---- diastereotopic hydrogens ---- */
@@ -109,13 +111,17 @@ has_two_equal_neighbours (const EnlMolecule *mol, uint32_t atom, const uint32_t 
   return enl_molecule_atom (mol, atom)->hydrogens > 1;
 }
 
-/* Saturated carbon with four different neighbours by constitution. */
+/* Carbon with four different neighbours by constitution; S, Se or P of a sulfoxide, sulfonium,
+ * sulfoximine or phosphine with different ones. */
 static bool
 is_stereocentre (const EnlMolecule *mol, uint32_t atom, const uint32_t *class_of)
 {
   const EnlAtom *a = enl_molecule_atom (mol, atom);
+  const uint32_t degree = enl_molecule_degree (mol, atom);
 
-  return a->element == C && enl_molecule_degree (mol, atom) + a->hydrogens == 4 &&
+  if (a->element == C ? degree + a->hydrogens != 4 : degree < 3)
+    return false;
+  return (a->element == C || a->element == P || a->element == S || a->element == SE) &&
          !has_two_equal_neighbours (mol, atom, class_of);
 }
 
@@ -186,6 +192,7 @@ is_diastereotopic (const EnlMolecule *mol, uint32_t atom, const uint32_t *class_
 typedef struct {
   const EnlMolecule *mol;
   uint32_t *class_of, *fragment;
+  bool levelled; /* atoms of one class may be drawn differently */
   GArray *site;  /* EnlSite */
   GArray *facts; /* EnlSiteFacts */
 } EnlFinder;
@@ -235,6 +242,29 @@ collect_class (const EnlFinder *finder, uint32_t member, EnlSite *site)
   }
 }
 
+/* The carbon of the class of `first` that shows its reason best, so that facts and words do not
+ * depend on which one the drawing names first. */
+static uint32_t
+representative (const EnlFinder *finder, uint32_t first)
+{
+  EnlCarbonReason best = ENL_CARBON_NONE;
+  uint32_t chosen = first;
+
+  if (!finder->levelled || enl_molecule_atom (finder->mol, first)->element != C)
+    return first;
+  for (uint32_t i = first; i < enl_molecule_atoms (finder->mol); i++) {
+    EnlCarbonFacts facts;
+    if (finder->class_of[i] != finder->class_of[first] ||
+        !enl_site_carbon_facts (finder->mol, i, &facts))
+      continue;
+    if (best == ENL_CARBON_NONE || facts.reason < best) {
+      best = facts.reason;
+      chosen = i;
+    }
+  }
+  return chosen;
+}
+
 static bool
 find_site (EnlFinder *finder, uint32_t atom)
 {
@@ -259,7 +289,7 @@ find_all (EnlFinder *finder)
 
   for (uint32_t i = 0; i < n; i++)
     if (!done[finder->class_of[i]])
-      done[finder->class_of[i]] = find_site (finder, i);
+      done[finder->class_of[i]] = find_site (finder, representative (finder, i));
 }
 
 static EnlSites *
@@ -298,7 +328,7 @@ enl_sites_find (const EnlMolecule *mol, EnlSites **out, EnlError *err)
   finder.site = g_array_new (FALSE, FALSE, sizeof (EnlSite));
   finder.facts = g_array_new (FALSE, FALSE, sizeof (EnlSiteFacts));
   if (n > 0) {
-    find_classes (mol, class_of);
+    finder.levelled = find_classes (mol, class_of);
     enl_molecule_fragments (mol, fragment);
   }
   *out = build (&finder);
