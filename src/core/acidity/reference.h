@@ -25,6 +25,14 @@ uint32_t enl_reference_rows (const EnlReference *ref);
 const EnlReferenceRow *enl_reference_row (const EnlReference *ref, uint32_t row);
 
 /* Row of this compound with `atom` (or one symmetry-equivalent to it) as the site, in this solvent
- * (ENL_SOLVENT_THF matches nothing); -1 when it was not measured. */
+ * (ENL_SOLVENT_THF matches nothing); -1 when it was not measured. Stereo: a row without stereo
+ * serves every isomer; a molecule without stereo gets a row with stereo only when no other isomer
+ * of it stands in the table. */
 int enl_reference_find (const EnlReference *ref, const EnlMolecule *mol, uint32_t atom,
                         EnlSolvent solvent);
+/* The same for all atoms at once: fills row[atom] with the row or -1. */
+void enl_reference_find_all (const EnlReference *ref, const EnlMolecule *mol, EnlSolvent solvent,
+                             int *row);
+
+/* Fingerprint of the table text: a fitted model names the table it was made from. */
+uint64_t enl_reference_checksum (const EnlReference *ref);

@@ -1,0 +1,291 @@
+#include "core/acidity/estimator.h"
+
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "core/acidity/predict.h"
+
+/* Half width of the 90 % interval of a normal law in standard deviations. */
+#define NORMAL_WIDTH 1.645
+/* Extra standard deviations (pK units) for what the fit cannot see. */
+#define THF_SIGMA    1.5 /* spread between the footings used in THF and the scale in DMSO */
+#define SECOND_SIGMA 2.0 /* second deprotonations: few were measured */
+#define FAR_SIGMA    3.0 /* outside the experience of the model */
+/* No acid that this program is for lies beyond these. */
+#define LEAST_PKA -20.0
+#define MOST_PKA  65.0
+
+static const char remark_thf[] = "DMSO value; no single THF scale exists";
+static const char remark_second[] =
+    "second deprotonation: another hydrogen goes first, and the number is that of its anion";
+static const char remark_second_neutral[] =
+    "second deprotonation: another hydrogen goes first; the number is for the neutral molecule, "
+    "the anion is much less acidic";
+
+struct EnlEstimator {
+  const EnlReference *ref;
+  EnlPredictor *predictor;
+};
+
+EnlStatus
+enl_estimator_open (const EnlReference *ref, const char *bytes, size_t size, EnlEstimator **out,
+                    EnlError *err)
+{
+  g_autoptr (EnlEstimator) estimator = g_new0 (EnlEstimator, 1);
+  EnlStatus status = enl_predictor_open (ref, bytes, size, &estimator->predictor, err);
+
+  *out = NULL;
+  if (status != ENL_OK)
+    return status;
+  estimator->ref = ref;
+  *out = g_steal_pointer (&estimator);
+  return ENL_OK;
+}
+
+void
+enl_estimator_free (EnlEstimator *estimator)
+{
+  if (!estimator)
+    return;
+  enl_predictor_free (estimator->predictor);
+  g_free (estimator);
+}
+
+/* ---- one run ---- */
+
+typedef struct {
+  const EnlEstimator *estimator;
+  const EnlMolecule *mol;
+  const EnlSites *sites;
+  EnlSolvent solvent; /* whose scale is used: DMSO for THF */
+  EnlEstimate *out;
+} Run;
+
+static void
+set_interval (EnlEstimate *e, double half)
+{
+  e->sigma = half / NORMAL_WIDTH;
+  e->low = e->value - half;
+  e->high = e->value + half;
+}
+
+/* Adds an independent uncertainty of `sigma` to the interval. */
+static void
+widen (EnlEstimate *e, double sigma)
+{
+  set_interval (e, NORMAL_WIDTH * sqrt (e->sigma * e->sigma + sigma * sigma));
+}
+
+static void
+take_prediction (const Run *run, const EnlPrediction *prediction, EnlEstimate *e)
+{
+  *e = (EnlEstimate){
+      .value = prediction->value,
+      .solvent = run->solvent,
+      .basis = ENL_BASIS_ESTIMATED,
+      .row = -1,
+      .outside = prediction->outside != NULL,
+      .remark = prediction->outside,
+      .n_precedents = prediction->n_precedents,
+  };
+  memcpy (e->precedent, prediction->precedent, sizeof e->precedent);
+  set_interval (e, prediction->half);
+  if (e->outside)
+    widen (e, FAR_SIGMA);
+  if (!(e->value >= LEAST_PKA && e->value <= MOST_PKA)) {
+    e->value = CLAMP (isfinite (e->value) ? e->value : MOST_PKA, LEAST_PKA, MOST_PKA);
+    e->outside = true;
+    e->remark = "outside its experience: the model runs off the scale";
+    widen (e, FAR_SIGMA);
+  }
+}
+
+/* Puts the published value in place of the estimate; the row leads its precedents. */
+static void
+take_row (const Run *run, int row, EnlEstimate *e)
+{
+  const EnlReferenceRow *published = enl_reference_row (run->estimator->ref, (uint32_t)row);
+  EnlEstimate old = *e;
+
+  e->value = published->pka;
+  e->basis = ENL_BASIS_MEASURED;
+  e->row = row;
+  e->outside = false;
+  e->remark = NULL;
+  set_interval (e, NORMAL_WIDTH * published->sigma);
+  e->precedent[0] = (EnlPrecedent){(uint32_t)row, 1};
+  e->n_precedents = 1;
+  for (uint32_t i = 0; i < old.n_precedents && e->n_precedents < ENL_MAX_PRECEDENTS; i++)
+    if (old.precedent[i].row != (uint32_t)row)
+      e->precedent[e->n_precedents++] = old.precedent[i];
+}
+
+/* Estimates the sites for which second == `second` on `mol` (the molecule, or its anion with the
+ * same atom numbers), then lets published values of that very species take over. */
+static void
+fill_sites (const Run *run, const EnlMolecule *mol, bool second)
+{
+  uint32_t n = 0;
+  g_autofree uint32_t *atom = g_new (uint32_t, run->sites->n_sites + 1);
+  g_autofree uint32_t *site = g_new (uint32_t, run->sites->n_sites + 1);
+  g_autofree EnlPrediction *prediction = g_new0 (EnlPrediction, run->sites->n_sites + 1);
+  g_autofree int *row = g_new (int, enl_molecule_atoms (mol) + 1);
+
+  for (uint32_t i = 0; i < run->sites->n_sites; i++)
+    if (run->sites->site[i].second == second) {
+      atom[n] = run->sites->site[i].atom[0];
+      site[n++] = i;
+    }
+  if (n == 0)
+    return;
+  enl_predictor_run (run->estimator->predictor, mol, atom, n, run->solvent, prediction);
+  enl_reference_find_all (run->estimator->ref, mol, run->solvent, row);
+  for (uint32_t k = 0; k < n; k++) {
+    take_prediction (run, &prediction[k], &run->out[site[k]]);
+    if (row[atom[k]] >= 0)
+      take_row (run, row[atom[k]], &run->out[site[k]]);
+  }
+}
+
+/* ---- second deprotonations ---- */
+
+/* The site that goes first: the lowest estimate among the acidic heteroatoms, else among all. */
+static const EnlSite *
+first_to_go (const Run *run, double *value)
+{
+  const EnlSite *best = NULL;
+
+  for (int any = 0; any < 2 && !best; any++)
+    for (uint32_t i = 0; i < run->sites->n_sites; i++) {
+      const EnlSite *site = &run->sites->site[i];
+      if (site->second || (!any && !site->acidic_heteroatom))
+        continue;
+      if (!best || run->out[i].value < *value)
+        best = site, *value = run->out[i].value;
+    }
+  return best;
+}
+
+/* The conjugate base with unchanged atom numbers, or NULL when the hydrogen is an atom of its own
+ * (an isotope). */
+static EnlMolecule *
+conjugate_base (const EnlMolecule *mol, uint32_t atom)
+{
+  if (enl_molecule_atom (mol, atom)->hydrogens == 0)
+    return NULL;
+  EnlMolecule *base = enl_molecule_copy (mol);
+  EnlAtom *a = enl_molecule_edit_atom (base, atom);
+  a->hydrogens--;
+  a->charge--;
+  enl_molecule_finish (base);
+  return base;
+}
+
+/* A published value of the neutral molecule stands: someone measured that very hydrogen. */
+static void
+keep_published (const Run *run, EnlEstimate *e, const EnlEstimate *neutral)
+{
+  if (neutral->basis == ENL_BASIS_MEASURED)
+    *e = *neutral;
+}
+
+static void
+fill_seconds (const Run *run)
+{
+  double floor = 0;
+  const EnlSite *first = first_to_go (run, &floor);
+  g_autoptr (EnlMolecule) base = first ? conjugate_base (run->mol, first->atom[0]) : NULL;
+  g_autofree EnlEstimate *neutral = g_new0 (EnlEstimate, run->sites->n_sites + 1);
+
+  fill_sites (run, run->mol, true);
+  memcpy (neutral, run->out, run->sites->n_sites * sizeof *neutral);
+  if (base)
+    fill_sites (run, base, true);
+  for (uint32_t i = 0; i < run->sites->n_sites; i++) {
+    EnlEstimate *e = &run->out[i];
+    if (!run->sites->site[i].second)
+      continue;
+    keep_published (run, e, &neutral[i]);
+    if (e->basis == ENL_BASIS_MEASURED)
+      continue;
+    e->value = MAX (e->value, floor); /* a second loss is never easier than the first */
+    e->outside = true;
+    e->remark = base ? remark_second : remark_second_neutral;
+    widen (e, base ? SECOND_SIGMA : FAR_SIGMA);
+  }
+}
+
+/* Values of the scale in DMSO, on the footing that THF lacks. */
+static void
+move_to_thf (const EnlSites *sites, EnlEstimate *out)
+{
+  for (uint32_t i = 0; i < sites->n_sites; i++) {
+    out[i].solvent = ENL_SOLVENT_THF;
+    if (out[i].basis == ENL_BASIS_MEASURED) { /* in DMSO, so in THF it is an estimate */
+      out[i].basis = ENL_BASIS_ESTIMATED;
+      out[i].row = -1;
+    }
+    if (!out[i].remark)
+      out[i].remark = remark_thf;
+    widen (&out[i], THF_SIGMA);
+  }
+}
+
+EnlStatus
+enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
+                   EnlSolvent solvent, EnlEstimate *out, EnlError *err)
+{
+  Run run = {
+      .estimator = estimator,
+      .mol = mol,
+      .sites = sites,
+      .solvent = solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
+      .out = out,
+  };
+  bool seconds = false;
+
+  g_assert (solvent < ENL_N_SOLVENTS);
+  if (enl_molecule_heavy_atoms (mol) > ENL_MAX_HEAVY)
+    return enl_error_set (err, ENL_ERROR_LIMIT, "give a smaller structure",
+                          "more than %d heavy atoms", ENL_MAX_HEAVY);
+  for (uint32_t i = 0; i < sites->n_sites; i++)
+    seconds |= sites->site[i].second;
+  fill_sites (&run, mol, false);
+  if (seconds)
+    fill_seconds (&run);
+  if (solvent == ENL_SOLVENT_THF)
+    move_to_thf (sites, out);
+  return ENL_OK;
+}
+
+/* ---- ranking ---- */
+
+typedef struct {
+  double value;
+  uint32_t hydrogens, atom, site;
+} Place;
+
+static int
+compare_places (const void *a, const void *b)
+{
+  const Place *x = a, *y = b;
+
+  if (x->value != y->value)
+    return x->value < y->value ? -1 : 1;
+  if (x->hydrogens != y->hydrogens)
+    return x->hydrogens > y->hydrogens ? -1 : 1;
+  return (x->atom > y->atom) - (x->atom < y->atom);
+}
+
+void
+enl_estimates_rank (const EnlSites *sites, const EnlEstimate *estimate, uint32_t *rank)
+{
+  g_autofree Place *place = g_new (Place, sites->n_sites + 1);
+
+  for (uint32_t i = 0; i < sites->n_sites; i++)
+    place[i] = (Place){estimate[i].value, sites->site[i].hydrogens, sites->site[i].atom[0], i};
+  qsort (place, sites->n_sites, sizeof *place, compare_places);
+  for (uint32_t i = 0; i < sites->n_sites; i++)
+    rank[i] = place[i].site;
+}

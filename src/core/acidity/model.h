@@ -1,0 +1,68 @@
+/* The fitted model: from the table of acids to numbers, and to and from its file.
+ *
+ * File (native byte order, made at build time by `enolith-fit build` and carried in the program):
+ * a header with magic, version, byte order mark, sizes, the checksum of the table of acids and that
+ * of what follows; then the arrays one after the other. Any disagreement is an ENL_ERROR_FORMAT.
+ */
+#pragma once
+
+#include "core/acidity/kernel.h"
+#include "core/acidity/reference.h"
+
+/* Classes of acid for which intervals are calibrated and scores are given. */
+typedef enum {
+  ENL_CLASS_ALPHA,    /* C-H on a carbon next to C=O */
+  ENL_CLASS_CARBON,   /* any other C-H */
+  ENL_CLASS_NITROGEN, /* N-H, cations included */
+  ENL_CLASS_OXYGEN,
+  ENL_CLASS_CHALCOGEN, /* S-H and the like; also what has no class of its own */
+  ENL_N_CLASSES
+} EnlAcidClass;
+
+EnlAcidClass enl_acid_class (const EnlMolecule *mol, uint32_t atom);
+
+#define ENL_MODEL_SOLVENTS 2 /* DMSO, water */
+
+/* pKa that the model expects before it has seen anything; the free constants of the kernel make
+ * up for its arbitrariness. */
+#define ENL_PRIOR_PKA 20.0
+
+typedef struct {
+  EnlHyper hyper;
+  double centre[ENL_N_DESCRIPTORS], scale[ENL_N_DESCRIPTORS];
+  EnlSiteSet *rows; /* as in the table, standardised and scaled */
+  double *factor;   /* packed Cholesky factor of the covariance with noise */
+  double *alpha;    /* inverse covariance times (pKa - ENL_PRIOR_PKA) */
+  /* Half width of the 90 % interval in units of the model's standard deviation, so that left-out
+   * compounds of the class fall inside nine times of ten. */
+  double width[ENL_N_CLASSES][ENL_MODEL_SOLVENTS];
+} EnlModel;
+
+/* Fits to the whole table; ENL_ERROR_NUMERIC when the covariance cannot be factored. */
+EnlStatus enl_model_build (const EnlReference *ref, const EnlHyper *hyper, EnlModel **out,
+                           EnlError *err) ENL_MUST_USE;
+void enl_model_free (EnlModel *model);
+G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlModel, enl_model_free)
+
+/* Describes all rows of the table: raw descriptors, linked. */
+EnlStatus enl_model_describe (const EnlReference *ref, EnlSiteSet **out,
+                              EnlError *err) ENL_MUST_USE;
+/* Mean and standard deviation of every raw descriptor (0 where it does not vary). */
+void enl_model_moments (const EnlSiteSet *raw, double *centre, double *scale);
+
+/* Fills fold[row]: rows of one compound, in whatever solvent and for whatever site, share one. */
+void enl_model_compound_folds (const EnlReference *ref, uint32_t *fold);
+
+/* Left-out errors (predicted - published) and standard deviations for any folds. */
+void enl_model_left_out (const EnlModel *model, const uint32_t *fold, double *error, double *sd);
+
+/* Half width, in standard deviations, that holds nine tenths of the rows for which `use` is true
+ * and which are not in `skip_fold` (ENL_NONE: none); NAN below `at_least` rows. */
+double enl_model_width_of (const double *error, const double *sd, const bool *use,
+                           const uint32_t *fold, uint32_t skip_fold, uint32_t n, uint32_t at_least);
+
+/* The file, in a new byte array. */
+GByteArray *enl_model_write (const EnlModel *model, const EnlReference *ref) ENL_MUST_USE;
+/* Reads it again; `ref` must be the table it was made from. Copies what it needs of `bytes`. */
+EnlStatus enl_model_open (const EnlReference *ref, const char *bytes, size_t size, EnlModel **out,
+                          EnlError *err) ENL_MUST_USE;

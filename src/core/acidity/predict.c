@@ -1,0 +1,237 @@
+#include "core/acidity/predict.h"
+
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "core/acidity/gaussian.h"
+#include "core/molecule/elements.h"
+
+/* Uncertainty that a new measurement would have by itself: as most rows of the table. */
+#define PUBLISHED_SIGMA 0.2
+/* Share of the prior variance of the smooth parts that may be left before a site counts as unlike
+ * anything measured. */
+#define NOVEL_SHARE 0.75
+/* Precedents weigh at least this much. */
+#define LEAST_WEIGHT 0.01
+
+struct EnlPredictor {
+  const EnlReference *ref;
+  EnlConstants *constants;
+  EnlModel *model;
+  bool site_seen[ENL_N_ELEMENTS]; /* elements of acidic atoms in the table */
+  bool seen[ENL_N_ELEMENTS];      /* elements anywhere in its molecules */
+  uint32_t *compound;             /* first row of the compound of every row */
+};
+
+EnlStatus
+enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, EnlPredictor **out,
+                    EnlError *err)
+{
+  g_autoptr (EnlPredictor) predictor = g_new0 (EnlPredictor, 1);
+  EnlStatus status;
+
+  *out = NULL;
+  predictor->ref = ref;
+  if ((status = enl_model_open (ref, bytes, size, &predictor->model, err)) != ENL_OK ||
+      (status = enl_constants_new (&predictor->constants, err)) != ENL_OK)
+    return status;
+  predictor->compound = g_new (uint32_t, enl_reference_rows (ref) + 1);
+  enl_model_compound_folds (ref, predictor->compound);
+  for (uint32_t i = 0; i < enl_reference_rows (ref); i++) {
+    const EnlReferenceRow *row = enl_reference_row (ref, i);
+    predictor->site_seen[enl_molecule_atom (row->mol, row->site)->element] = true;
+    for (uint32_t k = 0; k < enl_molecule_atoms (row->mol); k++)
+      predictor->seen[enl_molecule_atom (row->mol, k)->element] = true;
+  }
+  predictor->seen[1] = true;
+  *out = g_steal_pointer (&predictor);
+  return ENL_OK;
+}
+
+void
+enl_predictor_free (EnlPredictor *predictor)
+{
+  if (!predictor)
+    return;
+  enl_model_free (predictor->model);
+  enl_constants_free (predictor->constants);
+  g_free (predictor->compound);
+  g_free (predictor);
+}
+
+/* ---- one molecule ---- */
+
+typedef struct {
+  const EnlPredictor *predictor;
+  EnlSiteSet *sites;
+  uint32_t n, m;    /* rows of the table, sites */
+  double *k;        /* covariance of every row with every site, n x m */
+  double *alike;    /* its smooth parts as a share of the prior ones, n x m */
+  double *weight;   /* weight of every row in the prediction of every site, n x m */
+  double *prior;    /* variance of each site before anything is known */
+  double *smooth;   /* that of the smooth parts alone */
+  double *variance; /* variance that is left */
+} Batch;
+
+static void
+batch_clear (Batch *batch)
+{
+  enl_site_set_free (batch->sites);
+  g_free (batch->k);
+  g_free (batch->alike);
+  g_free (batch->weight);
+  g_free (batch->prior);
+  g_free (batch->smooth);
+  g_free (batch->variance);
+}
+
+static void
+describe (Batch *batch, const EnlMolecule *mol, const uint32_t *atom, EnlSolvent solvent)
+{
+  const EnlModel *model = batch->predictor->model;
+  g_autoptr (EnlSurvey) survey = enl_survey_new (mol, batch->predictor->constants);
+  g_autoptr (EnlPi) pi = enl_pi_new (mol);
+
+  batch->sites = enl_site_set_new (batch->m);
+  for (uint32_t s = 0; s < batch->m; s++)
+    enl_site_set_describe (batch->sites, s, survey, pi, atom[s], solvent);
+  enl_site_set_link (batch->sites);
+  enl_site_set_standardise (batch->sites, model->centre, model->scale);
+  enl_site_set_scale (batch->sites, &model->hyper);
+}
+
+static void
+fill_covariance (Batch *batch)
+{
+  const EnlModel *model = batch->predictor->model;
+  EnlKernelParts parts;
+
+  for (uint32_t s = 0; s < batch->m; s++) {
+    enl_kernel_parts (&model->hyper, batch->sites, s, batch->sites, s, &parts);
+    batch->prior[s] = enl_kernel_value (&model->hyper, &parts);
+    batch->smooth[s] =
+        enl_kernel_smooth (&model->hyper, &parts) + enl_kernel_environment (&model->hyper, &parts);
+    for (uint32_t i = 0; i < batch->n; i++) {
+      size_t at = (size_t)i * batch->m + s;
+      enl_kernel_parts (&model->hyper, batch->sites, s, model->rows, i, &parts);
+      batch->k[at] = enl_kernel_value (&model->hyper, &parts);
+      batch->alike[at] = (enl_kernel_smooth (&model->hyper, &parts) +
+                          enl_kernel_environment (&model->hyper, &parts)) /
+                         batch->smooth[s];
+    }
+  }
+}
+
+/* Forward substitution gives the variance that is left; the backward one the weight with which
+ * every published value enters. */
+static void
+solve (Batch *batch)
+{
+  const EnlModel *model = batch->predictor->model;
+  size_t total = (size_t)batch->n * batch->m;
+
+  batch->weight = g_new (double, total + 1);
+  memcpy (batch->weight, batch->k, total * sizeof (double));
+  enl_gaussian_forward (model->factor, batch->n, batch->weight, batch->m);
+  memcpy (batch->variance, batch->prior, batch->m * sizeof (double));
+  for (size_t at = 0; at < total; at++)
+    batch->variance[at % batch->m] -= batch->weight[at] * batch->weight[at];
+  enl_gaussian_backward (model->factor, batch->n, batch->weight, batch->m);
+}
+
+/* ---- precedents ---- */
+
+static int
+compare_precedents (const void *a, const void *b)
+{
+  const EnlPrecedent *x = a, *y = b;
+
+  if (x->weight != y->weight)
+    return x->weight > y->weight ? -1 : 1;
+  return (x->row > y->row) - (x->row < y->row);
+}
+
+/* Rows that are both alike and influential: weight in the prediction times likeness of the smooth
+ * parts, as a share of all such products. Of one compound in two solvents the heavier row stands
+ * for both. */
+static void
+pick_precedents (const Batch *batch, uint32_t s, EnlPrediction *out)
+{
+  const uint32_t *compound = batch->predictor->compound;
+  g_autofree EnlPrecedent *all = g_new (EnlPrecedent, batch->n + 1);
+  g_autofree bool *taken = g_new0 (bool, batch->n + 1);
+  double sum = 0;
+
+  for (uint32_t i = 0; i < batch->n; i++) {
+    size_t at = (size_t)i * batch->m + s;
+    all[i] = (EnlPrecedent){i, MAX (batch->weight[at], 0) * batch->alike[at]};
+    sum += all[i].weight;
+  }
+  qsort (all, batch->n, sizeof *all, compare_precedents);
+  out->n_precedents = 0;
+  for (uint32_t i = 0; i < batch->n && out->n_precedents < ENL_MAX_PRECEDENTS; i++) {
+    if (!(all[i].weight > LEAST_WEIGHT * sum))
+      break;
+    if (taken[compound[all[i].row]])
+      continue;
+    taken[compound[all[i].row]] = true;
+    out->precedent[out->n_precedents++] = (EnlPrecedent){all[i].row, all[i].weight / sum};
+  }
+}
+
+/* ---- experience ---- */
+
+static const char *
+strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, uint32_t s)
+{
+  const EnlPredictor *predictor = batch->predictor;
+  double left = batch->variance[s] / batch->smooth[s];
+
+  for (uint32_t i = 0; i < enl_molecule_atoms (mol); i++) {
+    const EnlAtom *a = enl_molecule_atom (mol, i);
+    if (a->unpaired)
+      return "outside its experience: no radical was measured";
+    if (!predictor->seen[a->element])
+      return "outside its experience: no acid with this element was measured";
+  }
+  if (!predictor->site_seen[enl_molecule_atom (mol, atom)->element])
+    return "outside its experience: no hydrogen on this element was measured";
+  if (left > NOVEL_SHARE)
+    return "outside its experience: nothing alike was measured";
+  return NULL;
+}
+
+void
+enl_predictor_run (const EnlPredictor *predictor, const EnlMolecule *mol, const uint32_t *atom,
+                   uint32_t n, EnlSolvent solvent, EnlPrediction *out)
+{
+  const EnlModel *model = predictor->model;
+  Batch batch = {.predictor = predictor, .n = model->rows->n, .m = n};
+
+  g_assert (solvent == ENL_SOLVENT_DMSO || solvent == ENL_SOLVENT_WATER);
+  if (n == 0)
+    return;
+  batch.k = g_new (double, (size_t)batch.n *n + 1);
+  batch.alike = g_new (double, (size_t)batch.n *n + 1);
+  batch.prior = g_new (double, n);
+  batch.smooth = g_new (double, n);
+  batch.variance = g_new (double, n);
+  describe (&batch, mol, atom, solvent);
+  fill_covariance (&batch);
+  solve (&batch);
+  for (uint32_t s = 0; s < n; s++) {
+    double value = ENL_PRIOR_PKA;
+    for (uint32_t i = 0; i < batch.n; i++)
+      value += batch.k[(size_t)i * n + s] * model->alpha[i];
+    double variance = MAX (batch.variance[s], 0) + model->hyper.value[ENL_H_noise] +
+                      PUBLISHED_SIGMA * PUBLISHED_SIGMA;
+    out[s] = (EnlPrediction){
+        .value = value,
+        .half = sqrt (variance) * model->width[enl_acid_class (mol, atom[s])][solvent],
+        .outside = strangeness (&batch, mol, atom[s], s),
+    };
+    pick_precedents (&batch, s, &out[s]);
+  }
+  batch_clear (&batch);
+}

@@ -1,0 +1,217 @@
+/* enolith-fit: makes the model of the estimator.
+ *
+ *   enolith-fit tune ACIDS.tsv OUT.tsv [STEPS [START.tsv]]  finds the hyperparameters
+ *   enolith-fit build ACIDS.tsv HYPER.tsv OUT.bin           fits the model (part of the build)
+ *   enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]    prints left-out scores
+ *   enolith-fit fifths ACIDS.tsv [STEPS]                    tunes on four fifths, scores the fifth
+ */
+#include <math.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+
+#include "core/acidity/validate.h"
+#include "fit/fifths.h"
+#include "fit/tune.h"
+
+#define USUAL_STEPS 60
+
+static int
+fail (const char *what, const EnlError *err)
+{
+  g_autofree char *message = enl_error_message (err);
+
+  fprintf (stderr, "enolith-fit: %s: %s\n", what, message);
+  return EXIT_FAILURE;
+}
+
+static bool
+load (const char *path, char **text, size_t *size, EnlError *err)
+{
+  g_autoptr (GError) error = NULL;
+
+  if (g_file_get_contents (path, text, size, &error))
+    return true;
+  enl_error_set (err, ENL_ERROR_IO, "give a file that can be read", "%s", error->message);
+  return false;
+}
+
+static EnlStatus
+load_reference (const char *path, EnlReference **ref, EnlError *err)
+{
+  g_autofree char *text = NULL;
+  size_t size = 0;
+
+  if (!load (path, &text, &size, err))
+    return ENL_ERROR_IO;
+  return enl_reference_new (text, size, ref, err);
+}
+
+static EnlStatus
+load_hyper (const char *path, EnlHyper *hyper, EnlError *err)
+{
+  g_autofree char *text = NULL;
+  size_t size = 0;
+
+  if (!load (path, &text, &size, err))
+    return ENL_ERROR_IO;
+  return enl_hyper_parse (text, size, hyper, err);
+}
+
+static bool
+save (const char *path, const char *data, size_t size, EnlError *err)
+{
+  g_autoptr (GError) error = NULL;
+
+  if (g_file_set_contents (path, data, (gssize)size, &error))
+    return true;
+  enl_error_set (err, ENL_ERROR_IO, "give a place that can be written", "%s", error->message);
+  return false;
+}
+
+static char *
+write_hyper (const EnlHyper *hyper)
+{
+  GString *text = g_string_new (
+      "# estimator.tsv: hyperparameters of the estimator; names as in src/core/acidity/hyper.h\n"
+      "# and descriptor.h. Made by\n"
+      "#   enolith-fit tune resources/acids.tsv resources/estimator.tsv\n"
+      "# Variances in pK units squared; relevances without unit, 1 where nothing was learned.\n"
+      "name\tvalue\n");
+
+  for (uint32_t i = 0; i < ENL_N_HYPER; i++) {
+    g_autofree char *name = enl_hyper_name (i);
+    char number[G_ASCII_DTOSTR_BUF_SIZE];
+    g_string_append_printf (text, "%s\t%s\n", name,
+                            g_ascii_formatd (number, sizeof number, "%.5g", hyper->value[i]));
+  }
+  return g_string_free (text, FALSE);
+}
+
+static int
+tune (int argc, char **argv)
+{
+  g_autoptr (EnlReference) ref = NULL;
+  g_autoptr (EnlTuner) tuner = NULL;
+  uint32_t steps = argc > 4 ? (uint32_t)atoi (argv[4]) : USUAL_STEPS;
+  EnlHyper hyper;
+  EnlError err;
+
+  enl_hyper_init (&hyper);
+  if (load_reference (argv[2], &ref, &err) != ENL_OK)
+    return fail (argv[2], &err);
+  if (argc > 5 && load_hyper (argv[5], &hyper, &err) != ENL_OK)
+    return fail (argv[5], &err);
+  if (enl_tuner_new (ref, &tuner, &err) != ENL_OK)
+    return fail ("tune", &err);
+  enl_tuner_run (tuner, &hyper, steps, true);
+  g_autofree char *text = write_hyper (&hyper);
+  if (!save (argv[3], text, strlen (text), &err))
+    return fail (argv[3], &err);
+  return EXIT_SUCCESS;
+}
+
+static EnlStatus
+fit_files (char **argv, EnlReference **ref, GByteArray **bytes, EnlError *err)
+{
+  g_autoptr (EnlModel) model = NULL;
+  EnlHyper hyper;
+  EnlStatus status;
+
+  if ((status = load_reference (argv[2], ref, err)) != ENL_OK ||
+      (status = load_hyper (argv[3], &hyper, err)) != ENL_OK ||
+      (status = enl_model_build (*ref, &hyper, &model, err)) != ENL_OK)
+    return status;
+  *bytes = enl_model_write (model, *ref);
+  return ENL_OK;
+}
+
+static int
+build (int argc, char **argv)
+{
+  g_autoptr (EnlReference) ref = NULL;
+  g_autoptr (GByteArray) bytes = NULL;
+  EnlError err;
+
+  if (argc != 5)
+    return EXIT_FAILURE;
+  if (fit_files (argv, &ref, &bytes, &err) != ENL_OK)
+    return fail ("build", &err);
+  if (!save (argv[4], (const char *)bytes->data, bytes->len, &err))
+    return fail (argv[4], &err);
+  return EXIT_SUCCESS;
+}
+
+static int
+print_rows (const EnlReference *ref, const GByteArray *bytes)
+{
+  g_autofree EnlLeftOut *row = NULL;
+  EnlError err;
+
+  if (enl_validate_rows (ref, (const char *)bytes->data, bytes->len, ENL_FOLD_COMPOUND, &row,
+                         &err) != ENL_OK)
+    return fail ("score", &err);
+  printf ("name\tsmiles\tsolvent\tpka\tpredicted\tsd\thalf\n");
+  for (uint32_t i = 0; i < enl_reference_rows (ref); i++) {
+    const EnlReferenceRow *r = enl_reference_row (ref, i);
+    printf ("%s\t%s\t%s\t%g\t%.2f\t%.2f\t%.2f\n", r->name, r->smiles, enl_solvent_id (r->solvent),
+            r->pka, row[i].predicted, row[i].sd, row[i].half);
+  }
+  return EXIT_SUCCESS;
+}
+
+static int
+score (int argc, char **argv)
+{
+  g_autoptr (EnlReference) ref = NULL;
+  g_autoptr (GByteArray) bytes = NULL;
+  g_autofree EnlScore *scores = NULL;
+  EnlFold fold = ENL_FOLD_COMPOUND;
+  uint32_t n = 0;
+  EnlError err;
+
+  if (fit_files (argv, &ref, &bytes, &err) != ENL_OK)
+    return fail ("score", &err);
+  if (argc > 4 && !enl_fold_parse (argv[4], &fold))
+    return print_rows (ref, bytes);
+  if (enl_validate (ref, (const char *)bytes->data, bytes->len, fold, &scores, &n, &err) != ENL_OK)
+    return fail ("score", &err);
+  for (uint32_t i = 0; i < n; i++)
+    printf ("%-6s %-24s n %3u  MAE %.2f  median %.2f  rmse %.2f  max %.1f  cover %.2f\n",
+            enl_solvent_id (scores[i].solvent), scores[i].class_name, scores[i].n, scores[i].mae,
+            scores[i].median, scores[i].rmse, scores[i].max, scores[i].cover90);
+  return EXIT_SUCCESS;
+}
+
+static int
+fifths (int argc, char **argv)
+{
+  g_autofree char *text = NULL;
+  size_t size = 0;
+  EnlError err;
+
+  if (!load (argv[2], &text, &size, &err) ||
+      enl_fifths_print (text, size, argc > 3 ? (uint32_t)atoi (argv[3]) : USUAL_STEPS, &err) !=
+          ENL_OK)
+    return fail ("fifths", &err);
+  return EXIT_SUCCESS;
+}
+
+int
+main (int argc, char **argv)
+{
+  static const struct {
+    const char *verb;
+    int (*run) (int argc, char **argv);
+    int least;
+  } verb[] = {{"tune", tune, 4}, {"build", build, 5}, {"score", score, 4}, {"fifths", fifths, 3}};
+
+  for (size_t i = 0; argc > 1 && i < ENL_COUNT (verb); i++)
+    if (strcmp (argv[1], verb[i].verb) == 0 && argc >= verb[i].least)
+      return verb[i].run (argc, argv);
+  fprintf (stderr, "usage: enolith-fit tune ACIDS.tsv OUT.tsv [STEPS [START.tsv]]\n"
+                   "       enolith-fit build ACIDS.tsv HYPER.tsv OUT.bin\n"
+                   "       enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]\n"
+                   "       enolith-fit fifths ACIDS.tsv [STEPS]\n");
+  return 2;
+}
