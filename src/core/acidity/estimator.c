@@ -182,14 +182,6 @@ conjugate_base (const EnlMolecule *mol, uint32_t atom)
   return base;
 }
 
-/* A published value of the neutral molecule stands: someone measured that very hydrogen. */
-static void
-keep_published (const Run *run, EnlEstimate *e, const EnlEstimate *neutral)
-{
-  if (neutral->basis == ENL_BASIS_MEASURED)
-    *e = *neutral;
-}
-
 static void
 fill_seconds (const Run *run)
 {
@@ -206,7 +198,9 @@ fill_seconds (const Run *run)
     EnlEstimate *e = &run->out[i];
     if (!run->sites->site[i].second)
       continue;
-    keep_published (run, e, &neutral[i]);
+    /* A published value of the neutral molecule stands: someone measured that very hydrogen. */
+    if (neutral[i].basis == ENL_BASIS_MEASURED)
+      *e = neutral[i];
     if (e->basis == ENL_BASIS_MEASURED)
       continue;
     e->value = MAX (e->value, floor); /* a second loss is never easier than the first */
