@@ -77,12 +77,12 @@ write_hyper (const EnlHyper *hyper)
       "# and descriptor.h. Made by\n"
       "#   enolith-fit tune resources/acids.tsv resources/estimator.tsv\n"
       "# Variances in pK units squared; relevances without unit, 1 where nothing was learned.\n"
-      "name\tvalue\n");
+      "name\tvalue\tsource\n");
 
   for (uint32_t i = 0; i < ENL_N_HYPER; i++) {
     g_autofree char *name = enl_hyper_name (i);
     char number[G_ASCII_DTOSTR_BUF_SIZE];
-    g_string_append_printf (text, "%s\t%s\n", name,
+    g_string_append_printf (text, "%s\t%s\tfit\n", name,
                             g_ascii_formatd (number, sizeof number, "%.5g", hyper->value[i]));
   }
   return g_string_free (text, FALSE);
