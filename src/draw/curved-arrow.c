@@ -5,12 +5,14 @@
 #include "draw/plane.h"
 
 /* In atom label sizes. */
-#define DOT_RADIUS   0.085
-#define DOT_DISTANCE 0.30 /* between the two dots */
-#define PAIR_ROOM    0.46
-#define HEAD         0.50
-#define START_GAP    0.16
-#define END_GAP      0.20
+#define DOT_RADIUS     0.085
+#define DOT_DISTANCE   0.30 /* between the two dots */
+#define PAIR_ROOM      0.46
+#define PAIR_TURN      1.35 /* radians from the way of its arrow, so that the shaft has room to bend */
+#define PAIR_TURN_COST 40
+#define HEAD           0.50
+#define START_GAP      0.16
+#define END_GAP        0.20
 
 /* How far the shaft bends, in chord lengths; the first that meets nothing is taken. */
 static const double bend[] = {0.42, 0.6, 0.3, 0.85, 1.15, 1.6};
@@ -22,8 +24,23 @@ static const double bend[] = {0.42, 0.6, 0.3, 0.85, 1.15, 1.6};
 #define TIE         1e-6
 #define SAMPLES     16
 
+static EnlPoint
+middle_of (const EnlOutline *outline, uint32_t a, uint32_t b)
+{
+  return (EnlPoint){(outline->at[a].x + outline->at[b].x) / 2,
+                    (outline->at[a].y + outline->at[b].y) / 2};
+}
+
+static EnlPoint
+end_of (const EnlOutline *outline, const EnlArrow *arrow)
+{
+  if (arrow->to_b == ENL_NONE)
+    return outline->at[arrow->to_a];
+  return middle_of (outline, arrow->to_a, arrow->to_b);
+}
+
 EnlLonePair
-enl_lone_pair_draw (EnlOutline *outline, EnlScene *scene, uint32_t atom)
+enl_lone_pair_draw (EnlOutline *outline, EnlScene *scene, uint32_t atom, const EnlArrow *arrow)
 {
   double em = outline->theme->atom_size;
   EnlRect own = outline->label[atom].shown
@@ -41,6 +58,14 @@ enl_lone_pair_draw (EnlOutline *outline, EnlScene *scene, uint32_t atom)
 
   enl_outline_free_angle (outline, atom, &query.toward, &ignored);
   EnlPlace place = enl_obstacles_place (outline->taken, &query);
+  for (int side = -1; arrow && side <= 1; side += 2) {
+    double way = enl_point_angle (outline->at[atom], end_of (outline, arrow));
+    query.toward = way + side * PAIR_TURN;
+    query.turn_cost = PAIR_TURN_COST;
+    EnlPlace other = enl_obstacles_place (outline->taken, &query);
+    if (side < 0 || other.cost < place.cost - TIE)
+      place = other;
+  }
   EnlLonePair pair = {.drawn = true, .at = enl_rect_centre (place.box)};
   pair.out = enl_point_direction (outline->at[atom], pair.at);
   EnlPoint along = enl_point_left (pair.out);
@@ -65,13 +90,6 @@ enl_arrow_head_draw (EnlScene *scene, EnlPoint tip, EnlPoint direction, double s
   return notch;
 }
 
-static EnlPoint
-middle_of (const EnlOutline *outline, uint32_t a, uint32_t b)
-{
-  return (EnlPoint){(outline->at[a].x + outline->at[b].x) / 2,
-                    (outline->at[a].y + outline->at[b].y) / 2};
-}
-
 /* Free distance that an arrow keeps from the middle of a bond: clear of its second line. */
 static double
 bond_clearance (const EnlOutline *outline, uint32_t a, uint32_t b)
@@ -88,38 +106,52 @@ typedef struct {
   double cost;
 } Shaft;
 
+/* A point beside the middle of a bond, on the side that `ref` points to, and the way out there. */
+static EnlPoint
+beside_bond (const EnlOutline *outline, uint32_t a, uint32_t b, EnlPoint ref, double gap,
+             EnlPoint *out)
+{
+  EnlPoint n = enl_point_left (enl_point_direction (outline->at[a], outline->at[b]));
+
+  if (n.x * ref.x + n.y * ref.y < 0)
+    n = (EnlPoint){-n.x, -n.y};
+  *out = n;
+  return enl_point_add (middle_of (outline, a, b), n, gap + bond_clearance (outline, a, b));
+}
+
+/* Shaft of one arrow that bends by `bulge` chord lengths to the left (negative: to the right). */
 static void
 aim (const EnlOutline *outline, const EnlArrow *arrow, const EnlLonePair *pair, double bulge,
      Shaft *shaft)
 {
   double em = outline->theme->atom_size;
-  bool from_pair = arrow->from_b == ENL_NONE, to_atom = arrow->to_b == ENL_NONE;
+  bool from_pair = arrow->from_b == ENL_NONE;
   EnlPoint start =
-      from_pair ? outline->at[arrow->from_a] : middle_of (outline, arrow->from_a, arrow->from_b);
-  EnlPoint end = to_atom ? outline->at[arrow->to_a] : middle_of (outline, arrow->to_a, arrow->to_b);
-  bool drawn = from_pair && pair[arrow->from_a].drawn;
+      from_pair ? pair[arrow->from_a].at : middle_of (outline, arrow->from_a, arrow->from_b);
+  EnlPoint end = end_of (outline, arrow), out;
+  EnlPoint n = enl_point_left (enl_point_direction (start, end));
+  double length = fmax (enl_point_distance (start, end), 0.6 * outline->theme->bond_length);
+  double high = fabs (bulge) * length;
+  EnlPoint side = {bulge < 0 ? -n.x : n.x, bulge < 0 ? -n.y : n.y}, p1, p2;
 
-  if (drawn)
-    start = enl_point_add (pair[arrow->from_a].at, pair[arrow->from_a].out, START_GAP * em);
-  EnlPoint chord = {end.x - start.x, end.y - start.y},
-           n = enl_point_left (enl_point_direction (start, end));
-  double length = hypot (chord.x, chord.y),
-         high = bulge * fmax (length, 0.8 * outline->theme->bond_length);
-  EnlPoint p1 = enl_point_add (enl_point_add (start, chord, 0.15), n, high);
-  EnlPoint p2 = enl_point_add (enl_point_add (start, chord, 0.85), n, high);
-  if (drawn)
-    p1 = enl_point_add (enl_point_add (start, pair[arrow->from_a].out, 0.75 * fabs (high)), n,
-                        0.25 * high);
-  if (!from_pair)
-    start = enl_point_add (start, enl_point_direction (start, p1),
-                           START_GAP * em + bond_clearance (outline, arrow->from_a, arrow->from_b));
-  if (to_atom) {
+  if (from_pair) {
+    out = pair[arrow->from_a].out;
+    start = enl_point_add (start, out, START_GAP * em);
+    out = enl_point_add (out, side, 0.6);
+  } else {
+    start = beside_bond (outline, arrow->from_a, arrow->from_b, side, START_GAP * em, &out);
+  }
+  p1 = enl_point_add (start, out, high);
+  if (arrow->to_b != ENL_NONE) {
+    EnlPoint ref = from_pair ? (EnlPoint){start.x - end.x, start.y - end.y} : side;
+    end = beside_bond (outline, arrow->to_a, arrow->to_b, ref, END_GAP * em, &out);
+    p2 = enl_point_add (end, out, high);
+  } else {
+    p2 = enl_point_add (enl_point_add (end, side, high), enl_point_direction (end, start),
+                        0.15 * length);
     end = enl_outline_trim (outline, arrow->to_a, p2, end);
     if (!outline->label[arrow->to_a].shown)
       end = enl_point_add (end, enl_point_direction (end, p2), END_GAP * em);
-  } else {
-    end = enl_point_add (end, enl_point_direction (end, p2),
-                         END_GAP * em + bond_clearance (outline, arrow->to_a, arrow->to_b));
   }
   shaft->tip = end;
   shaft->heading = enl_point_direction (p2, end);

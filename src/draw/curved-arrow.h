@@ -12,8 +12,10 @@ typedef struct {
   EnlPoint out; /* unit vector away from the atom */
 } EnlLonePair;
 
-/* Draws two dots beside the atom where there is room and keeps the place. */
-EnlLonePair enl_lone_pair_draw (EnlOutline *outline, EnlScene *scene, uint32_t atom);
+/* Draws two dots beside the atom where there is room and keeps the place. `arrow`, when not NULL,
+ * will start here: the pair then stands on the side of the arrow's end. */
+EnlLonePair enl_lone_pair_draw (EnlOutline *outline, EnlScene *scene, uint32_t atom,
+                                const EnlArrow *arrow);
 
 /* Draws one arrow, bent to the side where it meets least, and keeps its place. `pair` has one
  * entry an atom. */

@@ -66,21 +66,26 @@ anionic_centre (const EnlMolecule *mol, uint32_t atom)
     int balance = enl_molecule_atom (mol, next)->charge;
     if (balance <= 0)
       continue;
-    for (uint32_t j = 0; j < enl_molecule_degree (mol, next); j++)
-      balance += MIN (0, enl_molecule_atom (mol, enl_molecule_neighbour (mol, next, j))->charge);
-    if (balance >= 0)
+    bool lightest = true; /* of two negative ends, the carbanion is the centre */
+    for (uint32_t j = 0; j < enl_molecule_degree (mol, next); j++) {
+      const EnlAtom *end = enl_molecule_atom (mol, enl_molecule_neighbour (mol, next, j));
+      balance += MIN (0, end->charge);
+      if (end->charge < 0 && end->element < enl_molecule_atom (mol, atom)->element)
+        lightest = false;
+    }
+    if (balance >= 0 || !lightest)
       return false;
   }
   return true;
 }
 
-static bool
-arrow_starts_at (const EnlArrow *arrow, uint32_t n, uint32_t atom)
+static const EnlArrow *
+arrow_from (const EnlArrow *arrow, uint32_t n, uint32_t atom)
 {
   for (uint32_t i = 0; i < n; i++)
     if (arrow[i].from_b == ENL_NONE && arrow[i].from_a == atom)
-      return true;
-  return false;
+      return &arrow[i];
+  return NULL;
 }
 
 EnlScene *
@@ -96,9 +101,11 @@ enl_form_scene (const EnlMolecule *form, const EnlMolecule *layout, const EnlArr
   enl_outline_draw_bonds (outline, scene);
   enl_outline_draw_labels (outline, scene);
   enl_outline_draw_hit_areas (outline, scene);
-  for (uint32_t i = 0; i < outline->n_atoms; i++)
-    if (anionic_centre (mol, i) || arrow_starts_at (arrow, n_arrows, i))
-      pair[i] = enl_lone_pair_draw (outline, scene, i);
+  for (uint32_t i = 0; i < outline->n_atoms; i++) {
+    const EnlArrow *start = arrow_from (arrow, n_arrows, i);
+    if (start || anionic_centre (mol, i))
+      pair[i] = enl_lone_pair_draw (outline, scene, i, start);
+  }
   for (uint32_t i = 0; i < n_arrows; i++)
     enl_curved_arrow_draw (outline, scene, &arrow[i], pair);
   return scene;
@@ -106,10 +113,16 @@ enl_form_scene (const EnlMolecule *form, const EnlMolecule *layout, const EnlArr
 
 /* ---- hybrid ---- */
 
+static double
+charge_radius (const EnlOutline *outline, double charge)
+{
+  return DISC_AT_ONE * outline->theme->bond_length * sqrt (fabs (charge));
+}
+
 static void
 draw_charge_area (const EnlOutline *outline, EnlScene *scene, uint32_t atom, double charge)
 {
-  double radius = DISC_AT_ONE * outline->theme->bond_length * sqrt (fabs (charge));
+  double radius = charge_radius (outline, charge);
   EnlTone tone = charge < 0 ? ENL_TONE_CHARGE : ENL_TONE_CHARGE_PLUS;
   EnlShape *disc = enl_scene_disc (scene, outline->at[atom], radius, tone);
 
@@ -140,14 +153,15 @@ draw_charge_number (EnlOutline *outline, EnlScene *scene, uint32_t atom, double 
   EnlRect ink =
       enl_text_box (theme->family, (EnlPoint){0, 0}, text, theme->small_size, true, 0.5, 0.5);
   EnlRect own = enl_outline_atom_box (outline, atom);
-  EnlPlaceQuery query = {.anchor = outline->at[atom],
-                         .clearance = 0.3 * fmin (own.width, own.height),
-                         .width = ink.width,
-                         .height = ink.height,
-                         .pad = 0.06 * theme->bond_length,
-                         .hook = {ink.width / 2, ink.height / 2},
-                         .reach = 2 * theme->bond_length,
-                         .leader_gap = theme->bond_length};
+  EnlPlaceQuery query = {
+      .anchor = outline->at[atom],
+      .clearance = fmax (0.3 * fmin (own.width, own.height), 0.9 * charge_radius (outline, charge)),
+      .width = ink.width,
+      .height = ink.height,
+      .pad = 0.06 * theme->bond_length,
+      .hook = {ink.width / 2, ink.height / 2},
+      .reach = 2 * theme->bond_length,
+      .leader_gap = theme->bond_length};
   double ignored;
 
   enl_outline_free_angle (outline, atom, &query.toward, &ignored);
@@ -172,8 +186,13 @@ enl_hybrid_scene (const EnlForms *forms, const EnlMolecule *layout, const EnlThe
   outline->hide_charges = true;
   enl_outline_plan_labels (outline);
   for (uint32_t i = 0; i < outline->n_atoms; i++)
-    if (fabs (forms->charge[i]) >= SEEN_CHARGE)
+    if (fabs (forms->charge[i]) >= SEEN_CHARGE) {
+      double inner = 0.7 * charge_radius (outline, forms->charge[i]);
       draw_charge_area (outline, scene, i, forms->charge[i]);
+      enl_obstacles_add_box (
+          outline->taken,
+          (EnlRect){outline->at[i].x - inner, outline->at[i].y - inner, 2 * inner, 2 * inner});
+    }
   enl_outline_draw_bonds (outline, scene);
   enl_outline_draw_labels (outline, scene);
   enl_outline_draw_hit_areas (outline, scene);

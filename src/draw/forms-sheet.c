@@ -13,6 +13,8 @@
 #define ARROW_LENGTH  0.85
 #define ARROW_HEAD    0.20
 #define BRACKET_FOOT  0.22
+#define HYBRID        "hybrid"
+#define HYBRID_REMARK "charge by area"
 #define NARROWEST     3.2 /* width of a card, bond lengths */
 
 typedef struct {
@@ -103,11 +105,11 @@ copies_words (const EnlForm *form)
   return form->copies > 1 ? g_strdup_printf ("\u00D7\u00A0%u, together", form->copies) : NULL;
 }
 
-/* The grid of forms between brackets; returns the y below it. */
-static double
+/* The grid of forms between brackets; returns where it ends. */
+static EnlPoint
 draw_grid (const Sheet *s, double x, double y)
 {
-  double gap = ARROW_ROOM * s->bond, row_gap = s->theme->margin, pad = s->theme->margin / 2;
+  double gap = ARROW_ROOM * s->bond, row_gap = s->theme->margin, pad = 0.7 * s->theme->margin;
   uint32_t rows = (s->shown + s->columns - 1) / s->columns;
   double bottom = y + rows * s->height + (rows - 1) * row_gap;
 
@@ -125,7 +127,7 @@ draw_grid (const Sheet *s, double x, double y)
     right += gap; /* arrows that lead to the next row */
   draw_bracket (s, x - pad, y - pad, bottom + pad, 1);
   draw_bracket (s, right + pad, y - pad, bottom + pad, -1);
-  return bottom + pad;
+  return (EnlPoint){right + pad, bottom + pad};
 }
 
 static double
@@ -153,6 +155,17 @@ draw_remarks (const Sheet *s, double x, double y, double width)
   return y;
 }
 
+static double
+words_width (const EnlTheme *theme, const char *strong, const char *weak)
+{
+  double a, b = 0, height;
+
+  enl_text_measure (theme->family, strong, theme->text_size, true, &a, &height);
+  if (weak)
+    enl_text_measure (theme->family, weak, theme->small_size, false, &b, &height);
+  return a + theme->small_size + b;
+}
+
 static void
 plan_cards (Sheet *s)
 {
@@ -161,12 +174,9 @@ plan_cards (Sheet *s)
 
   for (uint32_t i = 0; i < s->shown; i++) {
     g_autofree char *copies = copies_words (&s->sheet->forms->form[i]);
-    double strong, weak = 0, height;
-    enl_text_measure (theme->family, "under 1\u00A0%", theme->text_size, true, &strong, &height);
-    if (copies)
-      enl_text_measure (theme->family, copies, theme->small_size, false, &weak, &height);
-    words = fmax (words, strong + theme->small_size + weak);
+    words = fmax (words, words_width (theme, "under 1\u00A0%", copies));
   }
+  words = fmax (words, words_width (theme, HYBRID, HYBRID_REMARK));
   s->label = enl_text_line_height (theme->family, theme->text_size);
   s->width = fmax (fmax (NARROWEST * s->bond, s->room.width), words) + 2 * theme->margin;
   s->height = s->room.height + s->label + 2.5 * theme->margin;
@@ -189,9 +199,13 @@ enl_forms_sheet (const EnlFormsSheet *sheet, const EnlTheme *theme)
     y = enl_scene_paragraph (s.scene, (EnlPoint){x, y}, width, sheet->title, theme->title_size,
                              true, ENL_TONE_INK) +
         theme->margin;
-  y = draw_grid (&s, x, y + theme->margin / 2) + theme->margin;
-  draw_card (&s, s.hybrid, x, y, "hybrid", "charge by area");
-  y = draw_remarks (&s, x, y + s.height, width);
+  y += 0.7 * theme->margin;
+  EnlPoint end = draw_grid (&s, x, y);
+  bool beside = s.shown < (sheet->columns ? sheet->columns : USUAL_COLUMNS);
+  EnlPoint hybrid =
+      beside ? (EnlPoint){end.x + 1.5 * theme->margin, y} : (EnlPoint){x, end.y + theme->margin};
+  draw_card (&s, s.hybrid, hybrid.x, hybrid.y, HYBRID, HYBRID_REMARK);
+  y = draw_remarks (&s, x, fmax (end.y, hybrid.y + s.height) + 0.3 * theme->margin, width);
   EnlRect all = enl_scene_bounds (s.scene);
   enl_scene_set_size (s.scene, all.x + all.width + theme->margin, y + theme->margin);
   for (uint32_t i = 0; i < s.shown; i++)

@@ -266,7 +266,9 @@ plan_charge (EnlOutline *outline, uint32_t atom)
     EnlPiece piece = make_piece (theme, markup, charge_size (theme), anchor, align,
                                  enl_theme_element_tone (a->element));
     EnlRect box = enl_rect_grow (piece.box, 1);
-    double score = 2 * i + 10 * bonds_under (outline, enl_rect_grow (box, 1.5)) +
+    bool before_hydrogens = charge_place[i].x < 0 && around.x < symbol.x - 1;
+    double score = 2 * i + (before_hydrogens ? 12 : 0) +
+                   10 * bonds_under (outline, enl_rect_grow (box, 1.5)) +
                    10 * enl_obstacles_in_box (outline->taken, piece.box);
     if (score < best_score - TIE) {
       best_score = score;

@@ -137,6 +137,7 @@ judge (const EnlObstacles *obstacles, const EnlPlaceQuery *query, double angle, 
        double best)
 {
   EnlPoint u = enl_point_polar (angle), centre = query->anchor;
+  double turn_cost = query->turn_cost > 0 ? query->turn_cost : COST_OF_TURN;
   double away = query->clearance + gap + box_support (query->width, query->height, u);
 
   centre = enl_point_add (centre, u, away);

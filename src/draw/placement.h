@@ -29,6 +29,7 @@ typedef struct {
   EnlPoint hook;        /* point of the box, from its corner, that shall be near the anchor */
   double hook_radius;   /* px of drawing around the hook; a leader ends there */
   double toward;        /* preferred angle, as enl_point_polar */
+  double turn_cost;     /* for a half turn away from it; 0: the usual */
   double reach;         /* farthest gap between anchor drawing and box that may be tried */
   double leader_gap;    /* a way to the hook longer than this needs a leader line */
   EnlRect crowd;        /* leaving this box (the drawing so far) costs a little; width 0: ignore */

@@ -225,6 +225,7 @@ static double
 draw_legend (const Sheet *s, double x, double y)
 {
   static const EnlBasis basis[] = {ENL_BASIS_MEASURED, ENL_BASIS_ESTIMATED, ENL_BASIS_LAB};
+  static const char *const word[] = {"measured", "estimated", "lab value"};
   double line = enl_text_line_height (s->theme->family, s->theme->small_size);
   EnlPoint at = {x, y + line / 2};
 
@@ -232,10 +233,8 @@ draw_legend (const Sheet *s, double x, double y)
     double r = s->theme->badge_radius, width, height;
     enl_whisker_mark_draw (s->scene, (EnlPoint){at.x + r, at.y}, basis[i], ENL_TONE_SITE);
     at.x += 2 * r;
-    enl_text_measure (s->theme->family, enl_basis_text (basis[i]), s->theme->small_size, false,
-                      &width, &height);
-    enl_scene_text (s->scene, at, enl_basis_text (basis[i]), s->theme->small_size, false, 0, 0.5,
-                    ENL_TONE_MUTED);
+    enl_text_measure (s->theme->family, word[i], s->theme->small_size, false, &width, &height);
+    enl_scene_text (s->scene, at, word[i], s->theme->small_size, false, 0, 0.5, ENL_TONE_MUTED);
     at.x += width + r;
   }
   return y + line;
