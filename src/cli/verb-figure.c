@@ -28,28 +28,18 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
   return ENL_OK;
 }
 
-static char *
-caption (const EnlOptions *options)
-{
-  return g_strdup_printf ("pKa in %s%s, 25 °C; bars are 90 %% intervals",
-                          enl_solvent_label (options->conditions.solvent),
-                          options->conditions.solvent == ENL_SOLVENT_THF ? " (DMSO-based footing)"
-                                                                         : "");
-}
-
 static EnlScene *
 substrates_scene (const Run *run, const EnlTheme *theme)
 {
   g_autofree EnlSubstrateCard *card = g_new0 (EnlSubstrateCard, run->analysis->len);
-  g_autofree char *text = caption (run->options);
 
   for (guint i = 0; i < run->analysis->len; i++) {
     const EnlAnalysis *a = g_ptr_array_index (run->analysis, i);
     card[i] = (EnlSubstrateCard){
         g_ptr_array_index (run->name, i), a->mol, a->sites, a->estimate, a->rank, ENL_NONE, NULL};
   }
-  EnlSubstratesSheet sheet = {card, run->analysis->len, 0, 0, run->options->conditions.solvent,
-                              text};
+  const EnlSubstratesSheet sheet = {
+      .card = card, .n_cards = run->analysis->len, .solvent = run->options->conditions.solvent};
   return enl_substrates_sheet (&sheet, theme);
 }
 

@@ -5,14 +5,16 @@
 #include "draw/plane.h"
 
 /* In atom label sizes. */
-#define DOT_RADIUS     0.085
-#define DOT_DISTANCE   0.30 /* between the two dots */
-#define PAIR_ROOM      0.46
-#define PAIR_TURN      1.35 /* radians from the way of its arrow, so that the shaft has room to bend */
+#define DOT_RADIUS   0.085
+#define DOT_DISTANCE 0.30 /* between the two dots */
+#define PAIR_ROOM    0.46
+#define HEAD         0.50
+#define START_GAP    0.16
+#define END_GAP      0.20
+
+/* Radians from the way of its arrow to a lone pair, so that the shaft has room to bend. */
+#define PAIR_TURN      1.35
 #define PAIR_TURN_COST 40
-#define HEAD           0.50
-#define START_GAP      0.16
-#define END_GAP        0.20
 
 /* How far the shaft bends, in chord lengths; the first that meets nothing is taken. */
 static const double bend[] = {0.42, 0.6, 0.3, 0.85, 1.15, 1.6};

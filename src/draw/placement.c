@@ -146,8 +146,7 @@ judge (const EnlObstacles *obstacles, const EnlPlaceQuery *query, double angle, 
   EnlPoint hook = {box.x + query->hook.x, box.y + query->hook.y};
   EnlPlace place = {.box = box};
   place.gap = enl_point_distance (query->anchor, hook) - query->clearance - query->hook_radius;
-  place.cost = fmax (gap, place.gap) +
-               COST_OF_TURN * enl_angle_between (angle, query->toward) / G_PI +
+  place.cost = fmax (gap, place.gap) + turn_cost * enl_angle_between (angle, query->toward) / G_PI +
                COST_OF_CROWD * growth (query->crowd, box);
   if (place.gap > query->leader_gap) {
     EnlPoint way = enl_point_direction (query->anchor, hook);

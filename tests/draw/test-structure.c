@@ -240,28 +240,11 @@ static const char *const assorted[] = {
     "CC(=O)C[C@@H]1C[C@H]1CC(C)=O",
 };
 
-START_TEST (nothing_collides)
+/* Every site has exactly one value. */
+static void
+check_values (const EnlScene *scene, const SampleSites *sites, const char *label)
 {
-  g_autoptr (EnlMolecule) mol = sample_molecule (assorted[_i]);
-  g_autoptr (SampleSites) sites = sample_sites (mol);
-
-  for (EnlThemeName name = 0; name < ENL_N_THEMES; name++) {
-    g_autoptr (EnlScene) scene = draw (mol, sites, name);
-    g_autofree char *faults = enl_scene_faults (scene);
-    g_autofree char *collisions = sample_collisions (scene);
-    ck_assert_msg (!faults, "%s, %s: %s", assorted[_i], enl_theme_id (name), faults);
-    ck_assert_msg (!collisions, "%s, %s: %s", assorted[_i], enl_theme_id (name), collisions);
-  }
-}
-END_TEST
-
-/* Every site has exactly one value, and a mark or at least toned hydrogens at every atom. */
-START_TEST (every_site_is_shown_once)
-{
-  g_autoptr (EnlMolecule) mol = sample_molecule (assorted[_i]);
-  g_autoptr (SampleSites) sites = sample_sites (mol);
-  g_autoptr (EnlScene) scene = draw (mol, sites, ENL_THEME_LIGHT);
-  double value_size = enl_theme_get (ENL_THEME_LIGHT)->text_size;
+  double value_size = enl_scene_theme (scene)->text_size;
 
   for (uint32_t s = 0; s < sites->sites.n_sites; s++) {
     uint32_t values = 0;
@@ -270,12 +253,10 @@ START_TEST (every_site_is_shown_once)
       values += shape->kind == ENL_SHAPE_TEXT && shape->site == s && shape->bold &&
                 fabs (shape->size - value_size) < 1e-9;
     }
-    ck_assert_msg (values == 1, "%s: site %u has %u values", assorted[_i], s, values);
+    ck_assert_msg (values == 1, "%s: site %u has %u values", label, s, values);
   }
 }
-END_TEST
 
-/* Nobody at the back of a room reads less than 20 px. */
 static double
 smallest_text (const EnlScene *scene)
 {
@@ -289,13 +270,22 @@ smallest_text (const EnlScene *scene)
   return least;
 }
 
-START_TEST (projector_text_is_large)
+START_TEST (nothing_collides)
 {
   g_autoptr (EnlMolecule) mol = sample_molecule (assorted[_i]);
   g_autoptr (SampleSites) sites = sample_sites (mol);
-  g_autoptr (EnlScene) scene = draw (mol, sites, ENL_THEME_PROJECTOR);
 
-  ck_assert_double_ge (smallest_text (scene), 20);
+  for (EnlThemeName name = 0; name < ENL_N_THEMES; name++) {
+    g_autoptr (EnlScene) scene = draw (mol, sites, name);
+    g_autofree char *faults = enl_scene_faults (scene);
+    g_autofree char *collisions = sample_collisions (scene);
+    ck_assert_msg (!faults, "%s, %s: %s", assorted[_i], enl_theme_id (name), faults);
+    ck_assert_msg (!collisions, "%s, %s: %s", assorted[_i], enl_theme_id (name), collisions);
+    check_values (scene, sites, assorted[_i]);
+    /* nobody at the back of a room reads less */
+    if (name == ENL_THEME_PROJECTOR)
+      ck_assert_double_ge (smallest_text (scene), 20);
+  }
 }
 END_TEST
 
@@ -327,8 +317,6 @@ structure_suite (void)
   tcase_add_test (tc, hydrogens_turn_to_the_free_side);
   tcase_add_test (tc, second_lines_point_into_the_ring);
   tcase_add_loop_test (tc, nothing_collides, 0, (int)ENL_COUNT (assorted));
-  tcase_add_loop_test (tc, every_site_is_shown_once, 0, (int)ENL_COUNT (assorted));
-  tcase_add_loop_test (tc, projector_text_is_large, 0, (int)ENL_COUNT (assorted));
   tcase_add_test (tc, numbers_are_input_positions);
   suite_add_tcase (suite, tc);
   return suite;
