@@ -1,0 +1,199 @@
+"""The terminal contract: columns, values, exit codes, messages.
+
+Usage: check-cli.py ENOLITH_CLI
+Published values: resources/acids.tsv (source named there). Formula and mass of the examples: IUPAC
+abridged atomic weights, worked by hand. InChIKeys: from memory of public registries.
+"""
+import json
+import os
+import subprocess
+import sys
+import tempfile
+
+CLI = sys.argv[1]
+failures = []
+count = 0
+
+
+def run(*arguments, text=None, code=0):
+    raw = text.encode() if isinstance(text, str) else text
+    done = subprocess.run([CLI, *arguments], input=raw or b'', capture_output=True, timeout=60)
+    out, err = done.stdout.decode(), done.stderr.decode(errors='replace')
+    expect('%s: exit code %d' % (' '.join(arguments)[:60], code), done.returncode == code,
+           'got %d, %s' % (done.returncode, err[:300]))
+    return out, err
+
+
+def expect(what, fact, detail=''):
+    global count
+    count += 1
+    if not fact:
+        failures.append('%s (%s)' % (what, detail))
+
+
+def table(text):
+    lines = text.rstrip('\n').split('\n')
+    names = lines[0].split('\t')
+    rows = [dict(zip(names, line.split('\t'))) for line in lines[1:]]
+    return names, rows
+
+
+def tsv(*arguments, **options):
+    return table(run(*arguments[:1], '--format', 'tsv', *arguments[1:], **options)[0])
+
+
+def check_sites():
+    names, rows = tsv('sites', 'CC(=O)CC(=O)OCC')
+    expect('columns of sites', names == ['substrate', 'rank', 'atoms', 'element', 'hydrogens', 'position',
+                                         'pka', 'low', 'high', 'basis', 'precedents'], names)
+    first, second = rows[0], rows[1]
+    expect('CH2 between both carbonyls first', first['atoms'] == '4' and first['hydrogens'] == '2', first)
+    expect('measured 14.2 in DMSO', first['basis'] == 'measured' and float(first['pka']) == 14.2, first)
+    expect('its source among the precedents', 'ethyl acetoacetate 14.2 in DMSO' in first['precedents'] and
+           'Olmstead & Bordwell' in first['precedents'], first)
+    expect('then the terminal CH3', second['atoms'] == '1' and second['hydrogens'] == '3', second)
+    expect('no OCH2', all('8' not in r['atoms'].split(',') for r in rows) and len(rows) == 2, rows)
+    for name in ('benzaldehyde', 'benzophenone', 'pivalaldehyde'):
+        _, rows = tsv('sites', name)
+        expect('%s: a reason in a row of rank 0' % name, rows[0]['rank'] == '0' and len(rows[0]['position']) > 15,
+               rows)
+    _, rows = tsv('sites', 'acetophenone')
+    expect('acetophenone: three alpha hydrogens, 24.7', rows[0]['rank'] == '1' and rows[0]['hydrogens'] == '3'
+           and float(rows[0]['pka']) == 24.7, rows)
+    _, rows = tsv('sites', '--solvent', 'water', 'ethyl acetoacetate')
+    expect('ethyl acetoacetate in water 10.68', float(rows[0]['pka']) == 10.68, rows)
+    _, rows = tsv('sites', '--solvent', 'thf', 'ethyl acetoacetate')
+    expect('nothing is measured in THF', all(r['basis'] == 'estimated' for r in rows), rows)
+    expect('the interval holds the value', all(float(r['low']) < float(r['pka']) < float(r['high']) for r in rows),
+           rows)
+
+
+def check_forms():
+    names, rows = tsv('forms', 'acetylacetone')
+    expect('columns of forms', names == ['substrate', 'atom', 'form', 'smiles', 'weight', 'charges'], names)
+    listed = [r for r in rows if r['form'] != 'hybrid']
+    carbanion = [r for r in listed if '[CH-]' in r['smiles']]
+    enolates = [r for r in listed if '[O-]' in r['smiles']]
+    expect('one carbanion form', len(carbanion) == 1, rows)
+    weights = [float(r['weight']) / (2 if 'x 2' in r['form'] else 1) for r in enolates]
+    copies = sum(2 if 'x 2' in r['form'] else 1 for r in enolates)
+    expect('two enolate forms', copies == 2, rows)
+    expect('equal and above the carbanion', max(weights) - min(weights) < 1e-6 and
+           min(weights) > float(carbanion[0]['weight']), rows)
+    expect('weights add up', abs(sum(float(r['weight']) for r in listed) - 1) < 1e-3, rows)
+
+
+def check_bases():
+    names, rows = tsv('bases', 'ethyl acetoacetate')
+    expect('columns of bases', names == ['substrate', 'atom', 'base', 'pkah', 'gap', 'conversion', 'low', 'high',
+                                         'selectivity', 'verdict', 'cautions'], names)
+    base = {r['base']: r for r in rows}
+    expect('every base is there once', len(rows) == len(base) == 80, len(rows))
+    expect('ethoxide takes it off', base['naoet']['verdict'] == 'complete', base['naoet'])
+    expect('LDA has no number in DMSO', base['lda']['gap'] == '', base['lda'])
+    _, rows = tsv('bases', '--solvent', 'thf', '--equiv', '1.1', 'acetophenone')
+    lda = [r for r in rows if r['base'] == 'lda'][0]
+    expect('LDA in THF: complete', lda['verdict'] == 'complete' and float(lda['gap']) > 8, lda)
+    out, _ = run('bases', 'ethyl acetoacetate')
+    expect('the deferral stands below', 'qualified person' in out)
+
+
+def check_molecule():
+    names, rows = tsv('molecule', 'CC(=O)CC(=O)OCC', 'acetone')
+    expect('columns of molecule', names == ['substrate', 'formula', 'molar_mass', 'heavy_atoms', 'hydrogens',
+                                            'rings', 'smiles', 'inchikey'], names)
+    expect('ethyl acetoacetate C6H10O3', rows[0]['formula'] == 'C6H10O3' and rows[0]['heavy_atoms'] == '9', rows)
+    expect('130.143 g/mol', abs(float(rows[0]['molar_mass']) - 130.143) < 0.01, rows)
+    expect('hydrogens per atom', rows[0]['hydrogens'] == '3,0,0,2,0,0,0,2,3', rows)
+    expect('acetone by its key', rows[1]['inchikey'] == 'CSCPPACGZOOCGX-UHFFFAOYSA-N', rows)
+    _, rows = tsv('molecule', 'InChI=1S/C3H6O/c1-3(2)4/h1-2H3')
+    expect('InChI is read', rows[0]['formula'] == 'C3H6O', rows)
+
+
+def check_formats():
+    out, _ = run('sites', '--format', 'json', 'acetophenone', 'benzaldehyde')
+    objects = [json.loads(line) for line in out.splitlines()]
+    expect('json: one object a line', len(objects) >= 2 and objects[0]['pka'] == 24.7, out)
+    expect('json: no value is null', objects[-1]['rank'] != 0 or objects[-1]['pka'] is None, out)
+    environment = dict(os.environ, LC_ALL='de_DE.UTF-8')
+    done = subprocess.run([CLI, 'sites', '--format', 'tsv', 'acetophenone'], capture_output=True, text=True,
+                          env=environment)
+    expect('a point in every locale', '24.70' in done.stdout, done.stdout)
+    out, _ = run('sites', '--format', 'tsv', '-', text='CC=O first one\n\n# remark\nethyl acetoacetate\nCC#N\n')
+    substrates = [r['substrate'] for r in table(out)[1]]
+    expect('lines, names and remarks', substrates[0] == 'first one' and 'ethyl acetoacetate' in substrates and
+           substrates[-1] == 'CC#N', substrates)
+
+
+def check_failures():
+    out, err = run('sites', '--format', 'tsv', 'C1CC', 'acetophenone', code=1)
+    expect('place, fault and advice', err.startswith('C1CC: line 1, column 2: ') and ';' in err, err)
+    expect('the others are still printed', 'acetophenone' in out, out)
+    _, err = run('sites', 'CC(=O)Cx', code=1)
+    lines = err.split('\n')
+    expect('a caret under the character', lines[1].strip() == 'CC(=O)Cx' and
+           lines[2].index('^') - 4 == 7, err)
+    _, err = run('sites', '--format', 'tsv', '-', text='CC=O\nC(C\n', code=1)
+    expect('the line in the list', 'line 2, column' in err, err)
+    for name, data in (('empty input', b''), ('spaces', b'  \n\t\n'), ('binary', bytes(range(256)) * 40),
+                       ('10 MB of noise', b'qZ7)(=#' * 1500000), ('10 MB of lines', b'q(Z7\n' * 100000),
+                       ('5,000 atoms', b'C' * 5000), ('100,000 brackets', b'(' * 100000)):
+        _, err = run('sites', '--format', 'tsv', '-', text=data, code=1)
+        expect('%s: a message' % name, len(err) > 10, err[:200])
+    with tempfile.TemporaryDirectory() as folder:
+        for name, data in (('a.mol', b'nothing\n'), ('b.sdf', b'\x00\x01\x02'), ('c.enolith', b'{"format"'),
+                           ('d.smi', b'')):
+            path = os.path.join(folder, name)
+            with open(path, 'wb') as stream:
+                stream.write(data)
+            _, err = run('molecule', path, code=1)
+            expect('%s: a message' % name, name in err or 'record' in err, err)
+        _, err = run('molecule', os.path.join(folder, 'missing.smi'), code=1)
+        expect('a missing file', 'missing.smi' in err, err)
+
+
+def check_usage():
+    for arguments in ((), ('boil', 'CC'), ('sites',), ('sites', '--solvent', 'tar', 'CC'),
+                      ('sites', '--colour', 'CC'), ('sites', '--format'), ('bases', '--equiv', '-1', 'CC=O'),
+                      ('bases', '--equiv', 'nan', 'CC=O'), ('forms', '--atom', '0', 'CC=O'),
+                      ('figure', 'CC=O'), ('figure', '--view', 'forms', '--out', 'x.gif', 'CC=O'),
+                      ('validate', '--fold', 'paper'), ('validate', 'CC')):
+        _, err = run(*arguments, code=2)
+        expect('%s: explained' % (arguments,), len(err) > 10, err)
+    for arguments in (('--help',), ('--version',), ('sites', '--help')):
+        out, _ = run(*arguments)
+        expect('%s prints' % (arguments,), len(out) > 5)
+    _, err = run('forms', '--atom', '2', 'CC(=O)C', code=1)
+    expect('an atom that is no site', 'no acidic site' in err, err)
+
+
+def check_figures():
+    with tempfile.TemporaryDirectory() as folder:
+        for view in ('substrates', 'forms'):
+            for ending, magic in (('png', b'\x89PNG'), ('svg', b'<?xml'), ('pdf', b'%PDF')):
+                path = os.path.join(folder, '%s.%s' % (view, ending))
+                run('figure', '--view', view, '--out', path, '--width-mm', '120', 'acetylacetone', 'camphor')
+                with open(path, 'rb') as stream:
+                    data = stream.read()
+                expect('%s as %s' % (view, ending), data.startswith(magic) and len(data) > 2000, len(data))
+        run('figure', '--view', 'forms', '--out', '/no/such/folder/a.png', 'acetone', code=1)
+
+
+def check_validate():
+    names, rows = tsv('validate')
+    expect('columns of validate', names == ['class', 'solvent', 'n', 'mae', 'median', 'rmse', 'max', 'cover90'], names)
+    found = {(r['class'], r['solvent']): r for r in rows}
+    expect('alpha C-H of carbonyls in DMSO', int(found[('alpha C-H of carbonyls', 'dmso')]['n']) >= 70, rows)
+
+
+def main():
+    for check in (check_sites, check_forms, check_bases, check_molecule, check_formats, check_failures,
+                  check_usage, check_figures, check_validate):
+        check()
+    print('%d checks, %d failed' % (count, len(failures)))
+    print('\n'.join(failures))
+    sys.exit(1 if failures else 0)
+
+
+if __name__ == '__main__':
+    main()
