@@ -20,7 +20,8 @@ from rdkit.Chem import rdCIPLabeler, rdMolDescriptors
 
 RDLogger.DisableLog("rdApp.*")
 
-COLUMNS = ["input", "formula", "heavy", "hydrogens", "rings", "aromatic", "classes",
+COLUMNS = ["input", "formula", "heavy", "hydrogens", "rings", "aromatic", "isotopes",
+           "unpaired", "aromatic_bonds", "classes",
            "stereo_classes", "centres", "double_bonds", "smiles", "flat", "kekule", "as_input",
            "labels"]
 TOKEN = re.compile(r"[A-Za-z\[\]()=#@+\-/\\%.:0-9*~$]+$")
@@ -242,6 +243,26 @@ def compare_rings(tally, smiles, row, mol):
     tally.check("rings", smiles, int(row["rings"]) == size, f"{row['rings']} against {size}")
 
 
+def unpaired(atom):
+    """RDKit's radical electrons; the core counts none on d and f elements."""
+    number = atom.GetAtomicNum()
+    block = [(21, 30), (39, 48), (57, 80), (89, 118)]
+    if any(low <= number <= high for low, high in block):
+        return 0
+    return atom.GetNumRadicalElectrons()
+
+
+def compare_bonds_and_electrons(tally, smiles, row, mol, atoms):
+    theirs = {"-".join(str(p) for p in sorted(end.GetIntProp("at") for end in
+                                              (b.GetBeginAtom(), b.GetEndAtom())))
+              for b in mol.GetBonds() if b.GetIsAromatic()}
+    ours = set(filter(None, row["aromatic_bonds"].split(",")))
+    tally.check("aromatic bonds", smiles, ours == theirs, f"{sorted(ours ^ theirs)}")
+    tally.check("isotopes", smiles, numbers(row["isotopes"]) == [a.GetIsotope() for a in atoms])
+    theirs = [unpaired(a) for a in atoms]
+    tally.check("unpaired electrons", smiles, numbers(row["unpaired"]) == theirs, f"{theirs}")
+
+
 def compare(tally, smiles, row):
     mol = read(smiles)
     if isinstance(row, str):
@@ -261,6 +282,7 @@ def compare(tally, smiles, row):
     compare_rings(tally, smiles, row, mol)
     theirs = [int(at[p].GetIsAromatic()) for p in places]
     tally.check("aromatic atoms", smiles, numbers(row["aromatic"]) == theirs)
+    compare_bonds_and_electrons(tally, smiles, row, mol, [at[p] for p in places])
     compare_classes(tally, "classes", smiles, row, mol, False)
     compare_classes(tally, "classes with stereo", smiles, row, mol, True)
     centres, bonds = count_stereo(mol)

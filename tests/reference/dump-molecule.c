@@ -1,6 +1,7 @@
 /* Prints what the core makes of SMILES, one a line on standard input, as tab-separated columns for
  * check-molecules.py:
  * input positions of the atoms, formula, heavy atoms, hydrogens per atom, rings, aromatic atoms,
+ * isotopes, unpaired electrons, aromatic bonds as pairs of input positions,
  * symmetry classes without and with stereo, stereocentres, stereo double bonds, canonical SMILES,
  * the same without stereo, Kekulé, in input order, and CIP labels. An unreadable line gives "error"
  * and the message.
@@ -22,6 +23,23 @@ print_numbers (const uint32_t *number, uint32_t n)
 }
 
 static void
+print_aromatic_bonds (const EnlMolecule *mol)
+{
+  const char *comma = "";
+
+  for (uint32_t b = 0; b < enl_molecule_bonds (mol); b++) {
+    const EnlBond *bond = enl_molecule_bond (mol, b);
+    uint32_t from = enl_molecule_atom (mol, bond->from)->input;
+    uint32_t to = enl_molecule_atom (mol, bond->to)->input;
+    if (!bond->aromatic)
+      continue;
+    printf ("%s%u-%u", comma, MIN (from, to), MAX (from, to));
+    comma = ",";
+  }
+  putchar ('\t');
+}
+
+static void
 print_atoms (const EnlMolecule *mol)
 {
   uint32_t n = enl_molecule_atoms (mol);
@@ -39,6 +57,13 @@ print_atoms (const EnlMolecule *mol)
   for (uint32_t v = 0; v < n; v++)
     number[v] = enl_molecule_atom (mol, v)->aromatic;
   print_numbers (number, n);
+  for (uint32_t v = 0; v < n; v++)
+    number[v] = enl_molecule_atom (mol, v)->isotope;
+  print_numbers (number, n);
+  for (uint32_t v = 0; v < n; v++)
+    number[v] = enl_molecule_atom (mol, v)->unpaired;
+  print_numbers (number, n);
+  print_aromatic_bonds (mol);
   for (int stereo = 0; stereo < 2; stereo++) {
     enl_symmetry_classes (mol, stereo, number);
     print_numbers (number, n);
