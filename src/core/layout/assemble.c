@@ -44,16 +44,19 @@ mean_way (const Assembly *a, const EnlSketch *part, const bool *core, uint32_t c
   return sum;
 }
 
-/* Nearness to what is placed, for choosing between the two faces of a block. */
+/* Nearness to what is placed around, for choosing between two places. */
 static double
 crowd_of (const Assembly *a, EnlSpot spot)
 {
+  const double sight = 2.5;
   double sum = 0;
 
   for (uint32_t i = 0; i < a->sketch->n_atoms; i++)
     if (a->placed[i]) {
       EnlSpot out = enl_spot_minus (spot, a->sketch->spot[i]);
-      sum += 1 / (0.1 + enl_spot_dot (out, out));
+      double square = enl_spot_dot (out, out);
+      if (square < sight * sight)
+        sum += 1 / (0.1 + square);
     }
   return sum;
 }
@@ -150,30 +153,61 @@ is_straight (const EnlSketch *s, uint32_t atom)
   return doubles > 1 && enl_sketch_degree (s, atom) == 2;
 }
 
+/* True when a bond from `atom` along `way` goes on in a zigzag from the two bonds before. */
+static bool
+goes_on_in_zigzag (const Assembly *a, uint32_t atom, EnlSpot way)
+{
+  const EnlSketch *s = a->sketch;
+  uint32_t back = a->from[atom], more = back == ENL_NONE ? ENL_NONE : a->from[back];
+
+  if (more == ENL_NONE)
+    return false;
+  EnlSpot first = enl_spot_minus (s->spot[back], s->spot[more]);
+  EnlSpot second = enl_spot_minus (s->spot[atom], s->spot[back]);
+  return enl_spot_cross (first, second) * enl_spot_cross (second, way) < 0;
+}
+
+/* How bad it is to go on from `atom` at this angle. */
+static double
+bend_cost (const Assembly *a, uint32_t atom, double angle)
+{
+  const double zigzag_bonus = 1.5;
+  EnlSpot way = {cos (angle), sin (angle)};
+
+  return crowd_of (a, enl_spot_plus (a->sketch->spot[atom], way)) -
+         (goes_on_in_zigzag (a, atom, way) ? zigzag_bonus : 0);
+}
+
 /* One new neighbour beside one taken: straight on at sp atoms, else the side with more room, and
  * a zigzag where there is room on both. */
 static double
 choose_bend (const Assembly *a, uint32_t atom, double taken)
 {
-  const EnlSketch *s = a->sketch;
-  const double zigzag_bonus = 1;
-  double crowd[2];
+  double left = taken + 2 * G_PI / 3, right = taken - 2 * G_PI / 3;
 
-  if (is_straight (s, atom))
+  if (is_straight (a->sketch, atom))
     return taken + G_PI;
-  for (int k = 0; k < 2; k++) {
-    double angle = taken + (k ? -1 : 1) * 2 * G_PI / 3;
-    EnlSpot way = {cos (angle), sin (angle)};
-    crowd[k] = crowd_of (a, enl_spot_plus (s->spot[atom], way));
-    uint32_t back = a->from[atom], more = back == ENL_NONE ? ENL_NONE : a->from[back];
-    if (more == ENL_NONE)
-      continue;
-    EnlSpot first = enl_spot_minus (s->spot[back], s->spot[more]);
-    EnlSpot second = enl_spot_minus (s->spot[atom], s->spot[back]);
-    if (enl_spot_cross (first, second) * enl_spot_cross (second, way) < 0)
-      crowd[k] -= zigzag_bonus;
+  return bend_cost (a, atom, right) < bend_cost (a, atom, left) - 1e-6 ? right : left;
+}
+
+/* Two or more new neighbours: the largest branch gets the direction that continues the chain best.
+ */
+static void
+order_branches (const Assembly *a, uint32_t atom, uint32_t *list, const double *made, uint32_t n)
+{
+  g_autofree bool *in = g_new (bool, a->sketch->n_atoms + 1);
+  uint32_t largest = 0, best = 0, size = 0;
+
+  for (uint32_t k = 0; k < n; k++) {
+    uint32_t branch = enl_branch_atoms (a->sketch, list[k], atom, in);
+    if (branch > size)
+      size = branch, largest = k;
+    if (bend_cost (a, atom, made[k]) < bend_cost (a, atom, made[best]) - 1e-6)
+      best = k;
   }
-  return taken + (crowd[1] < crowd[0] - 1e-6 ? -1 : 1) * 2 * G_PI / 3;
+  uint32_t swap = list[best];
+  list[best] = list[largest];
+  list[largest] = swap;
 }
 
 /* The neighbours of `atom` that a chain bond leads to and that are not placed. */
@@ -211,6 +245,8 @@ place_chain_neighbours (Assembly *a, uint32_t atom)
   enl_spread_directions (taken, n_taken, made, n);
   if (n == 1 && n_taken == 1)
     made[0] = choose_bend (a, atom, only);
+  else if (n > 1 && n_taken == 1)
+    order_branches (a, atom, list, made, n);
   for (uint32_t k = 0; k < n; k++) {
     EnlSpot spot = {s->spot[atom].x + cos (made[k]), s->spot[atom].y + sin (made[k])};
     put (a, list[k], a->hinted[list[k]] ? s->spot[list[k]] : spot, atom);

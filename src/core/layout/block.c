@@ -8,6 +8,7 @@
 #include "core/layout/orient.h"
 #include "core/layout/relax.h"
 #include "core/layout/solid.h"
+#include "core/layout/spring.h"
 #include "core/layout/strain.h"
 #include "core/layout/stubs.h"
 
@@ -27,6 +28,9 @@ static const double later_template_malus = 0.6;
 
 /* Mirror images of templates are for neighbours that do not fit otherwise. */
 static const double mirror_malus = 0.3;
+
+/* Ways of laying templates on a part of a block that are tried: each is a run of CoordGen. */
+static const uint32_t most_runs = 24;
 
 /* Bonds of redrawn cages may be foreshortened within these. */
 static const double short_bond = 0.75, long_bond = 1.35;
@@ -96,6 +100,7 @@ typedef struct {
   Choice *choice;
   uint32_t n_atoms, n_earlier; /* of the template; templates of this system tried before */
   bool matched;
+  uint32_t *runs; /* of CoordGen for part templates */
 } TemplateTrial;
 
 /* A template and its mirror image. What the drawing itself strains is no fault of this fit. */
@@ -130,8 +135,8 @@ consider_part_template (const uint32_t *image, const EnlSpot *spot, void *data)
     ring->spot[image[t]] = spot[t];
     held[image[t]] = true;
   }
-  if (!enl_coordgen_draw (ring, held))
-    return true;
+  if (++*of->runs > most_runs || !enl_coordgen_draw (ring, held))
+    return false;
   consider (of->choice, ring->spot, fused_template_malus, ENL_BLOCK_REDRAWN);
   enl_relax (ring, short_bond, long_bond, false, NULL);
   consider (of->choice, ring->spot, fused_template_malus, ENL_BLOCK_REDRAWN);
@@ -153,8 +158,11 @@ consider_templates (Choice *choice, const EnlTemplates *templates)
 static void
 consider_part_templates (Choice *choice, const EnlTemplates *templates)
 {
+  uint32_t runs = 0;
+
   for (uint32_t k = 0; k < enl_templates_count (templates); k++) {
-    TemplateTrial trial = {.choice = choice, .n_atoms = enl_template_atoms (templates, k)};
+    TemplateTrial trial = {
+        .choice = choice, .n_atoms = enl_template_atoms (templates, k), .runs = &runs};
     enl_template_match (templates, k, choice->ring, false, consider_part_template, &trial);
   }
 }
@@ -196,8 +204,9 @@ consider_present (Choice *choice)
 static void
 consider_alone (Choice *choice)
 {
-  if (enl_coordgen_draw (choice->ring, NULL))
-    consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
+  if (!enl_coordgen_draw (choice->ring, NULL))
+    enl_spring_draw (choice->ring);
+  consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
 }
 
 EnlBlockPicture

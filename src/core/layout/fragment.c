@@ -12,10 +12,6 @@
 #include "core/layout/repair.h"
 #include "core/layout/strain.h"
 
-/* CoordGen's time grows steeply with size (seconds above a hundred atoms): beyond this our own
- * assembly is used. */
-static const uint32_t coordgen_limit = 100;
-
 /* A picture with less strain than this is final; another must be better by that. */
 static const double good_enough = 0.3, better_by = 0.1;
 
@@ -168,7 +164,7 @@ draw_by_coordgen (EnlSketch *sketch, const EnlTemplates *templates, bool *uprigh
 {
   Cutout cut;
 
-  if (sketch->n_atoms > coordgen_limit || !enl_coordgen_draw (sketch, NULL))
+  if (!enl_coordgen_draw (sketch, NULL))
     return false;
   if (choose_block (sketch, templates, &cut)) {
     draw_around (sketch, &cut, templates);

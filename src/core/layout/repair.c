@@ -11,13 +11,17 @@
 /* A picture with less crowding than this is left alone. */
 static const double clear_enough = 0.02;
 
-/* A move must gain this much; turning a branch out of its ideal angle costs this per 30 degrees. */
+/* What counts as a gain; turning a branch out of its ideal angle costs this per 30 degrees. */
 static const double worth_it = 0.02, bend_cost = 0.25;
 
-/* Clashes looked at per round, bonds tried per clash, rounds, and pair tests in all (about two
- * seconds). */
-static const uint32_t max_clashes = 4, max_bonds = 14, max_rounds = 80;
-static const double max_work = 3e8;
+/* Clashes looked at per round, bonds tried per clash, rounds, and atoms weighed in all trials
+ * together (about two seconds). */
+static const uint32_t max_clashes = 4, max_bonds = 14, max_rounds = 200;
+
+/* Rounds without gain before giving up, and rounds in which a moved bond rests. */
+static const uint32_t max_vain = 12, barred_rounds = 6;
+
+static const double max_work = 1e7;
 
 static const double turns[] = {20, -20, 40, -40, 60, -60, 90, -90};
 
@@ -28,6 +32,10 @@ typedef struct {
   EnlSpot *best;  /* spots after the best trial of the round */
   double gain;
   bool *inside;
+  uint32_t bond;   /* under trial */
+  uint32_t chosen; /* bond of the best trial */
+  uint32_t round;
+  uint32_t *barred; /* round until which a bond is not tried again */
 } Repair;
 
 /* ---- sides ---- */
@@ -63,22 +71,21 @@ static void
 judge (Repair *r, double before, double malus)
 {
   double after = enl_strain_between (r->sketch, r->inside);
+  r->work += r->sketch->n_atoms;
   double gain = before - after - malus;
 
   if (gain > r->gain + 1e-9 && enl_sketch_sides_right (r->sketch)) {
     r->gain = gain;
+    r->chosen = r->bond;
     memcpy (r->best, r->sketch->spot, r->sketch->n_atoms * sizeof (EnlSpot));
   }
   restore (r);
 }
 
-static uint32_t
+static void
 mark_branch (Repair *r, uint32_t start, uint32_t barrier)
 {
-  uint32_t n = enl_branch_atoms (r->sketch, start, barrier, r->inside);
-
-  r->work += 4.0 * n * (r->sketch->n_atoms - n);
-  return n;
+  enl_branch_atoms (r->sketch, start, barrier, r->inside);
 }
 
 static void
@@ -128,7 +135,6 @@ try_turns (Repair *r, uint32_t near, uint32_t far)
   mark_branch (r, far, near);
   double before = enl_strain_between (r->sketch, r->inside);
   for (size_t k = 0; k < G_N_ELEMENTS (turns); k++) {
-    r->work += r->sketch->n_atoms * 8.0;
     turn_inside (r, r->sketch->spot[near], turns[k] * G_PI / 180);
     judge (r, before, bend_cost * fabs (turns[k]) / 30);
   }
@@ -154,9 +160,10 @@ try_exchange (Repair *r, uint32_t centre, uint32_t a, uint32_t b)
   mark_branch (r, a, centre);
   turn_inside (r, middle, angle);
   double gain = before - enl_strain_crowding (r->sketch);
-  r->work += 2.0 * r->sketch->n_atoms * r->sketch->n_atoms;
+  r->work += 2.0 * r->sketch->n_atoms;
   if (gain > r->gain + 1e-9 && enl_sketch_sides_right (r->sketch)) {
     r->gain = gain;
+    r->chosen = r->bond;
     memcpy (r->best, r->sketch->spot, r->sketch->n_atoms * sizeof (EnlSpot));
   }
   restore (r);
@@ -219,34 +226,65 @@ try_path (Repair *r, const EnlClash *clash)
   uint32_t length = find_path (s, clash->a, clash->b, path), tried = 0;
 
   for (uint32_t k = 0; k < length && r->work < max_work; k++) {
-    try_exchanges (r, path[k]);
+    r->bond = s->via[s->first[path[k]]];
+    if (r->barred[r->bond] <= r->round)
+      try_exchanges (r, path[k]);
     for (uint32_t l = s->first[path[k]]; l < s->first[path[k] + 1]; l++) {
       bool on_path = k + 1 < length && s->neighbour[l] == path[k + 1];
       bool at_end = k == 0 || k + 1 == length;
       if (s->bond[s->via[l]].block != ENL_NONE || (!on_path && !at_end) || tried >= max_bonds)
         continue;
       tried++;
+      r->bond = s->via[l];
+      if (r->barred[r->bond] > r->round)
+        continue;
       try_bond (r, path[k], s->neighbour[l]);
     }
   }
 }
 
-/* One round: the best move for the worst clashes. */
+/* One round: the best move for the worst clashes, even when it is a step back, without the bonds
+ * moved lately (tabu search: Glover, ORSA J. Comput. 1989, 1, 190). */
 static bool
-improve_once (Repair *r)
+move_once (Repair *r)
 {
   uint32_t n_clashes;
   g_autofree EnlClash *clash = enl_strain_clashes (r->sketch, &n_clashes);
 
-  r->work += 2.0 * r->sketch->n_atoms * r->sketch->n_atoms;
-  r->gain = worth_it;
+  r->gain = -INFINITY;
   memcpy (r->saved, r->sketch->spot, r->sketch->n_atoms * sizeof (EnlSpot));
   for (uint32_t k = 0; k < n_clashes && k < max_clashes; k++)
     try_path (r, &clash[k]);
-  if (r->gain <= worth_it)
+  if (!isfinite (r->gain))
     return false;
   memcpy (r->sketch->spot, r->best, r->sketch->n_atoms * sizeof (EnlSpot));
+  r->barred[r->chosen] = r->round + barred_rounds;
   return true;
+}
+
+/* Moves until nothing crowds or nothing has helped for a while; ends with the best picture seen. */
+static void
+move_branches (Repair *r)
+{
+  size_t size = r->sketch->n_atoms * sizeof (EnlSpot);
+  g_autofree EnlSpot *finest = g_memdup2 (r->sketch->spot, size);
+  double least = enl_strain_crowding (r->sketch), bent = 0;
+  uint32_t vain = 0;
+
+  for (r->round = 1; r->round < max_rounds && vain < max_vain && r->work < max_work; r->round++) {
+    double before = enl_strain_crowding (r->sketch);
+    if (least < clear_enough || !move_once (r))
+      break;
+    double after = enl_strain_crowding (r->sketch);
+    bent += fmax (0, before - after - r->gain); /* what turning out of shape has cost */
+    vain++;
+    if (after + bent >= least - worth_it)
+      continue;
+    least = after + bent;
+    vain = 0;
+    memcpy (finest, r->sketch->spot, size);
+  }
+  memcpy (r->sketch->spot, finest, size);
 }
 
 static double
@@ -287,11 +325,15 @@ enl_repair_crowding (EnlSketch *sketch)
   const double plays[] = {0.08, 0.12};
   g_autofree EnlSpot *room = g_new0 (EnlSpot, 2 * sketch->n_atoms + 1);
   g_autofree bool *inside = g_new0 (bool, sketch->n_atoms + 1);
-  Repair r = {.sketch = sketch, .saved = room, .best = room + sketch->n_atoms, .inside = inside};
+  g_autofree uint32_t *barred = g_new0 (uint32_t, sketch->n_bonds + 1);
+  Repair r = {.sketch = sketch,
+              .saved = room,
+              .best = room + sketch->n_atoms,
+              .inside = inside,
+              .barred = barred};
 
-  for (uint32_t k = 0; k < max_rounds && r.work < max_work; k++)
-    if (enl_strain_crowding (sketch) < clear_enough || !improve_once (&r))
-      break;
+  if (enl_strain_crowding (sketch) >= clear_enough)
+    move_branches (&r);
   for (size_t k = 0; k < G_N_ELEMENTS (plays); k++)
     if (enl_strain_crowding (sketch) >= clear_enough)
       nudge (sketch, plays[k]);

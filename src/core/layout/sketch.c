@@ -205,6 +205,42 @@ enl_sketch_bonded (const EnlSketch *sketch, uint32_t a, uint32_t b)
   return false;
 }
 
+/* Atoms of the smallest ring through a bond, 0 when there is none; `depth` and `queue` are room for
+ * all atoms. */
+static uint32_t
+smallest_ring_through (const EnlSketch *s, uint32_t bond, uint32_t *depth, uint32_t *queue)
+{
+  uint32_t n = 0;
+
+  for (uint32_t i = 0; i < s->n_atoms; i++)
+    depth[i] = 0;
+  depth[s->bond[bond].from] = 1;
+  queue[n++] = s->bond[bond].from;
+  for (uint32_t done = 0; done < n; done++)
+    for (uint32_t k = s->first[queue[done]]; k < s->first[queue[done] + 1]; k++) {
+      uint32_t other = s->neighbour[k];
+      if (s->via[k] == bond || depth[other])
+        continue;
+      depth[other] = depth[queue[done]] + 1;
+      if (other == s->bond[bond].to)
+        return depth[other];
+      queue[n++] = other;
+    }
+  return 0;
+}
+
+uint32_t
+enl_sketch_widest_ring (const EnlSketch *sketch)
+{
+  g_autofree uint32_t *depth = g_new (uint32_t, sketch->n_atoms + 1);
+  g_autofree uint32_t *queue = g_new (uint32_t, sketch->n_atoms + 1);
+  uint32_t widest = 0;
+
+  for (uint32_t b = 0; b < sketch->n_bonds; b++)
+    widest = MAX (widest, smallest_ring_through (sketch, b, depth, queue));
+  return widest;
+}
+
 /* Twice the signed area of the triangle a, b, c: its sign tells on which side of ab c lies. */
 static double
 turn (EnlSpot a, EnlSpot b, EnlSpot c)

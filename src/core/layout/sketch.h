@@ -52,6 +52,9 @@ uint32_t enl_sketch_degree (const EnlSketch *sketch, uint32_t atom);
 uint32_t enl_sketch_other_end (const EnlSketch *sketch, uint32_t bond, uint32_t atom);
 bool enl_sketch_bonded (const EnlSketch *sketch, uint32_t a, uint32_t b);
 
+/* The largest over all ring bonds of the smallest ring through the bond; 0 without rings. */
+uint32_t enl_sketch_widest_ring (const EnlSketch *sketch);
+
 /* True when every double bond with a side is drawn on that side. */
 bool enl_sketch_sides_right (const EnlSketch *sketch);
 bool enl_sketch_side_right (const EnlSketch *sketch, uint32_t bond);

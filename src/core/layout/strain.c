@@ -4,6 +4,7 @@
 #include <stdlib.h>
 
 #include "core/layout/geometry.h"
+#include "core/layout/grid.h"
 
 /* Distances in bond lengths below which two atoms, or an atom and a bond, crowd each other, and
  * below which one hides the other. Two groups side by side on neighbouring ring atoms stand a whole
@@ -58,78 +59,115 @@ bond_pair_cost (const EnlSketch *sketch, uint32_t b, uint32_t c)
              : 0;
 }
 
-double
-enl_strain_crowding (const EnlSketch *sketch)
-{
-  double cost = 0;
+/* Adds up what atoms and bonds have against those in a grid; every clash is shown to `note` where
+ * that is given. */
+typedef void (*NoteClash) (uint32_t a, uint32_t b, double cost, void *data);
 
-  for (uint32_t i = 0; i < sketch->n_atoms; i++) {
-    for (uint32_t j = 0; j < i; j++)
-      cost += atom_pair_cost (sketch, i, j);
-    for (uint32_t b = 0; b < sketch->n_bonds; b++)
-      cost += atom_bond_cost (sketch, i, b);
-  }
-  for (uint32_t b = 0; b < sketch->n_bonds; b++)
-    for (uint32_t c = 0; c < b; c++)
-      cost += bond_pair_cost (sketch, b, c);
-  return cost;
-}
-
-/* Atoms and bonds on one side of a division; a bond across it belongs to both. */
 typedef struct {
-  uint32_t n_atoms, n_bonds;
-  uint32_t *atom, *bond;
-} Part;
+  const EnlSketch *sketch;
+  const EnlGrid *grid;
+  uint32_t *found;
+  bool each_once; /* mine and the grid are the same set */
+  NoteClash note;
+  void *data;
+  double cost;
+} Tally;
 
 static void
-part_collect (Part *part, const EnlSketch *sketch, const bool *inside, bool which)
+tally_add (Tally *tally, uint32_t a, uint32_t b, double cost)
 {
-  *part = (Part){.atom = g_new (uint32_t, sketch->n_atoms + 1),
-                 .bond = g_new (uint32_t, sketch->n_bonds + 1)};
-  for (uint32_t i = 0; i < sketch->n_atoms; i++)
-    if (inside[i] == which)
-      part->atom[part->n_atoms++] = i;
-  for (uint32_t b = 0; b < sketch->n_bonds; b++)
-    if (inside[sketch->bond[b].from] == which || inside[sketch->bond[b].to] == which)
-      part->bond[part->n_bonds++] = b;
+  tally->cost += cost;
+  if (tally->note && cost > 0)
+    tally->note (a, b, cost, tally->data);
 }
 
 static void
-part_clear (Part *part)
+tally_atom (Tally *tally, uint32_t i)
 {
-  g_free (part->atom);
-  g_free (part->bond);
+  const EnlSketch *s = tally->sketch;
+  uint32_t n = enl_grid_atoms_near (tally->grid, s->spot[i], tally->found);
+
+  for (uint32_t k = 0; k < n; k++)
+    if (tally->found[k] != i && (!tally->each_once || tally->found[k] < i))
+      tally_add (tally, MIN (i, tally->found[k]), MAX (i, tally->found[k]),
+                 atom_pair_cost (s, i, tally->found[k]));
+  n = enl_grid_bonds_near (tally->grid, s->spot[i], tally->found);
+  for (uint32_t k = 0; k < n; k++)
+    tally_add (tally, i, s->bond[tally->found[k]].from, atom_bond_cost (s, i, tally->found[k]));
+}
+
+static void
+tally_bond (Tally *tally, uint32_t b)
+{
+  const EnlSketch *s = tally->sketch;
+  uint32_t n = enl_grid_bonds_near (tally->grid, enl_bond_middle (s, b), tally->found);
+
+  for (uint32_t k = 0; k < n; k++) {
+    uint32_t c = tally->found[k];
+    if (c != b && (!tally->each_once || c < b))
+      tally_add (tally, s->bond[b].from, s->bond[c].from, bond_pair_cost (s, b, c));
+  }
 }
 
 static double
-atoms_against_bonds (const EnlSketch *sketch, const Part *atoms, const Part *bonds)
+tally_all (const EnlSketch *sketch, NoteClash note, void *data)
+{
+  g_autoptr (EnlGrid) grid = enl_grid_new (sketch, NULL);
+  g_autofree uint32_t *found = g_new (uint32_t, MAX (sketch->n_atoms, sketch->n_bonds) + 1);
+  Tally tally = {.sketch = sketch,
+                 .grid = grid,
+                 .found = found,
+                 .each_once = true,
+                 .note = note,
+                 .data = data};
+
+  for (uint32_t i = 0; i < sketch->n_atoms; i++)
+    tally_atom (&tally, i);
+  for (uint32_t b = 0; b < sketch->n_bonds; b++)
+    tally_bond (&tally, b);
+  return tally.cost;
+}
+
+double
+enl_strain_crowding (const EnlSketch *sketch)
+{
+  return tally_all (sketch, NULL, NULL);
+}
+
+/* Atoms of the grid's side against bonds of the inner side, which are not in the grid. */
+static double
+outer_atoms_against_inner_bonds (const EnlSketch *sketch, const bool *inside, const EnlGrid *outer,
+                                 uint32_t *found)
 {
   double cost = 0;
 
-  for (uint32_t i = 0; i < atoms->n_atoms; i++)
-    for (uint32_t b = 0; b < bonds->n_bonds; b++)
-      cost += atom_bond_cost (sketch, atoms->atom[i], bonds->bond[b]);
+  for (uint32_t b = 0; b < sketch->n_bonds; b++) {
+    if (!inside[sketch->bond[b].from] && !inside[sketch->bond[b].to])
+      continue;
+    uint32_t n = enl_grid_atoms_near (outer, enl_bond_middle (sketch, b), found);
+    for (uint32_t k = 0; k < n; k++)
+      cost += atom_bond_cost (sketch, found[k], b);
+  }
   return cost;
 }
 
 double
 enl_strain_between (const EnlSketch *sketch, const bool *inside)
 {
-  Part in, out;
-  double cost;
+  g_autofree bool *outside = g_new (bool, sketch->n_atoms + 1);
+  g_autofree uint32_t *found = g_new (uint32_t, MAX (sketch->n_atoms, sketch->n_bonds) + 1);
 
-  part_collect (&in, sketch, inside, true);
-  part_collect (&out, sketch, inside, false);
-  cost = atoms_against_bonds (sketch, &in, &out) + atoms_against_bonds (sketch, &out, &in);
-  for (uint32_t i = 0; i < in.n_atoms; i++)
-    for (uint32_t j = 0; j < out.n_atoms; j++)
-      cost += atom_pair_cost (sketch, in.atom[i], out.atom[j]);
-  for (uint32_t b = 0; b < in.n_bonds; b++)
-    for (uint32_t c = 0; c < out.n_bonds; c++)
-      cost += bond_pair_cost (sketch, in.bond[b], out.bond[c]);
-  part_clear (&in);
-  part_clear (&out);
-  return cost;
+  for (uint32_t i = 0; i < sketch->n_atoms; i++)
+    outside[i] = !inside[i];
+  g_autoptr (EnlGrid) grid = enl_grid_new (sketch, outside);
+  Tally tally = {.sketch = sketch, .grid = grid, .found = found};
+  for (uint32_t i = 0; i < sketch->n_atoms; i++)
+    if (inside[i])
+      tally_atom (&tally, i);
+  for (uint32_t b = 0; b < sketch->n_bonds; b++)
+    if (inside[sketch->bond[b].from] || inside[sketch->bond[b].to])
+      tally_bond (&tally, b);
+  return tally.cost + outer_atoms_against_inner_bonds (sketch, inside, grid, found);
 }
 
 double
@@ -147,12 +185,10 @@ enl_strain_stretch (const EnlSketch *sketch)
 }
 
 static void
-add_clash (GArray *list, uint32_t a, uint32_t b, double cost)
+add_clash (uint32_t a, uint32_t b, double cost, void *data)
 {
   EnlClash clash = {a, b, cost};
-
-  if (cost > 0)
-    g_array_append_val (list, clash);
+  g_array_append_val ((GArray *)data, clash);
 }
 
 /* Worst first; equal ones by their atoms, so that the order is the same everywhere. */
@@ -173,15 +209,7 @@ enl_strain_clashes (const EnlSketch *sketch, uint32_t *n)
 {
   GArray *list = g_array_new (FALSE, FALSE, sizeof (EnlClash));
 
-  for (uint32_t i = 0; i < sketch->n_atoms; i++) {
-    for (uint32_t j = 0; j < i; j++)
-      add_clash (list, j, i, atom_pair_cost (sketch, i, j));
-    for (uint32_t b = 0; b < sketch->n_bonds; b++)
-      add_clash (list, i, sketch->bond[b].from, atom_bond_cost (sketch, i, b));
-  }
-  for (uint32_t b = 0; b < sketch->n_bonds; b++)
-    for (uint32_t c = 0; c < b; c++)
-      add_clash (list, sketch->bond[b].from, sketch->bond[c].from, bond_pair_cost (sketch, b, c));
+  tally_all (sketch, add_clash, list);
   *n = list->len;
   qsort (list->data, list->len, sizeof (EnlClash), compare_clashes);
   return (EnlClash *)(void *)g_array_free (list, FALSE);
