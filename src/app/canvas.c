@@ -14,7 +14,7 @@ struct _EnlCanvas {
   EnlScene *scene;
   GskRenderNode *node; /* the painted scene at the present size, NULL: paint anew */
   gboolean fit;
-  double largest;
+  double largest, smallest;
 };
 
 static guint picked_signal;
@@ -88,9 +88,9 @@ enl_canvas_measure (GtkWidget *widget, GtkOrientation orientation, int for_size,
   *minimum = *natural = 40;
   if (self->scene) {
     EnlRect frame = enl_scene_frame (self->scene);
-    *natural = (int)(orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height) + 1;
-    if (!self->fit)
-      *minimum = *natural;
+    double size = orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height;
+    *natural = (int)size + 1;
+    *minimum = MAX (*minimum, self->fit ? (int)(self->smallest * size) : *natural);
   }
   *natural = MAX (*natural, *minimum);
 }
@@ -181,7 +181,7 @@ enl_canvas_take_scene (EnlCanvas *self, EnlScene *scene)
   enl_scene_free (self->scene);
   self->scene = scene;
   g_clear_pointer (&self->node, gsk_render_node_unref);
-  if (self->fit)
+  if (self->fit && self->smallest <= 0.0)
     gtk_widget_queue_draw (GTK_WIDGET (self));
   else
     gtk_widget_queue_resize (GTK_WIDGET (self));
@@ -198,6 +198,13 @@ enl_canvas_set_fit (EnlCanvas *self, gboolean fit, double largest)
 {
   self->fit = fit;
   self->largest = largest;
+  gtk_widget_queue_resize (GTK_WIDGET (self));
+}
+
+void
+enl_canvas_set_smallest (EnlCanvas *self, double smallest)
+{
+  self->smallest = smallest;
   gtk_widget_queue_resize (GTK_WIDGET (self));
 }
 

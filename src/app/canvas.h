@@ -19,6 +19,9 @@ const EnlScene *enl_canvas_scene (EnlCanvas *canvas);
 /* True: the scene is scaled to the widget, up to `largest` times its size. False: the widget asks
  * for the scene's own size, for use in a scrolled window. Default: fit, 1.4. */
 void enl_canvas_set_fit (EnlCanvas *canvas, gboolean fit, double largest);
+/* The widget never asks for less room than `smallest` times the scene (default 0: it does), so that
+ * its text stays readable and a scrolled window scrolls instead. */
+void enl_canvas_set_smallest (EnlCanvas *canvas, double smallest);
 
 /* Text read out by assistive technology in place of the picture. */
 void enl_canvas_describe (EnlCanvas *canvas, const char *label, const char *description);

@@ -103,6 +103,23 @@ mark_fault (EnlColumn *self, const EnlError *error)
   gtk_label_set_text (self->fault, message);
 }
 
+/* "C6H10O3" with lowered digits. */
+static char *
+pretty_formula (const EnlMolecule *mol)
+{
+  g_autofree char *plain = enl_molecule_formula (mol);
+  GString *out = g_string_new (NULL);
+
+  for (const char *p = plain; *p; p++) {
+    bool charge = p > plain && (p[-1] == '+' || p[-1] == '-');
+    if (g_ascii_isdigit (*p) && !charge)
+      g_string_append_unichar (out, 0x2080 + (gunichar)(*p - '0'));
+    else
+      g_string_append_c (out, *p);
+  }
+  return g_string_free (out, FALSE);
+}
+
 static void
 refresh_identity (EnlColumn *self)
 {
@@ -111,7 +128,7 @@ refresh_identity (EnlColumn *self)
   GString *text = g_string_new (NULL);
 
   if (a) {
-    g_autofree char *formula = enl_molecule_formula (a->mol);
+    g_autofree char *formula = pretty_formula (a->mol);
     g_string_append_printf (text, "%s%s%s, %.2f g/mol", a->known_as ? a->known_as : "",
                             a->known_as ? ", " : "", formula, enl_molecule_mass (a->mol));
     if (outcome.error)
@@ -189,6 +206,18 @@ refresh_name (EnlColumn *self, const EnlSubstrate *s)
   gtk_entry_set_placeholder_text (self->name, a && a->known_as ? a->known_as : numbered);
 }
 
+/* On the projector the audience reads; nobody types. */
+static void
+refresh_chrome (EnlColumn *self)
+{
+  gboolean shown = enl_look_get (self->look) != ENL_THEME_PROJECTOR;
+
+  gtk_widget_set_visible (GTK_WIDGET (self->line), shown);
+  gtk_widget_set_visible (GTK_WIDGET (self->left), shown);
+  gtk_widget_set_visible (GTK_WIDGET (self->right), shown);
+  gtk_widget_set_visible (GTK_WIDGET (self->remove), shown);
+}
+
 static void
 refresh_selection (EnlColumn *self)
 {
@@ -217,6 +246,7 @@ refresh (EnlColumn *self)
   gtk_widget_set_sensitive (GTK_WIDGET (self->left), self->index > 0);
   gtk_widget_set_sensitive (GTK_WIDGET (self->right), self->index + 1 < enl_workset_size (set));
   refresh_identity (self);
+  refresh_chrome (self);
   refresh_selection (self);
   refresh_picture (self);
   refresh_sites (self);

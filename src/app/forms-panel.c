@@ -3,6 +3,9 @@
 #include "app/canvas.h"
 #include "draw/forms-sheet.h"
 
+/* Below this scale the labels of the cards can no longer be read at a glance. */
+#define SMALLEST_SCALE 0.62
+
 struct _EnlFormsPanel {
   GtkWidget parent;
   EnlSession *session; /* owned */
@@ -118,7 +121,8 @@ static void
 enl_forms_panel_init (EnlFormsPanel *self)
 {
   gtk_widget_init_template (GTK_WIDGET (self));
-  enl_canvas_set_fit (self->canvas, FALSE, 1.0);
+  enl_canvas_set_fit (self->canvas, TRUE, 1.0);
+  enl_canvas_set_smallest (self->canvas, SMALLEST_SCALE);
 }
 
 void

@@ -13,7 +13,7 @@ static void
 refresh_title (EnlWindow *self)
 {
   const char *path = enl_session_path (self->session);
-  g_autofree char *name = path ? g_path_get_basename (path) : g_strdup ("New set");
+  g_autofree char *name = path ? g_path_get_basename (path) : g_strdup ("Unsaved set");
   uint32_t n = enl_workset_size (enl_session_set (self->session));
   const EnlConditions *c = enl_workset_conditions (enl_session_set (self->session));
   g_autofree char *subtitle = g_strdup_printf (
@@ -79,6 +79,17 @@ on_state_changed (EnlSession *session, EnlWindow *self)
   enl_window_sync_actions (self);
 }
 
+/* The structures get the larger part; on the projector more of it, for larger type. */
+static void
+share_height (EnlWindow *self)
+{
+  int height = gtk_widget_get_height (GTK_WIDGET (self->panes));
+  double share = enl_look_get (self->look) == ENL_THEME_PROJECTOR ? 0.62 : 0.59;
+
+  if (height > 0)
+    gtk_paned_set_position (self->panes, (int)(share * height));
+}
+
 static void
 on_look_changed (EnlLook *look, EnlWindow *self)
 {
@@ -90,6 +101,7 @@ on_look_changed (EnlLook *look, EnlWindow *self)
     gtk_widget_add_css_class (widget, "dark-look");
   if (enl_look_get (look) == ENL_THEME_PROJECTOR)
     gtk_widget_add_css_class (widget, "projector");
+  share_height (self);
   enl_window_sync_actions (self);
 }
 

@@ -99,9 +99,10 @@ read_one (Walk *walk, const char *name, bool own_name, const char *text, size_t 
 
 /* ---- lists ---- */
 
-/* "CC=O ethanal": the structure ends at the first white space. A whole line that is a known name
+/* False for a blank line. "CC=O ethanal": the structure ends at the first white space. A whole line
+ * that is a known name
  * ("ethyl acetoacetate") is that name. */
-static void
+static bool
 read_line (Walk *walk, const char *line, size_t size, size_t number)
 {
   while (size && g_ascii_isspace (line[size - 1]))
@@ -110,7 +111,7 @@ read_line (Walk *walk, const char *line, size_t size, size_t number)
   while (lead < size && g_ascii_isspace (line[lead]))
     lead++;
   if (lead == size)
-    return;
+    return false;
   size_t end = lead;
   while (end < size && !g_ascii_isspace (line[end]))
     end++;
@@ -124,6 +125,7 @@ read_line (Walk *walk, const char *line, size_t size, size_t number)
   g_autofree char *name =
       whole ? g_strndup (line + lead, size - lead) : g_strndup (line + rest, size - rest);
   read_one (walk, name, false, line, end, number);
+  return true;
 }
 
 static void
@@ -135,7 +137,7 @@ read_lines (Walk *walk, const char *name, const char *text, size_t size)
     const char *stop = memchr (text + start, '\n', size - start);
     size_t length = stop ? (size_t)(stop - text) - start : size - start;
     if (length && text[start] != '#')
-      read_line (walk, text + start, length, number), read++;
+      read += read_line (walk, text + start, length, number);
     start += length + 1;
   }
   if (read == 0) {

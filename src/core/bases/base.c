@@ -75,6 +75,7 @@ read_base (const RowReader *at, EnlBase *base)
   base->note = cell (at, "note");
   base->source = cell (at, "source");
   base->thf_scale = cell (at, "pKaH_THF_scale");
+  base->usual = strcmp (cell (at, "usual"), "yes") == 0;
   base->irreversible = strcmp (cell (at, "irreversible"), "yes") == 0;
   base->number_unreliable = strcmp (cell (at, "number_holds"), "no") == 0;
   read_strengths (at, base);

@@ -13,6 +13,7 @@ typedef struct {
   bool attacks[ENL_N_SOLVENTS]; /* is destroyed by, or destroys, this solvent */
   double pkah_nominal;    /* textbook figure without a footing, NAN for none: says only that an
                              irreversible base is strong enough, never enters an equilibrium */
+  bool usual;             /* on the shelf of an ordinary laboratory (common practice) */
   bool irreversible;      /* the conjugate acid leaves or cannot give the proton back */
   bool number_unreliable; /* carbonate, fluoride, phosphate, soft-enolisation set: the number does
                              not describe what happens; no gap verdict is shown */

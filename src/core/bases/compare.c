@@ -327,6 +327,9 @@ by_merit (const void *left, const void *right, void *data)
     return a->conversion > b->conversion ? -1 : 1;
   if (severity (a) != severity (b))
     return severity (a) < severity (b) ? -1 : 1;
+  bool usual_a = enl_base_table_get (data, a->base)->usual;
+  if (usual_a != enl_base_table_get (data, b->base)->usual)
+    return usual_a ? -1 : 1;
   double pa = strength (data, a), pb = strength (data, b);
   if (pa != pb)
     return pa < pb ? -1 : 1;

@@ -55,7 +55,7 @@ typedef struct {
 
 typedef struct {
   EnlCandidate *candidate; /* best first: complete, largely, partial ...; among equals the least
-                              hazardous, then the mildest */
+                              hazardous, then the usual ones, then the mildest */
   uint32_t n_candidates;   /* every base of the table */
 } EnlComparison;
 
