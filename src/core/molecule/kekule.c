@@ -174,11 +174,12 @@ exchange (Matching *m, uint32_t end)
   }
 }
 
-/* Looks for a path along which `root` gets a partner: to a free atom, or to a paired one that can
- * do without. */
+/* Looks for a path along which `root` gets a partner: to a free atom, or, where `root` needs one,
+ * to a paired atom that can do without. */
 static bool
 match_by_search (Matching *m, uint32_t root)
 {
+  bool needed = m->need[root] == NEED_DOUBLE;
   uint32_t head = 0, tail = 0;
 
   for (uint32_t v = 0; v < m->mol->n_atoms; v++) {
@@ -190,7 +191,7 @@ match_by_search (Matching *m, uint32_t root)
   m->queue[tail++] = root;
   while (head < tail) {
     uint32_t at = m->queue[head++];
-    if (at != root && m->need[at] == NEED_OPTIONAL) {
+    if (needed && at != root && m->need[at] == NEED_OPTIONAL) {
       uint32_t end = m->mate[at];
       m->mate[at] = ENL_NONE;
       exchange (m, end);
@@ -228,6 +229,18 @@ match_rest (Matching *m)
         left_over == ENL_NONE)
       left_over = a;
   return left_over;
+}
+
+/* Nitrogen that may go without a double bond, and then takes a hydrogen, does so only where it has
+ * to: as in pyridazine, two of them that are left pair up. */
+static void
+match_nitrogens (Matching *m)
+{
+  m->spare = true;
+  for (uint32_t a = 0; a < m->mol->n_atoms; a++)
+    if (m->need[a] == NEED_OPTIONAL && m->mate[a] == ENL_NONE &&
+        m->mol->atom[a].element == NITROGEN)
+      match_by_search (m, a);
 }
 
 /* Optional atoms are called in only where it does not work without them. */
@@ -278,6 +291,8 @@ enl_kekule_place (EnlMolecule *mol, const bool *delocalised, EnlKekuleFlags flag
     m.need[a] = (uint8_t)find_need (mol, delocalised, flags, a);
   if (!match_all (&m, culprit))
     return false;
+  if (flags & ENL_KEKULE_INFER_NH)
+    match_nitrogens (&m);
   write_orders (mol, delocalised, m.mate);
   return true;
 }
