@@ -124,6 +124,21 @@ enl_ctab_usual_hydrogens (uint8_t element, int charge, EnlRadical radical, uint3
   return 0;
 }
 
+/* A count that was written, or that a radical leaves, is exact: no usual valence is expected. */
+static void
+set_hydrogens (const EnlCtabAtom *from, uint32_t order_sum, EnlAtom *to)
+{
+  bool written = from->valence != ENL_VALENCE_DEFAULT;
+  uint32_t count =
+      written ? (uint32_t)from->valence - order_sum
+              : enl_ctab_usual_hydrogens (from->element, from->charge, from->radical, order_sum);
+
+  to->hydrogens = (uint8_t)count;
+  to->exact = written || from->radical != ENL_RADICAL_NONE;
+  if (written && from->radical == ENL_RADICAL_NONE)
+    to->unpaired = enl_valence_unpaired (to->element, to->charge, order_sum + count);
+}
+
 static EnlStatus
 fill_hydrogens (const EnlCtab *ctab, EnlMolecule *mol)
 {
@@ -134,12 +149,7 @@ fill_hydrogens (const EnlCtab *ctab, EnlMolecule *mol)
       return enl_ctab_fault (
           ctab, ENL_ERROR_CHEMISTRY, from->offset, from->length, "correct the valence or the bonds",
           "atom %u has the valence %d, but bonds for %u", i + 1, from->valence, sum);
-    uint32_t count =
-        from->valence != ENL_VALENCE_DEFAULT
-            ? (uint32_t)from->valence - sum
-            : enl_ctab_usual_hydrogens (from->element, from->charge, from->radical, sum);
-    enl_molecule_edit_atom (mol, i)->hydrogens = (uint8_t)count;
-    enl_molecule_edit_atom (mol, i)->exact = from->valence != ENL_VALENCE_DEFAULT;
+    set_hydrogens (from, sum, enl_molecule_edit_atom (mol, i));
   }
   return ENL_OK;
 }
@@ -348,8 +358,8 @@ enl_ctab_build (const EnlCtab *ctab, EnlMolecule **out)
   if ((status = place_double_bonds (ctab, mol, delocalised)) != ENL_OK ||
       (status = fill_hydrogens (ctab, mol)) != ENL_OK)
     return status;
-  if (enl_valence_separate_charges (mol))
-    enl_molecule_finish (mol);
+  enl_valence_separate_charges (mol);
+  enl_molecule_finish (mol); /* aromatic flags need the hydrogens and charges */
   if ((status = check_valence (ctab, mol)) != ENL_OK)
     return status;
   read_stereo (ctab, mol);

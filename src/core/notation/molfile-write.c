@@ -142,7 +142,8 @@ isotope_of (const EnlAtom *atom)
 static int
 radical_of (const EnlAtom *atom)
 {
-  return atom->unpaired ? (int)atom->unpaired + 1 : 0; /* doublet 2, triplet 3 */
+  /* Doublet 2, triplet 3; for more the format has no code, and the written valence must do. */
+  return atom->unpaired == 1 || atom->unpaired == 2 ? (int)atom->unpaired + 1 : 0;
 }
 
 /* "M  CHG" and its kind: up to eight pairs of atom and value a line. */
