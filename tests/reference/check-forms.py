@@ -4,14 +4,15 @@ Usage: check-forms.py DUMP-FORMS DIFFERENCES [--show N] TABLE...
 Anions: every acid of acids.tsv (columns smiles, with atom map 1 at the site) and, from the other
 files, every molecule with a hydrogen beside a carbonyl, nitrile or nitro group, deprotonated there.
 RDKit runs with KEKULE_ALL and UNCONSTRAINED_ANIONS; the few structures with more charges than the
-first that it gives nevertheless are left out. Compared are the charges of all atoms and the orders of all bonds, atom by atom, and the canonical SMILES that RDKit
-writes for both sets. Kekulé copies of rings that hold no part of the charge are left out: RDKit
-writes every combination of them, the program none.
+first that it gives nevertheless are left out. Compared are the charges of all atoms and the orders
+of all bonds, atom by atom, and the canonical SMILES that RDKit writes for both sets. Kekulé copies
+of rings that hold no part of the charge are left out: RDKit writes every combination of them, the
+program none.
 
 DIFFERENCES lists known differences: acid, site, the numbers of structures only here and only in
-RDKit's list, reason. A line counts only while both numbers are right. Exit status 1: an unexplained difference, a
-line of DIFFERENCES that is no longer true, too few anions, or a set that takes more than a
-twentieth of RDKit's time.
+RDKit's list, reason. A line counts only while both numbers are right. Exit status 1: an unexplained
+difference, a line of DIFFERENCES that is no longer true, too few anions, or a set that takes more
+than a twentieth of RDKit's time.
 """
 import argparse
 import csv
@@ -317,8 +318,8 @@ def main():
           (len(records), len(acids), count['cation'], count['many']))
     print('compared %d anions (%d with nitro or N-oxide): %d equal, %d explained, %d different' %
           (compared, nitro, count['equal'], count['explained'], count['different']))
-    print('time of one RDKit list: %.0f times that of the set here (lowest %.1f), %.0f times that of'
-          ' the set made into molecules with rings and aromaticity (medians, fastest of 6 each)' %
+    print('time of one RDKit list: %.0f times that of the set here (lowest %.1f), %.0f times that'
+          ' of the set made into molecules with rings and aromaticity (medians, best of 6 each)' %
           (median(ratio), min(ratio, default=float('nan')), median(whole)))
     if compared < LEAST_ANIONS and not options.limit:
         faults.append('fewer than %d anions' % LEAST_ANIONS)

@@ -307,10 +307,12 @@ static EnlMolecule *
 make_molecule (const EnlMolecule *anion, const EnlForm *form)
 {
   EnlMolecule *mol = enl_molecule_copy (anion);
+  bool changed = false;
 
   for (uint32_t b = 0; b < enl_molecule_bonds (mol); b++) {
     if (enl_molecule_bond (mol, b)->order == form->order[b])
       continue;
+    changed = true;
     EnlBond *bond = enl_molecule_edit_bond (mol, b);
     bond->order = form->order[b];
     bond->side = ENL_SIDE_NONE;
@@ -321,8 +323,10 @@ make_molecule (const EnlMolecule *anion, const EnlForm *form)
     EnlAtom *atom = enl_molecule_edit_atom (mol, i);
     atom->charge = form->charge[i];
     atom->exact = true;
+    changed = true;
   }
-  enl_molecule_finish (mol);
+  if (changed)
+    enl_molecule_finish (mol);
   return mol;
 }
 

@@ -452,6 +452,12 @@ START_TEST (cap)
 
   ck_assert (forms->capped);
   ck_assert_uint_eq (forms->n_all, ENL_MAX_FORMS);
+  /* Five ring carbons, and in each of five biphenylyl groups two ortho and one para carbon of
+   * either ring. */
+  uint32_t places = 0;
+  for (uint32_t i = 0; i < enl_molecule_atoms (forms->anion); i++)
+    places += i == 0 || changes (forms, i);
+  ck_assert_uint_eq (places, 5 + 5 * 6);
   check_weights (forms, "capped");
   check_symmetry (forms, "capped");
 }
