@@ -188,19 +188,18 @@ fill_seconds (const Run *run)
   double floor = 0;
   const EnlSite *first = first_to_go (run, &floor);
   g_autoptr (EnlMolecule) base = first ? conjugate_base (run->mol, first->atom[0]) : NULL;
-  g_autofree EnlEstimate *neutral = g_new0 (EnlEstimate, run->sites->n_sites + 1);
+  g_autofree int *row = g_new (int, enl_molecule_atoms (run->mol) + 1);
 
-  fill_sites (run, run->mol, true);
-  memcpy (neutral, run->out, run->sites->n_sites * sizeof *neutral);
-  if (base)
-    fill_sites (run, base, true);
+  fill_sites (run, base ? base : run->mol, true);
+  enl_reference_find_all (run->estimator->ref, run->mol, run->solvent, row);
   for (uint32_t i = 0; i < run->sites->n_sites; i++) {
+    const EnlSite *site = &run->sites->site[i];
     EnlEstimate *e = &run->out[i];
-    if (!run->sites->site[i].second)
+    if (!site->second)
       continue;
     /* A published value of the neutral molecule stands: someone measured that very hydrogen. */
-    if (neutral[i].basis == ENL_BASIS_MEASURED)
-      *e = neutral[i];
+    if (row[site->atom[0]] >= 0)
+      take_row (run, row[site->atom[0]], e);
     if (e->basis == ENL_BASIS_MEASURED)
       continue;
     e->value = MAX (e->value, floor); /* a second loss is never easier than the first */

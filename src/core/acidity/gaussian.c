@@ -42,16 +42,24 @@ enl_gaussian_forward (const double *factor, uint32_t n, double *b, uint32_t m)
 {
   for (uint32_t i = 0; i < n; i++) {
     const double *row = factor + ENL_PACKED (i, 0);
-    double *to = b + (size_t)i * m;
-    for (uint32_t j = 0; j < i; j++) {
-      const double *from = b + (size_t)j * m;
-      double l = row[j];
-      for (uint32_t k = 0; k < m; k++)
-        to[k] -= l * from[k];
+    for (uint32_t k = 0; k < m; k++) {
+      double *x = b + (size_t)k * n;
+      x[i] = (x[i] - enl_gaussian_dot (row, x, i)) / row[i];
     }
-    for (uint32_t k = 0; k < m; k++)
-      to[k] /= row[i];
   }
+}
+
+/* to -= factor * from, four at a time so that the compiler uses its vectors. */
+static void
+subtract_multiple (double *to, const double *from, double factor, size_t n)
+{
+  size_t k = 0;
+
+  for (; k + 4 <= n; k += 4)
+    for (int j = 0; j < 4; j++)
+      to[k + j] -= factor * from[k + j];
+  for (; k < n; k++)
+    to[k] -= factor * from[k];
 }
 
 void
@@ -59,14 +67,10 @@ enl_gaussian_backward (const double *factor, uint32_t n, double *b, uint32_t m)
 {
   for (uint32_t i = n; i-- > 0;) {
     const double *row = factor + ENL_PACKED (i, 0);
-    double *from = b + (size_t)i * m;
-    for (uint32_t k = 0; k < m; k++)
-      from[k] /= row[i];
-    for (uint32_t j = 0; j < i; j++) {
-      double *to = b + (size_t)j * m;
-      double l = row[j];
-      for (uint32_t k = 0; k < m; k++)
-        to[k] -= l * from[k];
+    for (uint32_t k = 0; k < m; k++) {
+      double *x = b + (size_t)k * n;
+      x[i] /= row[i];
+      subtract_multiple (x, row, x[i], i);
     }
   }
 }

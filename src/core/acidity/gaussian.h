@@ -17,9 +17,9 @@
  * when it is not positive definite. */
 EnlStatus enl_gaussian_factor (double *matrix, uint32_t n, EnlError *err) ENL_MUST_USE;
 
-/* Solves L X = B (in place) for `m` right-hand sides, row-major n x m. */
+/* Solves L x = b in place for `m` right-hand sides of n numbers each, one after the other. */
 void enl_gaussian_forward (const double *factor, uint32_t n, double *b, uint32_t m);
-/* Solves L' X = B in place. */
+/* Solves L' x = b likewise. */
 void enl_gaussian_backward (const double *factor, uint32_t n, double *b, uint32_t m);
 
 /* Inverse of the matrix whose factor this is, packed; new array of n (n + 1) / 2 (g_free). */

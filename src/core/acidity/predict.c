@@ -66,9 +66,9 @@ typedef struct {
   const EnlPredictor *predictor;
   EnlSiteSet *sites;
   uint32_t n, m;    /* rows of the table, sites */
-  double *k;        /* covariance of every row with every site, n x m */
-  double *alike;    /* its smooth parts as a share of the prior ones, n x m */
-  double *weight;   /* weight of every row in the prediction of every site, n x m */
+  double *k;        /* covariance of every row with every site, m x n */
+  double *alike;    /* its smooth parts as a share of the prior ones, m x n */
+  double *weight;   /* weight of every row in the prediction of every site, m x n */
   double *prior;    /* variance of each site before anything is known */
   double *smooth;   /* that of the smooth parts alone */
   double *variance; /* variance that is left */
@@ -113,7 +113,7 @@ fill_covariance (Batch *batch)
     batch->smooth[s] =
         enl_kernel_smooth (&model->hyper, &parts) + enl_kernel_environment (&model->hyper, &parts);
     for (uint32_t i = 0; i < batch->n; i++) {
-      size_t at = (size_t)i * batch->m + s;
+      size_t at = (size_t)s * batch->n + i;
       enl_kernel_parts (&model->hyper, batch->sites, s, model->rows, i, &parts);
       batch->k[at] = enl_kernel_value (&model->hyper, &parts);
       batch->alike[at] = (enl_kernel_smooth (&model->hyper, &parts) +
@@ -134,22 +134,38 @@ solve (Batch *batch)
   batch->weight = g_new (double, total + 1);
   memcpy (batch->weight, batch->k, total * sizeof (double));
   enl_gaussian_forward (model->factor, batch->n, batch->weight, batch->m);
-  memcpy (batch->variance, batch->prior, batch->m * sizeof (double));
-  for (size_t at = 0; at < total; at++)
-    batch->variance[at % batch->m] -= batch->weight[at] * batch->weight[at];
+  for (uint32_t s = 0; s < batch->m; s++) {
+    const double *part = batch->weight + (size_t)s * batch->n;
+    batch->variance[s] = batch->prior[s] - enl_gaussian_dot (part, part, batch->n);
+  }
   enl_gaussian_backward (model->factor, batch->n, batch->weight, batch->m);
 }
 
 /* ---- precedents ---- */
 
-static int
-compare_precedents (const void *a, const void *b)
+/* Puts `candidate` into its place among the heaviest so far; a compound keeps its heavier row. */
+static void
+offer (const EnlPredictor *predictor, EnlPrediction *out, EnlPrecedent candidate)
 {
-  const EnlPrecedent *x = a, *y = b;
+  EnlPrecedent *list = out->precedent;
+  uint32_t n = out->n_precedents, at;
 
-  if (x->weight != y->weight)
-    return x->weight > y->weight ? -1 : 1;
-  return (x->row > y->row) - (x->row < y->row);
+  for (at = 0; at < n; at++)
+    if (predictor->compound[list[at].row] == predictor->compound[candidate.row]) {
+      if (list[at].weight >= candidate.weight)
+        return;
+      memmove (list + at, list + at + 1, (n - at - 1) * sizeof *list);
+      n--;
+      break;
+    }
+  for (at = n; at > 0 && list[at - 1].weight < candidate.weight; at--)
+    ;
+  if (at == ENL_MAX_PRECEDENTS)
+    return;
+  n = MIN (n, ENL_MAX_PRECEDENTS - 1);
+  memmove (list + at + 1, list + at, (n - at) * sizeof *list);
+  list[at] = candidate;
+  out->n_precedents = n + 1;
 }
 
 /* Rows that are both alike and influential: weight in the prediction times likeness of the smooth
@@ -158,26 +174,21 @@ compare_precedents (const void *a, const void *b)
 static void
 pick_precedents (const Batch *batch, uint32_t s, EnlPrediction *out)
 {
-  const uint32_t *compound = batch->predictor->compound;
-  g_autofree EnlPrecedent *all = g_new (EnlPrecedent, batch->n + 1);
-  g_autofree bool *taken = g_new0 (bool, batch->n + 1);
+  const double *weight = batch->weight + (size_t)s * batch->n;
+  const double *alike = batch->alike + (size_t)s * batch->n;
   double sum = 0;
 
-  for (uint32_t i = 0; i < batch->n; i++) {
-    size_t at = (size_t)i * batch->m + s;
-    all[i] = (EnlPrecedent){i, MAX (batch->weight[at], 0) * batch->alike[at]};
-    sum += all[i].weight;
-  }
-  qsort (all, batch->n, sizeof *all, compare_precedents);
   out->n_precedents = 0;
-  for (uint32_t i = 0; i < batch->n && out->n_precedents < ENL_MAX_PRECEDENTS; i++) {
-    if (!(all[i].weight > LEAST_WEIGHT * sum))
-      break;
-    if (taken[compound[all[i].row]])
-      continue;
-    taken[compound[all[i].row]] = true;
-    out->precedent[out->n_precedents++] = (EnlPrecedent){all[i].row, all[i].weight / sum};
+  for (uint32_t i = 0; i < batch->n; i++) {
+    double share = MAX (weight[i], 0) * alike[i];
+    sum += share;
+    if (share > 0)
+      offer (batch->predictor, out, (EnlPrecedent){i, share});
   }
+  while (out->n_precedents && out->precedent[out->n_precedents - 1].weight < LEAST_WEIGHT * sum)
+    out->n_precedents--;
+  for (uint32_t k = 0; k < out->n_precedents; k++)
+    out->precedent[k].weight /= sum;
 }
 
 /* ---- experience ---- */
@@ -221,9 +232,8 @@ enl_predictor_run (const EnlPredictor *predictor, const EnlMolecule *mol, const 
   fill_covariance (&batch);
   solve (&batch);
   for (uint32_t s = 0; s < n; s++) {
-    double value = ENL_PRIOR_PKA;
-    for (uint32_t i = 0; i < batch.n; i++)
-      value += batch.k[(size_t)i * n + s] * model->alpha[i];
+    double value =
+        ENL_PRIOR_PKA + enl_gaussian_dot (batch.k + (size_t)s * batch.n, model->alpha, batch.n);
     double variance = MAX (batch.variance[s], 0) + model->hyper.value[ENL_H_noise] +
                       PUBLISHED_SIGMA * PUBLISHED_SIGMA;
     out[s] = (EnlPrediction){

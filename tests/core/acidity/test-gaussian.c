@@ -63,10 +63,10 @@ START_TEST (substitution_undoes_the_product)
   for (int k = 0; k < 2; k++) {
     fill (packed);
     for (int i = 0; i < N; i++)
-      column[i] = x[2 * i + k] = sin (3.1 * i + k);
+      column[i] = x[N * k + i] = sin (3.1 * i + k);
     enl_gaussian_multiply (packed, N, column, product);
     for (int i = 0; i < N; i++)
-      y[2 * i + k] = product[i];
+      y[N * k + i] = product[i];
   }
   ck_assert_int_eq (enl_gaussian_factor (packed, N, NULL), ENL_OK);
   enl_gaussian_forward (packed, N, y, 2);
