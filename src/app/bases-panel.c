@@ -11,7 +11,7 @@ struct _EnlBasesPanel {
   GtkSingleSelection *selection;
   gboolean filling;
 
-  GtkWidget *box;
+  GtkWidget *box, *conditions, *details_scroller;
   GtkLabel *heading, *details, *deferral;
   GtkSpinButton *equivalents, *concentration;
   GtkColumnView *view;
@@ -198,6 +198,16 @@ on_selection_changed (EnlSession *session, EnlBasesPanel *self)
     refresh (self);
 }
 
+/* On the projector the verdicts are what the audience reads. */
+static void
+on_look_changed (EnlLook *look, EnlBasesPanel *self)
+{
+  gboolean working = enl_look_get (look) != ENL_THEME_PROJECTOR;
+
+  gtk_widget_set_visible (self->conditions, working);
+  gtk_widget_set_visible (self->details_scroller, working);
+}
+
 /* ---- object ---- */
 
 static void
@@ -221,6 +231,8 @@ enl_bases_panel_class_init (EnlBasesPanelClass *klass)
   gtk_widget_class_set_layout_manager_type (widget_class, GTK_TYPE_BIN_LAYOUT);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/bases-panel.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, box);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, conditions);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, details_scroller);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, heading);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, details);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, deferral);
@@ -247,7 +259,7 @@ enl_bases_panel_init (EnlBasesPanel *self)
 }
 
 void
-enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session)
+enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session, EnlLook *look)
 {
   g_assert (!self->session);
   self->session = g_object_ref (session);
@@ -256,5 +268,6 @@ enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session)
   g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self,
                            0);
   g_signal_connect_object (session, "conditions-changed", G_CALLBACK (on_session_changed), self, 0);
+  g_signal_connect_object (look, "changed", G_CALLBACK (on_look_changed), self, 0);
   refresh (self);
 }

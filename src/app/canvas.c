@@ -85,7 +85,7 @@ enl_canvas_measure (GtkWidget *widget, GtkOrientation orientation, int for_size,
 
   (void)for_size;
   *minimum_baseline = *natural_baseline = -1;
-  *minimum = *natural = 40;
+  *minimum = 40;
   if (self->scene) {
     EnlRect frame = enl_scene_frame (self->scene);
     double size = orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height;
@@ -162,6 +162,7 @@ enl_canvas_init (EnlCanvas *self)
 
   self->fit = TRUE;
   self->largest = 1.4;
+  gtk_widget_set_focusable (GTK_WIDGET (self), TRUE);
   gtk_widget_set_overflow (GTK_WIDGET (self), GTK_OVERFLOW_HIDDEN);
   g_signal_connect (click, "pressed", G_CALLBACK (on_pressed), self);
   g_signal_connect (motion, "motion", G_CALLBACK (on_motion), self);

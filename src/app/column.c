@@ -173,8 +173,11 @@ static void
 refresh_sites (EnlColumn *self)
 {
   const EnlAnalysis *a = enl_session_outcome (self->session, self->index).analysis;
+  gboolean focused = gtk_widget_get_focus_child (GTK_WIDGET (self->sites)) != NULL;
   double low, high;
 
+  if (focused) /* the row with the keyboard goes away */
+    enl_column_focus_picture (self);
   clear_list (self->sites);
   if (!a)
     return;
@@ -206,21 +209,24 @@ refresh_name (EnlColumn *self, const EnlSubstrate *s)
   gtk_entry_set_placeholder_text (self->name, a && a->known_as ? a->known_as : numbered);
 }
 
-/* On the projector the audience reads; nobody types. */
+/* On the projector the audience reads and nobody types; the buttons stand on the selected column
+ * only, so that names have room. */
 static void
 refresh_chrome (EnlColumn *self)
 {
-  gboolean shown = enl_look_get (self->look) != ENL_THEME_PROJECTOR;
+  gboolean typing = enl_look_get (self->look) != ENL_THEME_PROJECTOR;
+  gboolean buttons = typing && is_selected (self);
 
-  gtk_widget_set_visible (GTK_WIDGET (self->line), shown);
-  gtk_widget_set_visible (GTK_WIDGET (self->left), shown);
-  gtk_widget_set_visible (GTK_WIDGET (self->right), shown);
-  gtk_widget_set_visible (GTK_WIDGET (self->remove), shown);
+  gtk_widget_set_visible (GTK_WIDGET (self->line), typing);
+  gtk_widget_set_visible (GTK_WIDGET (self->left), buttons);
+  gtk_widget_set_visible (GTK_WIDGET (self->right), buttons);
+  gtk_widget_set_visible (GTK_WIDGET (self->remove), buttons);
 }
 
 static void
 refresh_selection (EnlColumn *self)
 {
+  refresh_chrome (self);
   if (is_selected (self))
     gtk_widget_add_css_class (GTK_WIDGET (self), "selected");
   else
@@ -246,7 +252,6 @@ refresh (EnlColumn *self)
   gtk_widget_set_sensitive (GTK_WIDGET (self->left), self->index > 0);
   gtk_widget_set_sensitive (GTK_WIDGET (self->right), self->index + 1 < enl_workset_size (set));
   refresh_identity (self);
-  refresh_chrome (self);
   refresh_selection (self);
   refresh_picture (self);
   refresh_sites (self);
@@ -455,4 +460,10 @@ void
 enl_column_focus_line (EnlColumn *self)
 {
   gtk_widget_grab_focus (GTK_WIDGET (self->line));
+}
+
+void
+enl_column_focus_picture (EnlColumn *self)
+{
+  gtk_widget_grab_focus (GTK_WIDGET (self->canvas));
 }

@@ -10,3 +10,5 @@ G_DECLARE_FINAL_TYPE (EnlColumn, enl_column, ENL, COLUMN, GtkWidget)
 GtkWidget *enl_column_new (EnlSession *session, EnlLook *look, uint32_t index);
 /* Puts the keyboard into the structure line. */
 void enl_column_focus_line (EnlColumn *column);
+/* Puts it on the picture, where nothing is typed by accident. */
+void enl_column_focus_picture (EnlColumn *column);

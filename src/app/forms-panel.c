@@ -12,7 +12,7 @@ struct _EnlFormsPanel {
   EnlLook *look;       /* owned */
 
   GtkWidget *box;
-  GtkLabel *heading, *note;
+  GtkLabel *heading;
   EnlCanvas *canvas;
 };
 
@@ -22,7 +22,6 @@ static void
 show_nothing (EnlFormsPanel *self, const char *heading)
 {
   gtk_label_set_text (self->heading, heading);
-  gtk_label_set_text (self->note, "");
   enl_canvas_take_scene (self->canvas, NULL);
   enl_canvas_describe (self->canvas, "Anion forms", "empty");
 }
@@ -55,8 +54,6 @@ show_forms (EnlFormsPanel *self, const EnlAnalysis *a, uint32_t site)
   g_autofree char *heading = g_strdup_printf (
       "Anion forms of site %u, %s", enl_analysis_rank (a, site), a->sites->site[site].position);
   gtk_label_set_text (self->heading, heading);
-  gtk_label_set_text (self->note, forms->note ? forms->note : "");
-  gtk_widget_set_visible (GTK_WIDGET (self->note), forms->note != NULL);
   EnlFormsSheet sheet = {.forms = forms, .layout = a->mol, .columns = 4};
   enl_canvas_take_scene (self->canvas, enl_forms_sheet (&sheet, enl_look_theme (self->look)));
   g_autofree char *text = describe (forms);
@@ -113,7 +110,6 @@ enl_forms_panel_class_init (EnlFormsPanelClass *klass)
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/forms-panel.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlFormsPanel, box);
   gtk_widget_class_bind_template_child (widget_class, EnlFormsPanel, heading);
-  gtk_widget_class_bind_template_child (widget_class, EnlFormsPanel, note);
   gtk_widget_class_bind_template_child (widget_class, EnlFormsPanel, canvas);
 }
 

@@ -22,7 +22,7 @@ position_new (const EnlSite *site)
 
   gtk_label_set_wrap (GTK_LABEL (label), TRUE);
   gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
-  gtk_label_set_lines (GTK_LABEL (label), 2);
+  gtk_label_set_lines (GTK_LABEL (label), 3);
   gtk_label_set_ellipsize (GTK_LABEL (label), PANGO_ELLIPSIZE_END);
   gtk_label_set_width_chars (GTK_LABEL (label), 12);
   gtk_widget_set_hexpand (label, TRUE);

@@ -29,19 +29,6 @@ refresh_title (EnlWindow *self)
 
 /* ---- columns ---- */
 
-static void
-rebuild_columns (EnlWindow *self)
-{
-  GtkWidget *child;
-  uint32_t n = enl_workset_size (enl_session_set (self->session));
-
-  while ((child = gtk_widget_get_first_child (GTK_WIDGET (self->columns))))
-    gtk_box_remove (self->columns, child);
-  for (uint32_t i = 0; i < n; i++)
-    gtk_box_append (self->columns, enl_column_new (self->session, self->look, i));
-  gtk_widget_set_visible (GTK_WIDGET (self->hint), n == 0);
-}
-
 static GtkWidget *
 column_at (EnlWindow *self, uint32_t index)
 {
@@ -50,6 +37,34 @@ column_at (EnlWindow *self, uint32_t index)
   while (child && index--)
     child = gtk_widget_get_next_sibling (child);
   return child;
+}
+
+/* Keyboard on the picture of the selected substrate. */
+static void
+focus_picture (EnlWindow *self)
+{
+  uint32_t index = enl_workset_selection (enl_session_set (self->session))->substrate;
+  GtkWidget *column = index == ENL_NONE ? NULL : column_at (self, index);
+
+  if (column)
+    enl_column_focus_picture (ENL_COLUMN (column));
+}
+
+static void
+rebuild_columns (EnlWindow *self)
+{
+  GtkWidget *child;
+  uint32_t n = enl_workset_size (enl_session_set (self->session));
+
+  /* A column that loses the keyboard while it goes away must not hand it, and with it the
+   * selection, to its neighbour. */
+  gtk_window_set_focus (GTK_WINDOW (self), NULL);
+  while ((child = gtk_widget_get_first_child (GTK_WIDGET (self->columns))))
+    gtk_box_remove (self->columns, child);
+  for (uint32_t i = 0; i < n; i++)
+    gtk_box_append (self->columns, enl_column_new (self->session, self->look, i));
+  gtk_widget_set_visible (GTK_WIDGET (self->hint), n == 0);
+  focus_picture (self);
 }
 
 void
@@ -212,7 +227,7 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
                            self, G_CONNECT_SWAPPED);
   g_signal_connect_object (self->look, "changed", G_CALLBACK (on_look_changed), self, 0);
   enl_forms_panel_follow (self->forms, self->session, self->look);
-  enl_bases_panel_follow (self->bases, self->session);
+  enl_bases_panel_follow (self->bases, self->session, self->look);
   refresh_title (self);
   enl_window_sync_actions (self);
   return self;

@@ -9,7 +9,7 @@
 /* Two-sided 90 % of a normal distribution, in standard deviations. */
 #define Z90 1.645
 /* Lower ends of the verdicts, as fractions of the substrate. */
-#define COMPLETE_FROM 0.98
+#define COMPLETE_FROM 0.99 /* a gap of about 4: enough to keep clear of self-condensation (R03) */
 #define LARGELY_FROM  0.90
 #define PARTIAL_FROM  0.10
 #define TRACE_FROM    0.001
@@ -103,11 +103,12 @@ list_species (Comparing *c)
   c->species = g_new0 (EnlSpecies, n);
   c->holds_target = g_new0 (bool, n);
   c->n_species = n;
+  for (uint32_t i = 0; i < n; i++)
+    if (c->estimate[i].value < c->estimate[c->most_acidic].value)
+      c->most_acidic = i;
   for (uint32_t i = 0; i < n; i++) {
     c->species[i] = form_of_site (c, i);
     c->holds_target[i] = i == c->target || precedes (c, c->target, i);
-    if (c->estimate[i].value < c->estimate[c->most_acidic].value)
-      c->most_acidic = i;
   }
   c->n_before = c->species[c->target].lost - 1;
 }
@@ -264,9 +265,11 @@ equilibrium_reason (const Comparing *c, const EnlBase *base, const EnlCandidate 
                             gap, tail_of_partial (c, base, out));
   if (out->verdict == ENL_VERDICT_COMPLETE)
     return g_strdup_printf ("%s: the anion forms completely", gap);
-  return g_strdup_printf ("%s: %.3g %% of the anion at %.3g equivalents%s", gap,
-                          100.0 * out->conversion, c->conditions->equivalents,
-                          tail_of_partial (c, base, out));
+  g_autofree char *share = out->conversion < TRACE_FROM
+                               ? g_strdup ("less than 0.1 %")
+                               : g_strdup_printf ("%.3g %%", 100.0 * out->conversion);
+  return g_strdup_printf ("%s: %s of the anion at %.3g equivalents%s", gap, share,
+                          c->conditions->equivalents, tail_of_partial (c, base, out));
 }
 
 static char *

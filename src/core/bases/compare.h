@@ -24,7 +24,7 @@ EnlConditions enl_conditions_default (void);
 EnlStatus enl_conditions_check (const EnlConditions *conditions, EnlError *err);
 
 typedef enum {
-  ENL_VERDICT_COMPLETE,  /* takes the site off completely (98 % or more) */
+  ENL_VERDICT_COMPLETE,  /* takes the site off completely (99 % or more) */
   ENL_VERDICT_LARGELY,   /* 90 % or more */
   ENL_VERDICT_PARTIAL,   /* 10 % or more: both species side by side */
   ENL_VERDICT_TRACE,     /* 0.1 % or more */
