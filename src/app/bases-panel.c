@@ -251,10 +251,10 @@ enl_bases_panel_init (EnlBasesPanel *self)
   gtk_single_selection_set_autoselect (self->selection, FALSE);
   gtk_column_view_set_model (self->view, GTK_SELECTION_MODEL (self->selection));
   add_column (self, "Base", ENL_CELL_NAME, TRUE);
-  add_column (self, "pKaH", ENL_CELL_PKAH, FALSE);
-  add_column (self, "Gap", ENL_CELL_GAP, FALSE);
-  add_column (self, "Anion", ENL_CELL_CONVERSION, FALSE);
   add_column (self, "Verdict", ENL_CELL_VERDICT, FALSE);
+  add_column (self, "Anion", ENL_CELL_CONVERSION, FALSE);
+  add_column (self, "Gap", ENL_CELL_GAP, FALSE);
+  add_column (self, "pKaH", ENL_CELL_PKAH, FALSE);
   g_signal_connect (self->selection, "notify::selected-item", G_CALLBACK (on_selected), self);
 }
 

@@ -206,6 +206,8 @@ refresh_name (EnlColumn *self, const EnlSubstrate *s)
   g_autofree char *numbered = g_strdup_printf ("Substrate %u", self->index + 1);
 
   set_entry (self->name, s->name);
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->name),
+                               s->name[0] ? s->name : "Name of the substrate");
   gtk_entry_set_placeholder_text (self->name, a && a->known_as ? a->known_as : numbered);
 }
 

@@ -10,6 +10,7 @@ struct _EnlWindow {
   EnlSession *session;
   EnlLook *look;
   gboolean closing; /* unsaved changes were settled */
+  guint reveal;     /* idle source that brings the selected column into view, 0: none */
 
   GtkLabel *title, *subtitle;
   GtkInfoBar *bar;

@@ -77,7 +77,40 @@ enl_window_focus_line (EnlWindow *self)
     enl_column_focus_line (ENL_COLUMN (column));
 }
 
+/* ---- the selected column stays in view ---- */
+
+static gboolean
+reveal_selected (gpointer data)
+{
+  EnlWindow *self = data;
+  uint32_t index = enl_workset_selection (enl_session_set (self->session))->substrate;
+  GtkWidget *column = index == ENL_NONE ? NULL : column_at (self, index);
+  graphene_rect_t bounds;
+
+  self->reveal = 0;
+  if (column && gtk_widget_compute_bounds (column, GTK_WIDGET (self->columns), &bounds))
+    gtk_adjustment_clamp_page (gtk_scrolled_window_get_hadjustment (self->scroller),
+                               bounds.origin.x, bounds.origin.x + bounds.size.width);
+  return G_SOURCE_REMOVE;
+}
+
+/* After layout: a new column has no place before. */
+static void
+queue_reveal (EnlWindow *self)
+{
+  if (!self->reveal)
+    self->reveal = g_timeout_add (50, reveal_selected, self);
+}
+
 /* ---- events ---- */
+
+static void
+on_selection_changed (EnlSession *session, EnlWindow *self)
+{
+  (void)session;
+  enl_window_sync_actions (self);
+  queue_reveal (self);
+}
 
 static void
 on_set_changed (EnlSession *session, EnlWindow *self)
@@ -171,6 +204,7 @@ enl_window_dispose (GObject *object)
 {
   EnlWindow *self = ENL_WINDOW (object);
 
+  g_clear_handle_id (&self->reveal, g_source_remove);
   g_clear_object (&self->session);
   g_clear_object (&self->look);
   G_OBJECT_CLASS (enl_window_parent_class)->dispose (object);
@@ -223,8 +257,8 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
   g_signal_connect_object (self->session, "state-changed", G_CALLBACK (on_state_changed), self, 0);
   g_signal_connect_object (self->session, "substrate-changed", G_CALLBACK (enl_window_sync_actions),
                            self, G_CONNECT_SWAPPED);
-  g_signal_connect_object (self->session, "selection-changed", G_CALLBACK (enl_window_sync_actions),
-                           self, G_CONNECT_SWAPPED);
+  g_signal_connect_object (self->session, "selection-changed", G_CALLBACK (on_selection_changed),
+                           self, 0);
   g_signal_connect_object (self->look, "changed", G_CALLBACK (on_look_changed), self, 0);
   enl_forms_panel_follow (self->forms, self->session, self->look);
   enl_bases_panel_follow (self->bases, self->session, self->look);
