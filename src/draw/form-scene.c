@@ -10,7 +10,7 @@
 
 #define DISC_AT_ONE  0.52 /* radius for a whole elementary charge, bond lengths; area is charge */
 #define DISC_OPACITY 0.26
-#define SEEN_CHARGE  0.045 /* elementary charges; smaller ones are not shown */
+#define SEEN_CHARGE  0.06 /* elementary charges; smaller ones are not shown */
 
 /* A stereo bond is kept where its centre is still tetrahedral. */
 static void
@@ -155,7 +155,7 @@ draw_charge_number (EnlOutline *outline, EnlScene *scene, uint32_t atom, double 
   EnlRect own = enl_outline_atom_box (outline, atom);
   EnlPlaceQuery query = {
       .anchor = outline->at[atom],
-      .clearance = fmax (0.3 * fmin (own.width, own.height), 0.9 * charge_radius (outline, charge)),
+      .clearance = fmax (0.3 * fmin (own.width, own.height), charge_radius (outline, charge)),
       .width = ink.width,
       .height = ink.height,
       .pad = 0.06 * theme->bond_length,
@@ -187,7 +187,7 @@ enl_hybrid_scene (const EnlForms *forms, const EnlMolecule *layout, const EnlThe
   enl_outline_plan_labels (outline);
   for (uint32_t i = 0; i < outline->n_atoms; i++)
     if (fabs (forms->charge[i]) >= SEEN_CHARGE) {
-      double inner = 0.7 * charge_radius (outline, forms->charge[i]);
+      double inner = 0.8 * charge_radius (outline, forms->charge[i]);
       draw_charge_area (outline, scene, i, forms->charge[i]);
       enl_obstacles_add_box (
           outline->taken,

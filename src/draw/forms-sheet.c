@@ -182,6 +182,13 @@ plan_cards (Sheet *s)
   s->height = s->room.height + s->label + 2.5 * theme->margin;
 }
 
+/* Four stand better two by two, with the hybrid beside them. */
+static uint32_t
+usual_columns (uint32_t n)
+{
+  return n == USUAL_COLUMNS + 1 ? USUAL_COLUMNS - 1 : MIN (n, USUAL_COLUMNS);
+}
+
 EnlScene *
 enl_forms_sheet (const EnlFormsSheet *sheet, const EnlTheme *theme)
 {
@@ -190,7 +197,7 @@ enl_forms_sheet (const EnlFormsSheet *sheet, const EnlTheme *theme)
 
   s.scene = enl_scene_new (theme);
   s.shown = MIN (sheet->forms->n_forms, sheet->max_forms ? sheet->max_forms : USUAL_FORMS);
-  s.columns = MIN (s.shown, sheet->columns ? sheet->columns : USUAL_COLUMNS);
+  s.columns = sheet->columns ? sheet->columns : usual_columns (s.shown);
   s.arrows_to = sheet->arrows_to ? sheet->arrows_to : 1;
   make_scenes (&s);
   plan_cards (&s);
@@ -201,7 +208,7 @@ enl_forms_sheet (const EnlFormsSheet *sheet, const EnlTheme *theme)
         theme->margin;
   y += 0.7 * theme->margin;
   EnlPoint end = draw_grid (&s, x, y);
-  bool beside = s.shown < (sheet->columns ? sheet->columns : USUAL_COLUMNS);
+  bool beside = s.columns < USUAL_COLUMNS;
   EnlPoint hybrid =
       beside ? (EnlPoint){end.x + 1.5 * theme->margin, y} : (EnlPoint){x, end.y + theme->margin};
   draw_card (&s, s.hybrid, hybrid.x, hybrid.y, HYBRID, HYBRID_REMARK);

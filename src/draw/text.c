@@ -122,26 +122,66 @@ plain_width (const char *family, const char *plain, double size, bool bold)
   return width;
 }
 
+typedef struct {
+  const char *family;
+  double size, width;
+  bool bold;
+  GString *line, *out;
+} Wrap;
+
+static bool
+line_fits (const Wrap *w)
+{
+  return plain_width (w->family, w->line->str, w->size, w->bold) <= w->width;
+}
+
+/* Ends the line before its last `tail` bytes, which begin the next one. */
+static void
+break_line (Wrap *w, gsize tail)
+{
+  g_autofree char *rest = g_strdup (w->line->str + w->line->len - tail);
+
+  g_string_append_len (w->out, w->line->str, (gssize)(w->line->len - tail));
+  g_string_append_c (w->out, '\n');
+  g_string_assign (w->line, rest);
+}
+
+static void
+add_word (Wrap *w, const char *word)
+{
+  gsize length = strlen (word);
+
+  if (w->line->len)
+    g_string_append_c (w->line, ' ');
+  g_string_append (w->line, word);
+  if (line_fits (w))
+    return;
+  if (w->line->len > length) {
+    g_string_truncate (w->line, w->line->len - length - 1);
+    break_line (w, 0);
+  } else {
+    g_string_truncate (w->line, 0);
+  }
+  for (const char *c = word; *c; c = g_utf8_next_char (c)) {
+    gsize bytes = (gsize)(g_utf8_next_char (c) - c);
+    g_string_append_len (w->line, c, (gssize)bytes);
+    if (w->line->len > bytes && !line_fits (w))
+      break_line (w, bytes);
+  }
+}
+
 char *
 enl_text_wrap (const char *family, const char *plain, double size, bool bold, double width)
 {
-  g_auto (GStrv) word = g_strsplit_set (plain, " \t\n\r", -1);
+  g_autofree char *valid = g_utf8_make_valid (plain, -1);
+  g_auto (GStrv) word = g_strsplit_set (valid, " \t\n\r", -1);
   g_autoptr (GString) line = g_string_new (NULL);
   g_autoptr (GString) out = g_string_new (NULL);
+  Wrap wrap = {family, size, width, bold, line, out};
 
-  for (char **w = word; *w; w++) {
-    if (!**w)
-      continue;
-    gsize before = line->len;
-    if (before)
-      g_string_append_c (line, ' ');
-    g_string_append (line, *w);
-    if (before && plain_width (family, line->str, size, bold) > width) {
-      g_string_append_len (out, line->str, (gssize)before);
-      g_string_append_c (out, '\n');
-      g_string_assign (line, *w);
-    }
-  }
+  for (char **w = word; *w; w++)
+    if (**w)
+      add_word (&wrap, *w);
   g_string_append (out, line->str);
   return g_markup_escape_text (out->str, -1);
 }

@@ -23,7 +23,7 @@ EnlRect enl_text_ink (PangoLayout *layout);
 double enl_text_lift (PangoLayout *layout);
 
 /* Plain text broken into lines no wider than `width` px, as markup with line feeds (g_free). A word
- * that is longer stays whole. */
+ * that is longer (a SMILES) is broken between characters. */
 char *enl_text_wrap (const char *family, const char *plain, double size, bool bold,
                      double width) ENL_MUST_USE;
 

@@ -141,6 +141,21 @@ START_TEST (wrapped_text_keeps_to_the_width)
 }
 END_TEST
 
+START_TEST (a_long_word_is_broken)
+{
+  const char plain[] = "of CC(=O)CC(=O)CC(=O)CC(=O)CC(=O)CC(C)=O here";
+  g_autofree char *markup = enl_text_wrap (light ()->family, plain, 12, false, 100);
+  double w, h;
+
+  enl_text_measure (light ()->family, markup, 12, false, &w, &h);
+  ck_assert_double_le (w, 100.01);
+  g_strdelimit (markup, "\n", ' ');
+  g_auto (GStrv) part = g_strsplit (markup, " ", -1);
+  g_autofree char *together = g_strjoinv ("", part);
+  ck_assert_str_eq (together, "ofCC(=O)CC(=O)CC(=O)CC(=O)CC(=O)CC(C)=Ohere");
+}
+END_TEST
+
 START_TEST (clipping_and_crossing)
 {
   const EnlRect box = {10, 10, 20, 10};
@@ -171,6 +186,7 @@ scene_suite (void)
   tcase_add_test (tc, dump_has_a_line_a_shape);
   tcase_add_test (tc, text_measures_do_not_depend_on_scripts_or_targets);
   tcase_add_test (tc, wrapped_text_keeps_to_the_width);
+  tcase_add_test (tc, a_long_word_is_broken);
   tcase_add_test (tc, clipping_and_crossing);
   suite_add_tcase (suite, tc);
   return suite;
