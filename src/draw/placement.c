@@ -163,16 +163,39 @@ judge (const EnlObstacles *obstacles, const EnlPlaceQuery *query, double angle, 
   return place;
 }
 
+/* The obstacles that a box of the query can meet: large drawings have many that are far away. */
+static EnlObstacles *
+neighbourhood (const EnlObstacles *obstacles, const EnlPlaceQuery *query)
+{
+  EnlObstacles *near = enl_obstacles_new ();
+  double half =
+      query->clearance + query->reach * GAP_GROWTH + query->width + query->height + query->pad;
+  EnlRect room = {query->anchor.x - half, query->anchor.y - half, 2 * half, 2 * half};
+
+  for (guint i = 0; i < obstacles->box->len; i++) {
+    EnlRect box = g_array_index (obstacles->box, EnlRect, i);
+    if (enl_rect_overlap (box, room) > 0)
+      g_array_append_val (near->box, box);
+  }
+  for (guint i = 0; i < obstacles->line->len; i++) {
+    Line line = g_array_index (obstacles->line, Line, i);
+    if (enl_segment_inside (line.a, line.b, enl_rect_grow (room, line.half)) > 0)
+      g_array_append_val (near->line, line);
+  }
+  return near;
+}
+
 EnlPlace
 enl_obstacles_place (const EnlObstacles *obstacles, const EnlPlaceQuery *query)
 {
+  g_autoptr (EnlObstacles) near = neighbourhood (obstacles, query);
   EnlPlace best = {.cost = INFINITY};
 
   for (double gap = FIRST_GAP; gap <= query->reach && gap < best.cost;
        gap = fmax (gap * GAP_GROWTH, gap + SMALLEST_STEP))
     for (int i = 0; i < DIRECTIONS; i++) {
-      EnlPlace place =
-          judge (obstacles, query, query->toward + 2 * G_PI * i / DIRECTIONS, gap, best.cost);
+      double angle = query->toward + 2 * G_PI * i / DIRECTIONS;
+      EnlPlace place = judge (near, query, angle, gap, best.cost);
       if (place.cost < best.cost - TIE)
         best = place;
     }

@@ -7,6 +7,7 @@
 #include "draw/plane.h"
 #include "draw/structure-sites.h"
 
+#define MAX_BADGES  30   /* sites with a badge; weaker ones keep their toned hydrogens */
 #define MAX_TRIED   24   /* equivalent atoms that are compared */
 #define REACH       7.0  /* bond lengths searched around an atom */
 #define LEADER_GAP  0.42 /* bond lengths to the badge above which a leader helps */
@@ -182,7 +183,7 @@ enl_site_plan_draw_badges (EnlSitePlan *plan, EnlScene *scene)
 
   if (!look->sites || !look->rank || look->sites->n_sites == 0)
     return;
-  uint32_t n = look->sites->n_sites;
+  uint32_t n = MIN (look->sites->n_sites, MAX_BADGES);
   g_autofree Choice *choice = g_new0 (Choice, n);
   for (uint32_t i = 0; i < n; i++) {
     uint32_t s = look->rank[i];

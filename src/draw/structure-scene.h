@@ -15,7 +15,8 @@ typedef struct {
   bool numbers;                /* atom numbers (1-based input positions) beside atoms */
 } EnlStructureLook;
 
-/* Scene of a molecule with layout (assertion). Structure at theme bond length, origin anywhere. */
+/* Scene of a molecule with layout (assertion). Structure at theme bond length, origin anywhere. The
+ * 30 most acidic sites have badges; more could not be read. */
 EnlScene *enl_structure_scene (const EnlMolecule *mol, const EnlStructureLook *look,
                                const EnlTheme *theme) ENL_MUST_USE;
 

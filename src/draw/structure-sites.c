@@ -10,8 +10,8 @@
 #define H_SIZE      0.80 /* of the atom label size; stays above 20 px in the projector theme */
 #define H_SPREAD    (G_PI / 5.4) /* of two hydrogens from the middle of the free angle */
 #define AREA_WIDTH  0.58         /* of the lit area, bond lengths */
-#define SEEN_CHARGE 0.04         /* elementary charges; less is no part of the system */
-#define SEEN_WEIGHT 0.004        /* of a form whose bonds are lit */
+#define SEEN_CHARGE 0.10  /* elementary charges; an atom with less does not light up by itself */
+#define SEEN_WEIGHT 0.004 /* of a form whose bonds are lit */
 
 static bool
 has_sites (const EnlStructureLook *look)

@@ -249,9 +249,8 @@ draw_foot (const Sheet *s, double y, double right)
   if (s->has_axis) {
     double size = s->theme->small_size;
     const char *footing = s->sheet->solvent == ENL_SOLVENT_THF ? " (DMSO-based footing)" : "";
-    g_autofree char *lowered = enl_text_lowered ("a", size);
     g_autofree char *words =
-        g_strdup_printf ("pK%s in %s%s at 25\u00A0°C; bars show the 90\u00A0%% interval.", lowered,
+        g_strdup_printf ("pKa in %s%s at 25\u00A0°C; bars show the 90\u00A0%% interval.",
                          enl_solvent_label (s->sheet->solvent), footing);
     enl_scene_text (s->scene, (EnlPoint){x, y}, words, size, false, 0, 0, ENL_TONE_MUTED);
     y += enl_text_line_height (s->theme->family, size);
