@@ -312,9 +312,10 @@ def compare_spellings(tally, smiles, rows, tool):
     for (text, i), again in zip(made, dump(tool, [t for t, _ in made])):
         if isinstance(rows[i], str):
             continue
-        ours = again if isinstance(again, str) else again["smiles"]
-        tally.check("random spelling", smiles[i], ours == rows[i]["smiles"],
-                    f"{text}: {rows[i]['smiles']} -> {ours}")
+        for name in ("smiles", "kekule"):
+            ours = again if isinstance(again, str) else again[name]
+            tally.check(f"random spelling ({name})", smiles[i], ours == rows[i][name],
+                        f"{text}: {rows[i][name]} -> {ours}")
 
 
 def explained(path):

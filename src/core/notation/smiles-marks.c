@@ -59,11 +59,14 @@ has_mark (const EnlSmilesWalk *walk, uint32_t atom)
 static bool
 makes_stray (const EnlSmilesWalk *walk, uint32_t atom)
 {
+  EnlUnit unit;
+
   if (unit_ending_at (walk, atom) != ENL_NONE)
     return false;
   for (uint32_t k = 0; k < enl_molecule_degree (walk->mol, atom); k++) {
     uint32_t bond = enl_molecule_bond_at (walk->mol, atom, k);
-    if (walk->order[bond] == 2 && has_mark (walk, enl_molecule_other_end (walk->mol, bond, atom)))
+    if (enl_unit_of_bond (walk->mol, bond, &unit) &&
+        has_mark (walk, enl_molecule_other_end (walk->mol, bond, atom)))
       return true;
   }
   return false;

@@ -251,6 +251,21 @@ read_bond (EnlSmilesReader *r)
 
 /* ---- ring closures ---- */
 
+/* "123)" behind "%(". */
+static int
+read_long_ring_number (const char *digits, size_t left, size_t *length)
+{
+  int number = 0;
+  size_t n = 0;
+
+  while (n < left && n < 3 && g_ascii_isdigit (digits[n]))
+    number = number * 10 + (digits[n++] - '0');
+  if (n == left || digits[n] != ')')
+    return -1;
+  *length = n + 3;
+  return number;
+}
+
 static int
 read_ring_number (EnlSmilesReader *r, size_t *length)
 {
@@ -260,6 +275,8 @@ read_ring_number (EnlSmilesReader *r, size_t *length)
   *length = 1;
   if (*start != '%')
     return *start - '0';
+  if (left > 4 && start[1] == '(' && g_ascii_isdigit (start[2]))
+    return read_long_ring_number (start + 2, left - 2, length);
   if (left < 3 || !g_ascii_isdigit (start[1]) || !g_ascii_isdigit (start[2]))
     return -1;
   *length = 3;

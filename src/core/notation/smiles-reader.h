@@ -7,6 +7,10 @@
 #define ENL_SMILES_MAX_SIZE  1000000 /* bytes; longer text is refused at once */
 #define ENL_SMILES_MAX_BONDS (ENL_MAX_ATOMS + ENL_MAX_RINGS)
 
+/* Ring numbers: 0 to 99 as in OpenSMILES, and %(100) to %(999), a common extension that large cages
+ * and sheets need. */
+#define ENL_SMILES_RINGS 1000
+
 typedef enum { TURN_NONE, TURN_ANTICLOCKWISE, TURN_CLOCKWISE } EnlSmilesTurn;
 
 typedef struct {
@@ -43,7 +47,7 @@ typedef struct {
   GArray *atom;   /* EnlSmilesAtom */
   GArray *bond;   /* EnlSmilesBond */
   GArray *branch; /* EnlSmilesBranch, the open ones */
-  EnlSmilesRing ring[100];
+  EnlSmilesRing ring[ENL_SMILES_RINGS];
   uint32_t previous; /* atom to bond to, or ENL_NONE */
   size_t symbol_at;  /* where the pending bond symbol stands */
   char symbol;       /* pending bond symbol, or 0 */

@@ -426,6 +426,8 @@ write_ranked (const EnlMolecule *mol, const EnlGraph *graph, EnlSmilesFlags flag
   Writer w = {.out = g_string_new (NULL)};
 
   walk_init (&w.walk, mol, graph, flags, rank);
+  if (flags & ENL_SMILES_KEKULE && !(flags & ENL_SMILES_INPUT_ORDER))
+    enl_smiles_place_double_bonds (&w.walk);
   walk_fragments (&w.walk);
   enl_smiles_choose_marks (&w.walk);
   w.digit = g_new0 (uint32_t, bonds + 1);

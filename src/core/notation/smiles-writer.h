@@ -27,5 +27,8 @@ typedef struct {
  * units agree on bonds they share, and no other double bond is stated by accident. */
 void enl_smiles_choose_marks (EnlSmilesWalk *walk);
 
+/* Sets `order` of aromatic bonds to the alternation that follows from the ranks alone. */
+void enl_smiles_place_double_bonds (EnlSmilesWalk *walk);
+
 /* Children of `atom` in the order of writing; returns how many. `list` has room for its degree. */
 uint32_t enl_smiles_children (const EnlSmilesWalk *walk, uint32_t atom, uint32_t *list);
