@@ -59,8 +59,7 @@ needs_levelling (const EnlMolecule *mol)
 {
   for (uint32_t i = 0; i < enl_molecule_atoms (mol); i++) {
     const EnlAtom *a = enl_molecule_atom (mol, i);
-    if (a->winding != ENL_WINDING_NONE || (a->element == N && enl_atom_is_cation (mol, i)) ||
-        (a->element == O && a->charge < 0))
+    if ((a->element == N && enl_atom_is_cation (mol, i)) || (a->element == O && a->charge < 0))
       return true;
   }
   return false;
@@ -77,14 +76,13 @@ find_classes (const EnlMolecule *mol, uint32_t *class_of)
   bool edited = false;
 
   if (!needs_levelling (mol)) {
-    enl_symmetry_classes (mol, true, class_of);
+    enl_symmetry_reflected_classes (mol, class_of);
     return false;
   }
   level = enl_molecule_copy (mol);
   for (uint32_t i = 0; i < enl_molecule_atoms (level); i++) {
     const EnlAtom *a = enl_molecule_atom (level, i);
 
-    enl_molecule_edit_atom (level, i)->winding = ENL_WINDING_NONE;
     if (a->element == N && enl_atom_is_cation (level, i))
       edited |= level_amidinium (level, i);
     else if (a->element == O && a->charge < 0)
@@ -92,7 +90,7 @@ find_classes (const EnlMolecule *mol, uint32_t *class_of)
   }
   if (edited)
     enl_molecule_finish (level);
-  enl_symmetry_classes (level, true, class_of);
+  enl_symmetry_reflected_classes (level, class_of);
   return edited;
 }
 

@@ -283,7 +283,7 @@ keeps_arcs (const EnlGraph *graph, const uint32_t *image, uint32_t v)
 }
 
 static bool
-keeps_unit (const EnlGraph *graph, const uint32_t *image, const EnlUnit *unit)
+keeps_unit (const EnlGraph *graph, const uint32_t *image, const EnlUnit *unit, int centre_sign)
 {
   const uint32_t *at = unit->bond == ENL_NONE ? graph->unit_at : graph->bond_at;
   uint32_t found = at[image[unit->end[0]]];
@@ -292,17 +292,33 @@ keeps_unit (const EnlGraph *graph, const uint32_t *image, const EnlUnit *unit)
     return false;
   if (unit->bond != ENL_NONE && at[image[unit->end[1]]] != found)
     return false;
-  return graph->unit[found].value == enl_unit_sign (unit, image);
+  int sign = unit->bond == ENL_NONE ? centre_sign : 1;
+  return graph->unit[found].value == sign * enl_unit_sign (unit, image);
 }
 
-bool
-enl_graph_is_automorphism (const EnlGraph *graph, const uint32_t *image)
+static bool
+keeps_graph (const EnlGraph *graph, const uint32_t *image, int centre_sign)
 {
   for (uint32_t v = 0; v < graph->n; v++)
     if (image[v] != v && !keeps_arcs (graph, image, v))
       return false;
   for (uint32_t u = 0; u < graph->units; u++)
-    if (graph->unit[u].value && !keeps_unit (graph, image, &graph->unit[u]))
+    if (graph->unit[u].value && !keeps_unit (graph, image, &graph->unit[u], centre_sign))
       return false;
   return true;
+}
+
+bool
+enl_graph_is_automorphism (const EnlGraph *graph, const uint32_t *image)
+{
+  return keeps_graph (graph, image, 1);
+}
+
+bool
+enl_graph_is_reflection (const EnlGraph *graph, const uint32_t *image)
+{
+  for (uint32_t v = 0; v < graph->n; v++)
+    if (graph->colour[v] != graph->colour[image[v]])
+      return false;
+  return keeps_graph (graph, image, -1);
 }

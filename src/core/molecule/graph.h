@@ -49,6 +49,9 @@ int enl_unit_sign (const EnlUnit *unit, const uint32_t *key);
 /* True when the permutation keeps arcs and all units with a value (colours are the caller's). */
 bool enl_graph_is_automorphism (const EnlGraph *graph, const uint32_t *image);
 
+/* The same for a permutation that turns every centre over and keeps the double bonds. */
+bool enl_graph_is_reflection (const EnlGraph *graph, const uint32_t *image);
+
 /* Takes the value of every unit whose two arrangements are the same molecule, so that only true
  * stereo units keep one. */
 void enl_graph_settle_units (EnlGraph *graph);

@@ -33,7 +33,8 @@ static const struct {
     {"C(1CC1)", ENL_ERROR_SYNTAX, 3, 1, "ring number 1 without an atom before it",
      "behind an atom"},
     {"C%1CC", ENL_ERROR_SYNTAX, 2, 1, "'%' without two digits", "%12"},
-    {"C%(10)CC%(10)", ENL_ERROR_SYNTAX, 2, 1, "'%' without two digits", "%12"},
+    {"C%(10CC%(10)", ENL_ERROR_SYNTAX, 2, 1, "'%' without two digits", "%12"},
+    {"C%(1000)CC", ENL_ERROR_SYNTAX, 2, 1, "'%' without two digits", "%12"},
 
     /* branches */
     {"CC(=O", ENL_ERROR_SYNTAX, 3, 1, "branch '(' is never closed", "add ')'"},

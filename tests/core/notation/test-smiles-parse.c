@@ -28,6 +28,7 @@ static const struct {
     {"C12(CCCCC1)CCCCC2", "C11H20"},
     {"C0CCCC0", "C5H10"},
     {"C%12CCCCC%12", "C6H12"},
+    {"C%(123)CCCCC%(123)", "C6H12"},
     {"C%01CCCCC1", "C6H12"},
     {"C1CCCCC%01", "C6H12"},
     {"C=1CCCCC=1", "C6H10"},
