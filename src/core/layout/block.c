@@ -138,7 +138,7 @@ consider_part_template (const uint32_t *image, const EnlSpot *spot, void *data)
   if (++*of->runs > most_runs || !enl_coordgen_draw (ring, held))
     return false;
   consider (of->choice, ring->spot, fused_template_malus, ENL_BLOCK_REDRAWN);
-  enl_relax (ring, short_bond, long_bond, false, NULL);
+  enl_relax (ring, short_bond, long_bond, false);
   consider (of->choice, ring->spot, fused_template_malus, ENL_BLOCK_REDRAWN);
   return true;
 }
@@ -176,7 +176,7 @@ consider_views (Choice *choice)
 
   for (uint32_t k = 0; k < n_views; k++) {
     memcpy (choice->ring->spot, view + k * n, n * sizeof (EnlSpot));
-    enl_relax (choice->ring, short_bond, long_bond, false, NULL);
+    enl_relax (choice->ring, short_bond, long_bond, false);
     enl_orient (choice->ring);
     consider (choice, choice->ring->spot, solid_malus, ENL_BLOCK_REDRAWN);
   }
@@ -196,7 +196,7 @@ consider_present (Choice *choice)
     return;
   g_autofree EnlSpot *before = g_memdup2 (choice->ring->spot, n * sizeof (EnlSpot));
   consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
-  enl_relax (choice->ring, short_bond, long_bond, false, NULL);
+  enl_relax (choice->ring, short_bond, long_bond, false);
   consider (choice, choice->ring->spot, 0, ENL_BLOCK_REDRAWN);
   memcpy (choice->ring->spot, before, n * sizeof (EnlSpot));
 }

@@ -2,6 +2,7 @@
 
 #include <cmath>
 #include <exception>
+#include <map>
 #include <mutex>
 #include <vector>
 
@@ -94,14 +95,27 @@ read_back (const Atoms &at, EnlCoordgenAtom *atom)
   return true;
 }
 
+/* Bonds to metals two or three lengths long, as the library draws them by itself, are only wanted
+ * where five and more ligands need the room. */
+bool
+is_crowded_complex (const EnlCoordgenBond *bond, uint32_t n_bonds, const EnlCoordgenAtom *atom)
+{
+  std::map<uint32_t, int> ligands;
+
+  for (uint32_t i = 0; i < n_bonds; i++)
+    for (uint32_t end : {bond[i].from, bond[i].to})
+      if (sketcherMinimizerAtom::isMetal (atom[end].element) && ++ligands[end] > 4)
+        return true;
+  return false;
+}
+
 bool
 place (EnlCoordgenAtom *atom, uint32_t n_atoms, const EnlCoordgenBond *bond, uint32_t n_bonds,
        double effort)
 {
   load_templates_once ();
   sketcherMinimizer minimizer (static_cast<float> (effort));
-  /* Else bonds to metals come out two or three lengths long. */
-  minimizer.setTreatNonterminalBondsToMetalAsZOBs (false);
+  minimizer.setTreatNonterminalBondsToMetalAsZOBs (is_crowded_complex (bond, n_bonds, atom));
   auto *mol = new sketcherMinimizerMolecule; /* `minimizer` owns it after initialize */
   Atoms at = add_atoms (mol, atom, n_atoms);
   auto made = add_bonds (mol, at, bond, n_bonds);

@@ -175,10 +175,10 @@ draw_by_coordgen (EnlSketch *sketch, const EnlTemplates *templates, bool *uprigh
 }
 
 static void
-repair (EnlSketch *sketch)
+repair (EnlSketch *sketch, bool from_template)
 {
   enl_repair_sides (sketch);
-  enl_repair_crowding (sketch);
+  enl_repair_crowding (sketch, !from_template);
 }
 
 static double
@@ -201,16 +201,16 @@ draw_rest (EnlSketch *sketch, const EnlTemplates *templates, bool *upright)
   enl_blocks_find (sketch);
   if (!draw_by_coordgen (sketch, templates, upright)) {
     enl_assemble (sketch, templates);
-    repair (sketch);
+    repair (sketch, false);
     return;
   }
-  repair (sketch);
+  repair (sketch, *upright);
   double cost = cost_of (sketch);
   if (*upright || cost < good_enough)
     return;
   g_autofree EnlSpot *before = g_memdup2 (sketch->spot, size);
   enl_assemble (sketch, templates);
-  repair (sketch);
+  repair (sketch, false);
   if (cost_of (sketch) >= cost - better_by)
     memcpy (sketch->spot, before, size);
 }

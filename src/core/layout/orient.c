@@ -5,8 +5,8 @@
 #include "core/layout/geometry.h"
 
 /* Weights of the wishes. */
-static const double flat_weight = 2, raster_weight = 1, ring_weight = 0.4, fusion_weight = 0.7,
-                    upright_weight = 0.12, symmetry_weight = 0.8;
+static const double flat_weight = 2.4, raster_weight = 1, ring_weight = 0.4, fusion_weight = 0.7,
+                    upright_weight = 0.4, symmetry_weight = 0.8;
 
 /* The picture as it came stays when another is hardly better. */
 static const double stay_bonus = 0.1, mirror_malus = 0.02;
@@ -81,7 +81,8 @@ score_bonds (const EnlSketch *posed_sketch)
          ring_weight * ring / fmax (1, n_ring) + fusion_weight * fusion / fmax (1, n_fusion);
 }
 
-/* (width - height) / (width + height) */
+/* f |f| with f = (width - height) / (width + height): matters for long pictures, hardly for compact
+ * ones. */
 static double
 flatness (const EnlSketch *sketch)
 {
@@ -92,7 +93,8 @@ flatness (const EnlSketch *sketch)
     low_y = fmin (low_y, sketch->spot[i].y), high_y = fmax (high_y, sketch->spot[i].y);
   }
   double width = high_x - low_x, height = high_y - low_y;
-  return width + height > 0 ? (width - height) / (width + height) : 0;
+  double flat = width + height > 0 ? (width - height) / (width + height) : 0;
+  return flat * fabs (flat);
 }
 
 /* Terminal double bonds (carbonyl groups) upwards, and of two poses alike the one that has them on
@@ -100,17 +102,19 @@ flatness (const EnlSketch *sketch)
 static double
 uprightness (const EnlSketch *sketch)
 {
-  double sum = 0;
+  double sum = 0, n = 0;
 
   for (uint32_t b = 0; b < sketch->n_bonds; b++) {
     const EnlSketchBond *bond = &sketch->bond[b];
     bool from_end = enl_sketch_degree (sketch, bond->from) == 1;
     bool to_end = enl_sketch_degree (sketch, bond->to) == 1;
     double angle = bond_angle (sketch, b);
-    if (bond->order == 2 && from_end != to_end)
-      sum += (sin (angle) + 0.2 * cos (angle)) * (to_end ? 1 : -1);
+    if (bond->order != 2 || from_end == to_end)
+      continue;
+    sum += (sin (angle) + 0.2 * cos (angle)) * (to_end ? 1 : -1);
+    n++;
   }
-  return sum;
+  return n > 0 ? sum / sqrt (n) : 0;
 }
 
 /* Share of the atoms that have an image when the picture is reflected left to right or, with

@@ -16,7 +16,6 @@ static const double angle_play = 0.12;
 
 typedef struct {
   EnlSketch *sketch;
-  const bool *fixed;
   GArray *angle; /* Angle */
 } Relaxation;
 
@@ -28,8 +27,6 @@ typedef struct {
 static void
 shift (Relaxation *r, uint32_t atom, EnlSpot by, double factor)
 {
-  if (r->fixed && r->fixed[atom])
-    return;
   r->sketch->spot[atom].x += by.x * factor;
   r->sketch->spot[atom].y += by.y * factor;
 }
@@ -114,9 +111,9 @@ relax_once (Relaxation *r, double shortest, double longest)
 }
 
 void
-enl_relax (EnlSketch *sketch, double shortest, double longest, bool stiff, const bool *fixed)
+enl_relax (EnlSketch *sketch, double shortest, double longest, bool stiff)
 {
-  Relaxation r = {sketch, fixed, g_array_new (FALSE, FALSE, sizeof (Angle))};
+  Relaxation r = {sketch, g_array_new (FALSE, FALSE, sizeof (Angle))};
 
   if (stiff)
     collect_angles (&r);

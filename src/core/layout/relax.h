@@ -4,6 +4,6 @@
 #include "core/layout/sketch.h"
 
 /* Moves atoms in many small steps until bonds are between `shortest` and `longest` and nothing
- * crowds, as far as that goes. Bond angles keep near to what they were when `stiff`. Atoms with
- * fixed[atom] true stay (NULL: none). Deterministic; the result may be worse: compare. */
-void enl_relax (EnlSketch *sketch, double shortest, double longest, bool stiff, const bool *fixed);
+ * crowds, as far as that goes. Bond angles keep near to what they were when `stiff`. Deterministic;
+ * the result may be worse: compare. */
+void enl_relax (EnlSketch *sketch, double shortest, double longest, bool stiff);

@@ -11,6 +11,9 @@
 /* A picture with less crowding than this is left alone. */
 static const double clear_enough = 0.02;
 
+/* A picture whose bonds are this even is not evened out further. */
+static const double even_enough = 0.1;
+
 /* What counts as a gain; turning a branch out of its ideal angle costs this per 30 degrees. */
 static const double worth_it = 0.02, bend_cost = 0.25;
 
@@ -218,27 +221,41 @@ try_bond (Repair *r, uint32_t a, uint32_t b)
   try_turns (r, b, a);
 }
 
+/* Tries the bonds at one atom of the path between two clashing atoms: that along the path (`next`
+ * is the following atom) and all bonds at its ends, or with `aside` the other ones, which make
+ * room.
+ */
+static void
+try_bonds_at (Repair *r, uint32_t atom, uint32_t next, bool at_end, bool aside, uint32_t *tried)
+{
+  const EnlSketch *s = r->sketch;
+
+  for (uint32_t l = s->first[atom]; l < s->first[atom + 1]; l++) {
+    bool main_bond = at_end || s->neighbour[l] == next;
+    if (s->bond[s->via[l]].block != ENL_NONE || main_bond == aside || *tried >= max_bonds)
+      continue;
+    (*tried)++;
+    r->bond = s->via[l];
+    if (r->barred[r->bond] <= r->round)
+      try_bond (r, atom, s->neighbour[l]);
+  }
+}
+
 static void
 try_path (Repair *r, const EnlClash *clash)
 {
   EnlSketch *s = r->sketch;
   g_autofree uint32_t *path = g_new (uint32_t, s->n_atoms + 1);
-  uint32_t length = find_path (s, clash->a, clash->b, path), tried = 0;
+  uint32_t length = find_path (s, clash->a, clash->b, path);
 
-  for (uint32_t k = 0; k < length && r->work < max_work; k++) {
-    r->bond = s->via[s->first[path[k]]];
-    if (r->barred[r->bond] <= r->round)
-      try_exchanges (r, path[k]);
-    for (uint32_t l = s->first[path[k]]; l < s->first[path[k] + 1]; l++) {
-      bool on_path = k + 1 < length && s->neighbour[l] == path[k + 1];
-      bool at_end = k == 0 || k + 1 == length;
-      if (s->bond[s->via[l]].block != ENL_NONE || (!on_path && !at_end) || tried >= max_bonds)
-        continue;
-      tried++;
-      r->bond = s->via[l];
-      if (r->barred[r->bond] > r->round)
-        continue;
-      try_bond (r, path[k], s->neighbour[l]);
+  for (int aside = 0; aside < 2; aside++) {
+    uint32_t tried = 0;
+    for (uint32_t k = 0; k < length && r->work < max_work; k++) {
+      uint32_t next = k + 1 < length ? path[k + 1] : ENL_NONE;
+      try_bonds_at (r, path[k], next, k == 0 || k + 1 == length, aside, &tried);
+      r->bond = s->via[s->first[path[k]]];
+      if (!aside && r->barred[r->bond] <= r->round)
+        try_exchanges (r, path[k]);
     }
   }
 }
@@ -301,26 +318,34 @@ longest_bond (const EnlSketch *s, double *shortest)
   return longest;
 }
 
-/* Small shifts, kept when they help and stretch no bond beyond `play` of the range before. */
+/* Small shifts towards bonds between `low` and `high`, kept when they help and keep to that. */
 static void
-nudge (EnlSketch *sketch, double play)
+nudge (EnlSketch *sketch, double low, double high)
 {
-  double shortest, longest = longest_bond (sketch, &shortest), now_shortest;
+  const double slack = 0.02;
   double before = enl_strain_crowding (sketch) + enl_strain_stretch (sketch);
   g_autofree EnlSpot *saved = g_memdup2 (sketch->spot, sketch->n_atoms * sizeof (EnlSpot));
-  double low = fmin (shortest, 1 - play), high = fmax (longest, 1 + play);
 
-  enl_relax (sketch, low, high, true, NULL);
-  double now_longest = longest_bond (sketch, &now_shortest);
+  enl_relax (sketch, low, high, true);
+  double shortest, longest = longest_bond (sketch, &shortest);
   double after = enl_strain_crowding (sketch) + enl_strain_stretch (sketch);
-  if (after < before - worth_it && now_shortest > low - 0.02 && now_longest < high + 0.02 &&
+  if (after < before - worth_it && shortest > low - slack && longest < high + slack &&
       enl_sketch_sides_right (sketch))
     return;
   memcpy (sketch->spot, saved, sketch->n_atoms * sizeof (EnlSpot));
 }
 
+/* Bonds that were foreshortened or stretched may stay so. */
+static void
+nudge_apart (EnlSketch *sketch, double play)
+{
+  double shortest, longest = longest_bond (sketch, &shortest);
+
+  nudge (sketch, fmin (shortest, 1 - play), fmax (longest, 1 + play));
+}
+
 void
-enl_repair_crowding (EnlSketch *sketch)
+enl_repair_crowding (EnlSketch *sketch, bool even)
 {
   const double plays[] = {0.08, 0.12};
   g_autofree EnlSpot *room = g_new0 (EnlSpot, 2 * sketch->n_atoms + 1);
@@ -336,5 +361,7 @@ enl_repair_crowding (EnlSketch *sketch)
     move_branches (&r);
   for (size_t k = 0; k < G_N_ELEMENTS (plays); k++)
     if (enl_strain_crowding (sketch) >= clear_enough)
-      nudge (sketch, plays[k]);
+      nudge_apart (sketch, plays[k]);
+  if (even && enl_strain_stretch (sketch) > even_enough)
+    nudge (sketch, 1 - plays[0], 1 + plays[0]);
 }

@@ -205,6 +205,28 @@ enl_sketch_bonded (const EnlSketch *sketch, uint32_t a, uint32_t b)
   return false;
 }
 
+/* Metals are what is no noble gas, no non-metal and no metalloid (common practice). */
+static bool
+is_metal (uint8_t element)
+{
+  static const uint8_t other[] = {0,  1,  2,  5,  6,  7,  8,  9,  10, 14, 15, 16, 17,
+                                  18, 32, 33, 34, 35, 36, 51, 52, 53, 54, 85, 86};
+
+  for (size_t k = 0; k < G_N_ELEMENTS (other); k++)
+    if (other[k] == element)
+      return false;
+  return true;
+}
+
+bool
+enl_sketch_bond_may_be_long (const EnlSketch *sketch, uint32_t bond)
+{
+  const EnlSketchBond *b = &sketch->bond[bond];
+
+  return (is_metal (sketch->atom[b->from].element) && enl_sketch_degree (sketch, b->from) > 4) ||
+         (is_metal (sketch->atom[b->to].element) && enl_sketch_degree (sketch, b->to) > 4);
+}
+
 /* Atoms of the smallest ring through a bond, 0 when there is none; `depth` and `queue` are room for
  * all atoms. */
 static uint32_t

@@ -18,7 +18,6 @@ typedef struct {
   uint32_t source; /* atom of the molecule */
   uint8_t element, hydrogens;
   int8_t charge;
-  bool held; /* stands on a ring template: repairs leave its shape alone */
 } EnlSketchAtom;
 
 typedef struct {
@@ -51,6 +50,9 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlSketch, enl_sketch_free)
 uint32_t enl_sketch_degree (const EnlSketch *sketch, uint32_t atom);
 uint32_t enl_sketch_other_end (const EnlSketch *sketch, uint32_t bond, uint32_t atom);
 bool enl_sketch_bonded (const EnlSketch *sketch, uint32_t a, uint32_t b);
+
+/* True for a bond to a metal with five and more ligands: those need longer bonds for room. */
+bool enl_sketch_bond_may_be_long (const EnlSketch *sketch, uint32_t bond);
 
 /* The largest over all ring bonds of the smallest ring through the bond; 0 without rings. */
 uint32_t enl_sketch_widest_ring (const EnlSketch *sketch);

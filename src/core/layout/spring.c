@@ -173,5 +173,5 @@ enl_spring_draw (EnlSketch *sketch)
   g_autofree double *distance = all_distances (sketch);
   start_by_scaling (sketch, distance);
   majorise (sketch, distance);
-  enl_relax (sketch, short_bond, long_bond, false, NULL);
+  enl_relax (sketch, short_bond, long_bond, false);
 }

@@ -12,6 +12,9 @@
 static const double atoms_crowd = 0.8, atoms_hide = 0.35;
 static const double bond_crowds = 0.4, bond_hides = 0.27;
 
+/* What bonds to crowded metals may be longer than 1 for nothing. */
+static const double long_bond_play = 1.1;
+
 static const double crowd_cost = 8, hide_cost = 10, cross_cost = 5, stretch_cost = 6;
 
 static double
@@ -176,9 +179,10 @@ enl_strain_stretch (const EnlSketch *sketch)
   double cost = 0;
 
   for (uint32_t b = 0; b < sketch->n_bonds; b++) {
-    double off =
-        enl_spot_distance (sketch->spot[sketch->bond[b].from], sketch->spot[sketch->bond[b].to]) -
-        1;
+    const EnlSketchBond *bond = &sketch->bond[b];
+    double off = enl_spot_distance (sketch->spot[bond->from], sketch->spot[bond->to]) - 1;
+    if (off > 0 && off < long_bond_play && enl_sketch_bond_may_be_long (sketch, b))
+      continue;
     cost += stretch_cost * off * off;
   }
   return cost;

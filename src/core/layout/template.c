@@ -7,6 +7,7 @@
 #include "resources/embedded.h"
 
 #define MAX_TEMPLATE_ATOMS 40
+#define MAX_TEMPLATE_BONDS 60
 
 /* Steps after which a search for matches gives up, and matches that are looked at. */
 static const uint32_t max_steps = 40000, max_matches = 64;
@@ -17,6 +18,7 @@ typedef struct {
   EnlSpot spot[MAX_TEMPLATE_ATOMS];
   bool bonded[MAX_TEMPLATE_ATOMS][MAX_TEMPLATE_ATOMS];
   uint32_t degree[MAX_TEMPLATE_ATOMS];
+  uint32_t bond[MAX_TEMPLATE_BONDS][2];
   uint32_t order[MAX_TEMPLATE_ATOMS];  /* atoms so that each but the first touches an earlier one */
   uint32_t anchor[MAX_TEMPLATE_ATOMS]; /* that earlier one */
 } Template;
@@ -58,12 +60,14 @@ read_spots (Template *t, const char *text)
 static bool
 add_template_bond (Template *t, uint64_t a, uint64_t b)
 {
-  if (a < 1 || b < 1 || a > t->n_atoms || b > t->n_atoms || a == b || t->bonded[a - 1][b - 1])
+  if (a < 1 || b < 1 || a > t->n_atoms || b > t->n_atoms || a == b || t->bonded[a - 1][b - 1] ||
+      t->n_bonds == MAX_TEMPLATE_BONDS)
     return false;
   t->bonded[a - 1][b - 1] = t->bonded[b - 1][a - 1] = true;
   t->degree[a - 1]++;
   t->degree[b - 1]++;
-  t->n_bonds++;
+  t->bond[t->n_bonds][0] = (uint32_t)a - 1;
+  t->bond[t->n_bonds++][1] = (uint32_t)b - 1;
   return true;
 }
 
@@ -200,6 +204,14 @@ const EnlSpot *
 enl_template_spots (const EnlTemplates *templates, uint32_t index)
 {
   return template_at (templates, index)->spot;
+}
+
+const uint32_t (*enl_template_bonds (const EnlTemplates *templates, uint32_t index, uint32_t *n))[2]
+{
+  const Template *t = template_at (templates, index);
+
+  *n = t->n_bonds;
+  return t->bond;
 }
 
 typedef struct {

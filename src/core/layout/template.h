@@ -21,6 +21,10 @@ uint32_t enl_template_atoms (const EnlTemplates *templates, uint32_t index);
 uint32_t enl_template_crossings (const EnlTemplates *templates, uint32_t index);
 const EnlSpot *enl_template_spots (const EnlTemplates *templates, uint32_t index);
 
+/* The bonds as pairs of atoms (from 0), owned by the templates. */
+const uint32_t (*enl_template_bonds (const EnlTemplates *templates, uint32_t index,
+                                     uint32_t *n))[2];
+
 /* Called for each way to lay the template on the sketch: image[t] is the atom for template atom t.
  * Return false to stop. */
 typedef bool (*EnlTemplateMatch) (const uint32_t *image, const EnlSpot *spot, void *data);
