@@ -29,6 +29,19 @@ enl_atom_is_halogen (const EnlMolecule *mol, uint32_t atom)
   return e == F || e == CL || e == BR || e == I || e == AT;
 }
 
+bool
+enl_atom_is_metal (const EnlMolecule *mol, uint32_t atom)
+{
+  /* first and last atomic number of every run of metals in the periodic table */
+  static const uint8_t run[][2] = {{3, 4}, {11, 13}, {19, 31}, {37, 49}, {55, 81}, {87, 118}};
+  const uint8_t e = element_of (mol, atom);
+
+  for (size_t i = 0; i < ENL_COUNT (run); i++)
+    if (e >= run[i][0] && e <= run[i][1])
+      return true;
+  return false;
+}
+
 uint32_t
 enl_atom_heavy_degree (const EnlMolecule *mol, uint32_t atom)
 {

@@ -103,6 +103,9 @@ bool enl_group_is_cf3 (const EnlMolecule *mol, uint32_t atom);
 
 bool enl_atom_is_hydrogen (const EnlMolecule *mol, uint32_t atom);
 bool enl_atom_is_halogen (const EnlMolecule *mol, uint32_t atom);
+/* Alkali, alkaline earth and transition metals, lanthanides, actinides, Al, Ga, In, Tl; the heavier
+ * elements of groups 14 to 16 (Sn, Pb, Sb, Bi, Te) count as covalent partners. */
+bool enl_atom_is_metal (const EnlMolecule *mol, uint32_t atom);
 /* Neighbours that are not hydrogen atoms. */
 uint32_t enl_atom_heavy_degree (const EnlMolecule *mol, uint32_t atom);
 /* Neighbour of `element` (0: any) across a bond of `order` that is not aromatic, or ENL_NONE. */

@@ -33,15 +33,21 @@ acceptor_label (const EnlMolecule *mol, uint32_t atom, EnlGroup group)
   return enl_group_label (group);
 }
 
+/* Formulas stand without an article: "alpha to C=N", but "alpha to the ketone C=O". */
+static const char *
+article (const char *label)
+{
+  return strpbrk (label, "=+") != NULL && strchr (label, ' ') == NULL ? "" : "the ";
+}
+
 /* "the nitrile", "both nitriles", "all three nitriles". */
 static void
 append_counted (GString *words, const char *label, uint32_t n)
 {
-  const bool symbol = strpbrk (label, "=+") != NULL;
-  const bool bare = symbol && strchr (label, ' ') == NULL;
+  const bool symbol = strpbrk (label, "=+") != NULL || g_str_has_suffix (label, " N");
 
   if (n == 1)
-    g_string_append_printf (words, "%s%s", bare ? "" : "the ", label);
+    g_string_append_printf (words, "%s%s", article (label), label);
   else
     g_string_append_printf (words, "%s %s%s", n == 2 ? "both" : "all three", label,
                             symbol ? "" : "s");
@@ -316,7 +322,8 @@ single_benzylic_words (const EnlMolecule *mol, uint32_t aryl)
     if (partner.distance > 0 && partner.what == NULL)
       return g_strdup_printf ("heterobenzylic, %s to ring N", where[partner.distance]);
     if (partner.distance > 0)
-      return g_strdup_printf ("benzylic, %s to the %s", where[partner.distance], partner.what);
+      return g_strdup_printf ("benzylic, %s to %s%s", where[partner.distance],
+                              article (partner.what), partner.what);
   }
   return g_strdup (stem);
 }

@@ -400,6 +400,18 @@ unsaturated_reason (const EnlMolecule *mol, uint32_t atom)
   }
 }
 
+/* Bound sideways to a metal, as in ferrocene: the metal holds a neighbour of the carbon too. */
+static bool
+is_in_pi_complex (const EnlMolecule *mol, uint32_t atom)
+{
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, atom); k++) {
+    uint32_t other = enl_molecule_neighbour (mol, atom, k);
+    if (enl_atom_is_metal (mol, other) && in_common_three_ring (mol, atom, other))
+      return true;
+  }
+  return false;
+}
+
 bool
 enl_site_carbon_facts (const EnlMolecule *mol, uint32_t atom, EnlCarbonFacts *facts)
 {
@@ -408,7 +420,8 @@ enl_site_carbon_facts (const EnlMolecule *mol, uint32_t atom, EnlCarbonFacts *fa
   memset (facts, 0, sizeof *facts);
   facts->across = ENL_NONE;
   if (a->element != C || a->charge != 0 || a->unpaired != 0 ||
-      enl_molecule_total_hydrogens (mol, atom) == 0 || enl_atom_heavy_degree (mol, atom) > 3)
+      enl_molecule_total_hydrogens (mol, atom) == 0 || enl_atom_heavy_degree (mol, atom) > 3 ||
+      is_in_pi_complex (mol, atom))
     return false;
   facts->reason = enl_atom_is_saturated (mol, atom) ? saturated_reason (mol, atom, facts)
                                                     : unsaturated_reason (mol, atom);

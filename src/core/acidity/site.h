@@ -16,7 +16,8 @@
  *   the negative charge itself has no site, except HS-.
  *
  * No sites: formyl, plain sp3, vinyl and aryl C-H (that of neutral azoles too); C-H on O or N of an
- * ester or amide; C-H beside one divalent S, Si or B; Si-H, B-H and metal hydrides.
+ * ester or amide; C-H beside one divalent S, Si or B; carbon in a pi complex of a metal; Si-H, B-H
+ * and metal hydrides.
  *
  * Two geometric rules take an acceptor or pi neighbour away. Bredt: no C=C at the bridgehead of a
  * bicycle unless the ring in which it is trans has nine members (site-carbon.c has the sources);
