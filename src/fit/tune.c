@@ -84,6 +84,7 @@ enl_tuner_free (EnlTuner *tuner)
 typedef struct {
   const EnlTuner *tuner;
   EnlHyper hyper;
+  EnlRelevance relevance;
   uint32_t n;
   EnlKernelParts *parts; /* of every pair, packed */
   double *inverse;       /* packed */
@@ -109,14 +110,14 @@ fill_covariance (Work *work)
   const EnlTuner *tuner = work->tuner;
   double *matrix = g_new (double, ENL_PACKED (work->n, 0) + 1);
 
-  enl_site_set_scale (tuner->rows, &work->hyper);
+  enl_relevance_init (&work->relevance, &work->hyper);
   for (uint32_t i = 0; i < work->n; i++) {
     for (uint32_t j = 0; j <= i; j++) {
       size_t at = ENL_PACKED (i, j);
       double likeness[ENL_N_SHELLS];
       for (int d = 0; d < ENL_N_SHELLS; d++)
         likeness[d] = tuner->likeness[at * ENL_N_SHELLS + d];
-      enl_kernel_pair (tuner->rows, i, tuner->rows, j, &work->parts[at]);
+      enl_kernel_pair (&work->relevance, tuner->rows, i, tuner->rows, j, &work->parts[at]);
       work->parts[at].likeness = enl_kernel_likeness (&work->hyper, likeness);
       matrix[at] = enl_kernel_value (&work->hyper, &work->parts[at]);
     }
@@ -291,10 +292,8 @@ add_relevance (const Work *work, uint32_t i, uint32_t j, double push, double *gr
   const EnlSiteSet *rows = work->tuner->rows;
   const double *h = work->hyper.value;
   const EnlKernelParts *p = &work->parts[ENL_PACKED (i, j)];
-  const double *li = rows->linear + (size_t)i * ENL_N_DESCRIPTORS;
-  const double *lj = rows->linear + (size_t)j * ENL_N_DESCRIPTORS;
-  const double *si = rows->smooth + (size_t)i * ENL_N_DESCRIPTORS;
-  const double *sj = rows->smooth + (size_t)j * ENL_N_DESCRIPTORS;
+  const float *a = rows->z + (size_t)i * ENL_N_DESCRIPTORS;
+  const float *b = rows->z + (size_t)j * ENL_N_DESCRIPTORS;
   double linear = push * (h[ENL_H_linear_common] + h[ENL_H_linear_element] * p->same_element +
                           h[ENL_H_linear_solvent] * (p->same_element && p->same_solvent));
   double smooth = 0;
@@ -303,9 +302,9 @@ add_relevance (const Work *work, uint32_t i, uint32_t j, double push, double *gr
     smooth =
         -push * enl_kernel_smooth (&work->hyper, p) / (2 * p->distance * h[ENL_H_smooth_length]);
   for (int k = 0; k < ENL_N_DESCRIPTORS; k++) {
-    double gap = si[k] - sj[k];
-    gradient[ENL_H_linear_weight + k] += linear * li[k] * lj[k];
-    gradient[ENL_H_smooth_weight + k] += smooth * gap * gap;
+    double gap = (double)(a[k] - b[k]);
+    gradient[ENL_H_linear_weight + k] += linear * (double)(work->relevance.linear[k] * a[k] * b[k]);
+    gradient[ENL_H_smooth_weight + k] += smooth * (double)work->relevance.smooth[k] * gap * gap;
   }
 }
 

@@ -9,7 +9,7 @@ enl_site_set_new (uint32_t n)
   EnlSiteSet *set = g_new0 (EnlSiteSet, 1);
 
   set->n = n;
-  set->z = g_new0 (double, (size_t)n *ENL_N_DESCRIPTORS + 1);
+  set->z = set->owned_z = g_new0 (float, (size_t)n *ENL_N_DESCRIPTORS + 1);
   set->shells = g_new0 (EnlShells, n + 1);
   set->marks = g_array_new (FALSE, FALSE, sizeof (EnlMark));
   set->element = g_new0 (uint8_t, n + 1);
@@ -22,13 +22,11 @@ enl_site_set_free (EnlSiteSet *set)
 {
   if (!set)
     return;
-  g_free (set->z);
+  g_free (set->owned_z);
   g_free (set->shells);
   g_array_unref (set->marks);
   g_free (set->element);
   g_free (set->solvent);
-  g_free (set->linear);
-  g_free (set->smooth);
   g_free (set);
 }
 
@@ -36,8 +34,12 @@ void
 enl_site_set_describe (EnlSiteSet *set, uint32_t index, EnlSurvey *survey, const EnlPi *pi,
                        uint32_t atom, EnlSolvent solvent)
 {
-  g_assert (index < set->n);
-  enl_descriptors_fill (survey, pi, atom, set->z + (size_t)index * ENL_N_DESCRIPTORS);
+  double value[ENL_N_DESCRIPTORS];
+
+  g_assert (index < set->n && set->owned_z);
+  enl_descriptors_fill (survey, pi, atom, value);
+  for (size_t k = 0; k < ENL_N_DESCRIPTORS; k++)
+    set->owned_z[(size_t)index * ENL_N_DESCRIPTORS + k] = (float)value[k];
   enl_shells_collect (survey, atom, set->marks, &set->shells[index]);
   set->element[index] = enl_molecule_atom (enl_survey_molecule (survey), atom)->element;
   set->solvent[index] = (uint8_t)solvent;
@@ -60,52 +62,43 @@ enl_site_set_standardise (EnlSiteSet *set, const double *centre, const double *s
 {
   for (uint32_t i = 0; i < set->n; i++)
     for (uint32_t k = 0; k < ENL_N_DESCRIPTORS; k++) {
-      double *z = &set->z[(size_t)i * ENL_N_DESCRIPTORS + k];
-      *z = scale[k] > 0 ? (*z - centre[k]) / scale[k] : 0;
-      *z = (float)CLAMP (*z, -ENL_DESCRIPTOR_CLIP, ENL_DESCRIPTOR_CLIP);
+      float *z = &set->owned_z[(size_t)i * ENL_N_DESCRIPTORS + k];
+      double standard = scale[k] > 0 ? ((double)*z - centre[k]) / scale[k] : 0;
+      *z = (float)CLAMP (standard, -ENL_DESCRIPTOR_CLIP, ENL_DESCRIPTOR_CLIP);
     }
 }
 
 void
-enl_site_set_scale (EnlSiteSet *set, const EnlHyper *hyper)
+enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper)
 {
-  size_t total = (size_t)set->n * ENL_N_DESCRIPTORS;
-  double by_linear[ENL_N_DESCRIPTORS], by_smooth[ENL_N_DESCRIPTORS];
-
-  if (!set->linear) {
-    set->linear = g_new (double, total + 1);
-    set->smooth = g_new (double, total + 1);
-  }
   for (int k = 0; k < ENL_N_DESCRIPTORS; k++) {
-    by_linear[k] = sqrt (hyper->value[ENL_H_linear_weight + k] / ENL_N_DESCRIPTORS);
-    by_smooth[k] = sqrt (hyper->value[ENL_H_smooth_weight + k]);
-  }
-  for (size_t i = 0; i < total; i++) {
-    set->linear[i] = set->z[i] * by_linear[i % ENL_N_DESCRIPTORS];
-    set->smooth[i] = set->z[i] * by_smooth[i % ENL_N_DESCRIPTORS];
+    relevance->linear[k] = (float)(hyper->value[ENL_H_linear_weight + k] / ENL_N_DESCRIPTORS);
+    relevance->smooth[k] = (float)hyper->value[ENL_H_smooth_weight + k];
   }
 }
 
-/* Four sums at a time: the compiler may not reorder floating sums by itself. */
+/* Weighted product and squared distance. Four strands of each: the compiler may not reorder a
+ * floating sum by itself. */
 static void
-products (const double *a, const double *b, const double *c, const double *d, double *dot,
+products (const EnlRelevance *relevance, const float *a, const float *b, double *dot,
           double *square)
 {
-  double p[4] = {0}, q[4] = {0};
+  const float *linear = relevance->linear, *smooth = relevance->smooth;
+  float p[4] = {0}, q[4] = {0};
   int k = 0;
 
   for (; k + 4 <= ENL_N_DESCRIPTORS; k += 4)
     for (int j = 0; j < 4; j++) {
-      double gap = c[k + j] - d[k + j];
-      p[j] += a[k + j] * b[k + j];
-      q[j] += gap * gap;
+      float gap = a[k + j] - b[k + j];
+      p[j] += linear[k + j] * a[k + j] * b[k + j];
+      q[j] += smooth[k + j] * gap * gap;
     }
   for (; k < ENL_N_DESCRIPTORS; k++) {
-    p[0] += a[k] * b[k];
-    q[0] += (c[k] - d[k]) * (c[k] - d[k]);
+    p[0] += linear[k] * a[k] * b[k];
+    q[0] += smooth[k] * (a[k] - b[k]) * (a[k] - b[k]);
   }
-  *dot = p[0] + p[1] + p[2] + p[3];
-  *square = q[0] + q[1] + q[2] + q[3];
+  *dot = (double)(p[0] + p[1]) + (double)(p[2] + p[3]);
+  *square = (double)(q[0] + q[1]) + (double)(q[2] + q[3]);
 }
 
 double
@@ -121,14 +114,13 @@ enl_kernel_likeness (const EnlHyper *hyper, const double likeness[ENL_N_SHELLS])
 }
 
 void
-enl_kernel_pair (const EnlSiteSet *a, uint32_t i, const EnlSiteSet *b, uint32_t j,
-                 EnlKernelParts *parts)
+enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
+                 const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
 {
   size_t at = (size_t)i * ENL_N_DESCRIPTORS, bt = (size_t)j * ENL_N_DESCRIPTORS;
   double square;
 
-  products (a->linear + at, b->linear + bt, a->smooth + at, b->smooth + bt, &parts->linear,
-            &square);
+  products (relevance, a->z + at, b->z + bt, &parts->linear, &square);
   parts->distance = sqrt (square);
   parts->likeness = 0;
   parts->same_element = a->element[i] == b->element[j];
@@ -136,12 +128,12 @@ enl_kernel_pair (const EnlSiteSet *a, uint32_t i, const EnlSiteSet *b, uint32_t 
 }
 
 void
-enl_kernel_parts (const EnlHyper *hyper, const EnlSiteSet *a, uint32_t i, const EnlSiteSet *b,
-                  uint32_t j, EnlKernelParts *parts)
+enl_kernel_parts (const EnlHyper *hyper, const EnlRelevance *relevance, const EnlSiteSet *a,
+                  uint32_t i, const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
 {
   double likeness[ENL_N_SHELLS];
 
-  enl_kernel_pair (a, i, b, j, parts);
+  enl_kernel_pair (relevance, a, i, b, j, parts);
   if (!parts->same_element)
     return;
   enl_shells_compare (&a->shells[i], &b->shells[j], likeness);

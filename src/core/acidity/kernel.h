@@ -24,13 +24,14 @@
 /* Many sites with what the kernel needs of them. Owned arrays unless said otherwise. */
 typedef struct {
   uint32_t n;
-  double *z;         /* n x ENL_N_DESCRIPTORS, standardised */
+  const float *z;    /* n x ENL_N_DESCRIPTORS: raw, then standardised */
+  float *owned_z;    /* the same, or NULL when they stand in the bytes of a model file */
   EnlShells *shells; /* their marks stand in `marks` */
   GArray *marks;
   uint8_t *element, *solvent;
-  double *linear, *smooth; /* z scaled for the two parts, once enl_site_set_scale ran; else NULL */
 } EnlSiteSet;
 
+/* With zeros for descriptors. */
 EnlSiteSet *enl_site_set_new (uint32_t n) ENL_MUST_USE;
 void enl_site_set_free (EnlSiteSet *set);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlSiteSet, enl_site_set_free)
@@ -43,7 +44,13 @@ void enl_site_set_link (EnlSiteSet *set);
 
 /* Standardises z in place: (z - centre) / scale, clipped; descriptors of scale 0 become 0. */
 void enl_site_set_standardise (EnlSiteSet *set, const double *centre, const double *scale);
-void enl_site_set_scale (EnlSiteSet *set, const EnlHyper *hyper);
+
+/* The relevances as the kernel uses them. */
+typedef struct {
+  float linear[ENL_N_DESCRIPTORS], smooth[ENL_N_DESCRIPTORS];
+} EnlRelevance;
+
+void enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper);
 
 /* What the covariance of one pair is made of. */
 typedef struct {
@@ -51,14 +58,14 @@ typedef struct {
   bool same_element, same_solvent;
 } EnlKernelParts;
 
-/* Fills all but the likeness; both sets must be scaled. */
-void enl_kernel_pair (const EnlSiteSet *a, uint32_t i, const EnlSiteSet *b, uint32_t j,
-                      EnlKernelParts *parts);
+/* Fills all but the likeness; both sets must be standardised. */
+void enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
+                      const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
 /* The shells' likeness by their weights. */
 double enl_kernel_likeness (const EnlHyper *hyper, const double likeness[ENL_N_SHELLS]);
 /* Both of them. */
-void enl_kernel_parts (const EnlHyper *hyper, const EnlSiteSet *a, uint32_t i, const EnlSiteSet *b,
-                       uint32_t j, EnlKernelParts *parts);
+void enl_kernel_parts (const EnlHyper *hyper, const EnlRelevance *relevance, const EnlSiteSet *a,
+                       uint32_t i, const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
 double enl_kernel_smooth (const EnlHyper *hyper, const EnlKernelParts *parts);
 double enl_kernel_environment (const EnlHyper *hyper, const EnlKernelParts *parts);
 /* The whole covariance, without noise. */

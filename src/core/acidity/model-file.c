@@ -32,10 +32,7 @@ append_rows (GByteArray *out, const EnlSiteSet *rows)
     append (out, rows->shells[i].total, sizeof rows->shells[i].total);
   }
   append (out, rows->marks->data, rows->marks->len * sizeof (EnlMark));
-  for (size_t i = 0; i < (size_t)rows->n * ENL_N_DESCRIPTORS; i++) {
-    float z = (float)rows->z[i]; /* exact: standardising rounds to single precision */
-    append (out, &z, sizeof z);
-  }
+  append (out, rows->z, (size_t)rows->n * ENL_N_DESCRIPTORS * sizeof (float));
   append (out, rows->element, rows->n);
   append (out, rows->solvent, rows->n);
 }
@@ -114,6 +111,23 @@ check_header (const Header *header, const EnlReference *ref, const Cursor *body,
   return ENL_OK;
 }
 
+/* An array that stays in the file, or a copy of it in `*owned` (freed before) when it does not
+ * stand on the boundary that its type needs. */
+static const void *
+take_array (Cursor *cursor, size_t size, size_t boundary, void **owned)
+{
+  const char *at = cursor->at;
+
+  g_clear_pointer (owned, g_free);
+  if (cursor->left < size)
+    return NULL;
+  cursor->at += size;
+  cursor->left -= size;
+  if ((uintptr_t)at % boundary == 0)
+    return at;
+  return *owned = g_memdup2 (at, size);
+}
+
 static bool
 take_shells (Cursor *cursor, EnlSiteSet *rows, uint32_t n_marks)
 {
@@ -138,17 +152,11 @@ take_shells (Cursor *cursor, EnlSiteSet *rows, uint32_t n_marks)
 static bool
 take_rows (Cursor *cursor, EnlSiteSet *rows, uint32_t n_marks)
 {
-  size_t n = (size_t)rows->n * ENL_N_DESCRIPTORS;
-
-  if (!take_shells (cursor, rows, n_marks) || cursor->left < n * sizeof (float))
+  if (!take_shells (cursor, rows, n_marks))
     return false;
-  for (size_t i = 0; i < n; i++) {
-    float z = 0;
-    if (!take (cursor, &z, sizeof z))
-      return false;
-    rows->z[i] = z;
-  }
-  if (!take (cursor, rows->element, rows->n) || !take (cursor, rows->solvent, rows->n))
+  rows->z = take_array (cursor, (size_t)rows->n * ENL_N_DESCRIPTORS * sizeof (float),
+                        _Alignof(float), (void **)&rows->owned_z);
+  if (!rows->z || !take (cursor, rows->element, rows->n) || !take (cursor, rows->solvent, rows->n))
     return false;
   enl_site_set_link (rows);
   return true;
@@ -159,18 +167,18 @@ take_body (Cursor *cursor, EnlModel *model, const Header *header)
 {
   uint32_t n = header->n_rows;
 
-  if (cursor->left < ENL_PACKED (n, 0) * sizeof (double))
+  if (!take (cursor, &model->hyper, sizeof model->hyper) ||
+      !take (cursor, model->centre, sizeof model->centre) ||
+      !take (cursor, model->scale, sizeof model->scale) ||
+      !take (cursor, model->width, sizeof model->width))
+    return false;
+  model->alpha = take_array (cursor, n * sizeof (double), _Alignof(double), &model->owned_alpha);
+  model->factor = take_array (cursor, ENL_PACKED (n, 0) * sizeof (double), _Alignof(double),
+                              &model->owned_factor);
+  if (!model->alpha || !model->factor)
     return false;
   model->rows = enl_site_set_new (n);
-  model->alpha = g_new (double, n + 1);
-  model->factor = g_new (double, ENL_PACKED (n, 0) + 1);
-  return take (cursor, &model->hyper, sizeof model->hyper) &&
-         take (cursor, model->centre, sizeof model->centre) &&
-         take (cursor, model->scale, sizeof model->scale) &&
-         take (cursor, model->width, sizeof model->width) &&
-         take (cursor, model->alpha, n * sizeof (double)) &&
-         take (cursor, model->factor, ENL_PACKED (n, 0) * sizeof (double)) &&
-         take_rows (cursor, model->rows, header->n_marks) && cursor->left == 0;
+  return take_rows (cursor, model->rows, header->n_marks) && cursor->left == 0;
 }
 
 EnlStatus
@@ -189,7 +197,7 @@ enl_model_open (const EnlReference *ref, const char *bytes, size_t size, EnlMode
     return status;
   if (!take_body (&cursor, model, &header))
     return damaged (err, "its parts do not fit together");
-  enl_site_set_scale (model->rows, &model->hyper);
+  enl_relevance_init (&model->relevance, &model->hyper);
   *out = g_steal_pointer (&model);
   return ENL_OK;
 }

@@ -29,10 +29,12 @@ EnlAcidClass enl_acid_class (const EnlMolecule *mol, uint32_t atom);
 
 typedef struct {
   EnlHyper hyper;
+  EnlRelevance relevance;
   double centre[ENL_N_DESCRIPTORS], scale[ENL_N_DESCRIPTORS];
-  EnlSiteSet *rows; /* as in the table, standardised and scaled */
-  double *factor;   /* packed Cholesky factor of the covariance with noise */
-  double *alpha;    /* inverse covariance times (pKa - ENL_PRIOR_PKA) */
+  EnlSiteSet *rows;                 /* as in the table, standardised */
+  const double *factor;             /* packed Cholesky factor of the covariance with noise */
+  const double *alpha;              /* inverse covariance times (pKa - ENL_PRIOR_PKA) */
+  void *owned_factor, *owned_alpha; /* NULL where they stand in the bytes of an opened file */
   /* Half width of the 90 % interval in units of the model's standard deviation, so that left-out
    * compounds of the class fall inside nine times of ten. */
   double width[ENL_N_CLASSES][ENL_MODEL_SOLVENTS];
@@ -63,6 +65,7 @@ double enl_model_width_of (const double *error, const double *sd, const bool *us
 
 /* The file, in a new byte array. */
 GByteArray *enl_model_write (const EnlModel *model, const EnlReference *ref) ENL_MUST_USE;
-/* Reads it again; `ref` must be the table it was made from. Copies what it needs of `bytes`. */
+/* Reads it again; `ref` must be the table it was made from. Large arrays stay where they are:
+ * `bytes` must outlive the model. */
 EnlStatus enl_model_open (const EnlReference *ref, const char *bytes, size_t size, EnlModel **out,
                           EnlError *err) ENL_MUST_USE;

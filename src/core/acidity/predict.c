@@ -98,7 +98,6 @@ describe (Batch *batch, const EnlMolecule *mol, const uint32_t *atom, EnlSolvent
     enl_site_set_describe (batch->sites, s, survey, pi, atom[s], solvent);
   enl_site_set_link (batch->sites);
   enl_site_set_standardise (batch->sites, model->centre, model->scale);
-  enl_site_set_scale (batch->sites, &model->hyper);
 }
 
 static void
@@ -108,13 +107,13 @@ fill_covariance (Batch *batch)
   EnlKernelParts parts;
 
   for (uint32_t s = 0; s < batch->m; s++) {
-    enl_kernel_parts (&model->hyper, batch->sites, s, batch->sites, s, &parts);
+    enl_kernel_parts (&model->hyper, &model->relevance, batch->sites, s, batch->sites, s, &parts);
     batch->prior[s] = enl_kernel_value (&model->hyper, &parts);
     batch->smooth[s] =
         enl_kernel_smooth (&model->hyper, &parts) + enl_kernel_environment (&model->hyper, &parts);
     for (uint32_t i = 0; i < batch->n; i++) {
       size_t at = (size_t)s * batch->n + i;
-      enl_kernel_parts (&model->hyper, batch->sites, s, model->rows, i, &parts);
+      enl_kernel_parts (&model->hyper, &model->relevance, batch->sites, s, model->rows, i, &parts);
       batch->k[at] = enl_kernel_value (&model->hyper, &parts);
       batch->alike[at] = (enl_kernel_smooth (&model->hyper, &parts) +
                           enl_kernel_environment (&model->hyper, &parts)) /

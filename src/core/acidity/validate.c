@@ -39,7 +39,8 @@ cluster_folds (const EnlModel *model, const uint32_t *compound, uint32_t *fold)
     }
     for (guint k = 0; k < leader->len && fold[i] == ENL_NONE; k++) {
       uint32_t lead = g_array_index (leader, uint32_t, k);
-      enl_kernel_parts (&model->hyper, model->rows, i, model->rows, lead, &parts);
+      enl_kernel_parts (&model->hyper, &model->relevance, model->rows, i, model->rows, lead,
+                        &parts);
       if (parts.likeness >= FAMILY_LIKENESS)
         fold[i] = lead;
     }
