@@ -4,6 +4,7 @@
  *   enolith-fit build ACIDS.tsv HYPER.tsv OUT.bin           fits the model (part of the build)
  *   enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]    prints left-out scores
  *   enolith-fit fifths ACIDS.tsv [STEPS]                    tunes on four fifths, scores the fifth
+ *   enolith-fit describe ACIDS.tsv                          prints the raw descriptors of every row
  */
 #include <math.h>
 #include <stdio.h>
@@ -197,6 +198,31 @@ fifths (int argc, char **argv)
   return EXIT_SUCCESS;
 }
 
+static int
+describe (int argc G_GNUC_UNUSED, char **argv)
+{
+  g_autoptr (EnlReference) ref = NULL;
+  g_autoptr (EnlSiteSet) set = NULL;
+  EnlError err;
+
+  if (load_reference (argv[2], &ref, &err) != ENL_OK ||
+      enl_model_describe (ref, &set, &err) != ENL_OK)
+    return fail (argv[2], &err);
+  printf ("smiles\tsolvent");
+  for (uint32_t k = 0; k < ENL_N_DESCRIPTORS; k++) {
+    g_autofree char *name = enl_descriptor_name (k);
+    printf ("\t%s", name);
+  }
+  for (uint32_t i = 0; i < set->n; i++) {
+    const EnlReferenceRow *row = enl_reference_row (ref, i);
+    printf ("\n%s\t%s", row->smiles, enl_solvent_id (row->solvent));
+    for (uint32_t k = 0; k < ENL_N_DESCRIPTORS; k++)
+      printf ("\t%.6g", (double)set->z[(size_t)i * ENL_N_DESCRIPTORS + k]);
+  }
+  printf ("\n");
+  return EXIT_SUCCESS;
+}
+
 int
 main (int argc, char **argv)
 {
@@ -204,7 +230,11 @@ main (int argc, char **argv)
     const char *verb;
     int (*run) (int argc, char **argv);
     int least;
-  } verb[] = {{"tune", tune, 4}, {"build", build, 5}, {"score", score, 4}, {"fifths", fifths, 3}};
+  } verb[] = {{"tune", tune, 4},
+              {"build", build, 5},
+              {"score", score, 4},
+              {"fifths", fifths, 3},
+              {"describe", describe, 3}};
 
   for (size_t i = 0; argc > 1 && i < ENL_COUNT (verb); i++)
     if (strcmp (argv[1], verb[i].verb) == 0 && argc >= verb[i].least)
@@ -212,6 +242,7 @@ main (int argc, char **argv)
   fprintf (stderr, "usage: enolith-fit tune ACIDS.tsv OUT.tsv [STEPS [START.tsv]]\n"
                    "       enolith-fit build ACIDS.tsv HYPER.tsv OUT.bin\n"
                    "       enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]\n"
-                   "       enolith-fit fifths ACIDS.tsv [STEPS]\n");
+                   "       enolith-fit fifths ACIDS.tsv [STEPS]\n"
+                   "       enolith-fit describe ACIDS.tsv\n");
   return 2;
 }
