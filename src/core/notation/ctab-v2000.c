@@ -30,16 +30,30 @@ field_span (const V2000 *in, size_t column, size_t width, size_t *length)
   while (to > from && lines->line[to - 1] == ' ')
     to--;
   *length = to - from;
+  if (from == to) /* blank: point at its first column */
+    from = MIN (column, lines->length);
   return lines->start + from;
 }
 
 static EnlStatus
 bad_field (const V2000 *in, size_t offset, size_t length, const char *what)
 {
-  return enl_ctab_fault (in->ctab, ENL_ERROR_FORMAT, offset, MAX (length, 1),
-                         "check that the columns of this line are where the format wants them",
-                         "'%.*s' is no %s", (int)MIN (length, LONGEST_FIELD),
-                         in->ctab->text + offset, what);
+  static const char advice[] =
+      "check that the columns of this line are where the format wants them";
+
+  if (length == 0)
+    return enl_ctab_fault (in->ctab, ENL_ERROR_FORMAT, offset, 1, advice, "no %s here", what);
+  return enl_ctab_fault (in->ctab, ENL_ERROR_FORMAT, offset, length, advice, "'%.*s' is no %s",
+                         (int)MIN (length, LONGEST_FIELD), in->ctab->text + offset, what);
+}
+
+/* The same for a number that was read but is out of range. */
+static EnlStatus
+bad_number (const V2000 *in, size_t column, size_t width, const char *what)
+{
+  size_t length, offset = field_span (in, column, width, &length);
+
+  return bad_field (in, offset, length, what);
 }
 
 /* Whole number in the columns; blank is 0. */
@@ -112,7 +126,7 @@ read_counts (V2000 *in)
     return status;
   size_t start = in->lines->start;
   if (in->n_atoms < 0 || in->n_bonds < 0)
-    return bad_field (in, start, 6, "pair of counts");
+    return bad_number (in, 0, 6, "pair of counts");
   if (in->n_atoms == 0)
     return enl_ctab_fault (in->ctab, ENL_ERROR_EMPTY, start, 3, "draw something first",
                            "the molfile holds no atoms");
@@ -176,9 +190,9 @@ read_atom_codes (V2000 *in, EnlCtabAtom *atom)
     return status;
   size_t start = in->lines->start;
   if (charge < 0 || charge > 7)
-    return bad_field (in, start + 36, 3, "charge code (0 to 7)");
+    return bad_number (in, 36, 3, "charge code (0 to 7)");
   if (valence < 0 || valence > 15)
-    return bad_field (in, start + 48, 3, "valence (0 to 15)");
+    return bad_number (in, 48, 3, "valence (0 to 15)");
   if (query > 0)
     return enl_ctab_fault (in->ctab, ENL_ERROR_UNSUPPORTED, start + 42, 3,
                            "remove the hydrogen count; use the valence field instead",
@@ -229,7 +243,7 @@ read_wedge (V2000 *in, EnlCtabBond *bond)
   else if (stereo == 4 || stereo == 3)
     bond->wedge = ENL_WEDGE_EITHER;
   else if (stereo != 0)
-    return bad_field (in, in->lines->start + 9, 3, "bond stereo code (0, 1, 3, 4, 6)");
+    return bad_number (in, 9, 3, "bond stereo code (0, 1, 3, 4, 6)");
   if (bond->type != 1 && bond->type != 2)
     bond->wedge = ENL_WEDGE_NONE;
   return ENL_OK;
@@ -288,28 +302,28 @@ clear_isotopes (V2000 *in)
 }
 
 static EnlStatus
-apply_charge (V2000 *in, uint32_t atom, long value, size_t offset)
+apply_charge (V2000 *in, uint32_t atom, long value, size_t column)
 {
   if (value < -15 || value > 15)
-    return bad_field (in, offset, 3, "charge (-15 to 15)");
+    return bad_number (in, column, 4, "charge (-15 to 15)");
   atom_at (in, atom)->charge = (int)value;
   return ENL_OK;
 }
 
 static EnlStatus
-apply_radical (V2000 *in, uint32_t atom, long value, size_t offset)
+apply_radical (V2000 *in, uint32_t atom, long value, size_t column)
 {
   if (value < 0 || value > 3)
-    return bad_field (in, offset, 3, "radical code (0 to 3)");
+    return bad_number (in, column, 4, "radical code (0 to 3)");
   atom_at (in, atom)->radical = (EnlRadical)value;
   return ENL_OK;
 }
 
 static EnlStatus
-apply_isotope (V2000 *in, uint32_t atom, long value, size_t offset)
+apply_isotope (V2000 *in, uint32_t atom, long value, size_t column)
 {
   if (value < 0 || value > 400)
-    return bad_field (in, offset, 3, "mass number");
+    return bad_number (in, column, 4, "mass number");
   atom_at (in, atom)->isotope = (int)value;
   return ENL_OK;
 }
@@ -317,7 +331,7 @@ apply_isotope (V2000 *in, uint32_t atom, long value, size_t offset)
 static const struct {
   const char *word;
   void (*clear) (V2000 *in);
-  EnlStatus (*apply) (V2000 *in, uint32_t atom, long value, size_t offset);
+  EnlStatus (*apply) (V2000 *in, uint32_t atom, long value, size_t column);
 } property[] = {
     {"M  CHG", clear_charges, apply_charge},
     {"M  RAD", clear_charges, apply_radical},
@@ -332,20 +346,20 @@ read_pairs (V2000 *in, size_t which)
   EnlStatus status = read_number (in, 6, 3, "number of entries", &count);
 
   if (status == ENL_OK && (count < 0 || count > 8))
-    status = bad_field (in, in->lines->start + 6, 3, "number of entries (1 to 8)");
+    status = bad_number (in, 6, 3, "number of entries (1 to 8)");
   property[which].clear (in);
   for (long i = 0; status == ENL_OK && i < count; i++) {
     size_t column = 9 + 8 * (size_t)i, length;
     uint32_t atom = 0;
     long value = 0;
-    size_t offset = field_span (in, column + 4, 4, &length);
+    field_span (in, column + 4, 4, &length);
     status = read_atom_number (in, column, 4, &atom);
     if (status == ENL_OK && length == 0)
-      status = bad_field (in, offset, 0, "value");
+      status = bad_number (in, column + 4, 4, "value");
     if (status == ENL_OK)
       status = read_number (in, column + 4, 4, "value", &value);
     if (status == ENL_OK)
-      status = property[which].apply (in, atom, value, offset);
+      status = property[which].apply (in, atom, value, column + 4);
   }
   return status;
 }

@@ -85,7 +85,7 @@ static void
 print_fault (const char *message)
 {
   printf ("fault ");
-  for (const char *p = message ? message : "not readable"; *p; p++)
+  for (const char *p = message && *message ? message : "a layer is damaged"; *p; p++)
     putchar ((unsigned char)*p < ' ' ? ' ' : *p);
   putchar ('\n');
 }

@@ -2,6 +2,7 @@
 
 #include <string.h>
 
+#include "core/molecule/elements.h"
 #include "core/notation/groups.h"
 #include "core/notation/inchi.h"
 #include "core/notation/molfile.h"
@@ -84,6 +85,42 @@ is_inchi_key (const Input *in)
       return false;
   }
   return true;
+}
+
+/* 67-64-1: two to seven digits, two, one. */
+static bool
+is_registry_number (const Input *in)
+{
+  const char *p = begin (in);
+  size_t n = in->length;
+
+  if (n < 7 || n > 12 || p[n - 2] != '-' || p[n - 5] != '-')
+    return false;
+  for (size_t i = 0; i < n; i++)
+    if (i != n - 2 && i != n - 5 && !g_ascii_isdigit (p[i]))
+      return false;
+  return true;
+}
+
+/* C6H12O6: two elements or more, each once, with a count. */
+static bool
+is_sum_formula (const Input *in)
+{
+  bool seen[ENL_N_ELEMENTS] = {false}, counted = false;
+  const char *p = begin (in);
+  size_t elements = 0;
+
+  for (size_t i = 0; i < in->length;) {
+    size_t length = i + 1 < in->length && g_ascii_islower (p[i + 1]) ? 2 : 1;
+    int element = g_ascii_isupper (p[i]) ? enl_element_find (p + i, length) : -1;
+    if (element <= 0 || seen[element])
+      return false;
+    seen[element] = true;
+    elements++;
+    for (i += length; i < in->length && g_ascii_isdigit (p[i]); i++)
+      counted = true;
+  }
+  return counted && elements >= 2;
 }
 
 /* Offset of the first white space inside the trimmed text, or its length. */
@@ -174,12 +211,25 @@ choose_fault (const EnlNames *names, const Input *in, const EnlError *smiles,
   if (gap < in->length || has_word (in) ||
       (names && enl_names_nearest (names, begin (in), in->length)))
     return unknown_name (names, in, err);
-  bool by_smiles = smiles->code != ENL_ERROR_SYNTAX || smiles->offset >= groups->offset;
+  /* Hydrogens outside brackets are the mark of a condensed formula. */
+  bool has_hydrogens = smiles->code == ENL_ERROR_SYNTAX && smiles->offset < in->length &&
+                       begin (in)[smiles->offset] == 'H';
+  bool by_smiles =
+      smiles->code != ENL_ERROR_SYNTAX || (smiles->offset >= groups->offset && !has_hydrogens);
   const EnlError *best = by_smiles ? smiles : groups;
   if (err)
     *err = *best;
   shift_error (in, err);
   return best->code;
+}
+
+/* Something that identifies a compound, but not by its structure. */
+static EnlStatus
+refuse (const Input *in, EnlError *err, const char *what, const char *advice)
+{
+  enl_error_set (err, ENL_ERROR_UNSUPPORTED, advice, "%s", what);
+  enl_error_locate (err, in->text, in->size, in->start, in->length);
+  return ENL_ERROR_UNSUPPORTED;
 }
 
 static EnlStatus
@@ -202,6 +252,9 @@ read_line (const EnlNames *names, const Input *in, EnlMolecule **out, EnlNotatio
     shift_atoms (in, *out);
     return ENL_OK;
   }
+  if (is_sum_formula (in))
+    return refuse (in, err, "a sum formula does not say how the atoms are joined",
+                   "give a SMILES, a name, or a condensed formula such as CH3COCH3");
   return choose_fault (names, in, &smiles_fault, &groups_fault, err);
 }
 
@@ -218,12 +271,12 @@ read_trimmed (const EnlNames *names, const Input *in, EnlMolecule **out, EnlNota
       shift_error (in, err);
     return status;
   }
-  if (is_inchi_key (in)) {
-    enl_error_set (err, ENL_ERROR_UNSUPPORTED, "give the InChI itself, a SMILES or a name",
-                   "an InChIKey is a fingerprint and holds no structure");
-    enl_error_locate (err, in->text, in->size, in->start, in->length);
-    return ENL_ERROR_UNSUPPORTED;
-  }
+  if (is_inchi_key (in))
+    return refuse (in, err, "an InChIKey is a fingerprint and holds no structure",
+                   "give the InChI itself, a SMILES or a name");
+  if (is_registry_number (in))
+    return refuse (in, err, "a registry number holds no structure",
+                   "give the compound's name, a SMILES or an InChI");
   if (!g_utf8_validate (begin (in), (gssize)in->length, &bad)) {
     enl_error_set (err, ENL_ERROR_SYNTAX, "give plain text (UTF-8)", "this is no readable text");
     enl_error_locate (err, in->text, in->size, (size_t)(bad - in->text), 1);
