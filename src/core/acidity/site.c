@@ -66,7 +66,7 @@ needs_levelling (const EnlMolecule *mol)
 }
 
 /* Symmetry classes as acidity sees them: mirror images count as equal (so the two CH of a meso
- * ketone are one site), cis and trans arms do not, and neither charge nor double bond of a
+ * ketone are one site), diastereomeric arms do not, and neither charge nor double bond of a
  * symmetric cation or anion is pinned to where it was drawn. True in this last case: the atoms of a
  * class may be drawn differently. */
 static bool

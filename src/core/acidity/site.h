@@ -24,9 +24,9 @@
  * S, P and onium neighbours need no C=C. Strain: no C=C inside a three-membered ring, so none for
  * cyclopropanone and cyclopropene, while a cyclopropyl ketone keeps its C-H.
  *
- * Equivalence is that of the graph with cis and trans kept apart. Mirror images are one site, so
- * are arms that differ by tetrahedral descriptors only; the two hydrogens of a CH2 are one site
- * even when diastereotopic (flag). Symmetric amidinium, azolium and 1,3-dicarbonyl ions are taken
+ * Equivalence is that of the graph with its stereo: mirror images are one site, cis and trans or
+ * other diastereomeric arms are two. The two hydrogens of a CH2 are one site even when
+ * diastereotopic (flag). Symmetric amidinium, azolium and 1,3-dicarbonyl ions are taken
  * without regard to which atom the charge was drawn on. Deuterium and tritium count as hydrogens of
  * their site; labelled and unlabelled positions are two sites.
  *

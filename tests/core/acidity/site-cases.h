@@ -628,6 +628,14 @@ static const EnlSiteCase site_case[] = {
     "6 3H: allylic, atom 6|"
     "7 2H a: alpha to the ketone C=O, allylic, atom 7|"
     "10 3H: allylic, atom 10", NULL },
+  { "meso diketol: one site for both arms", "C[C@H](O)CC(=O)C[C@@H](C)O",
+    "3,10 2H h: alcohol O-H|"
+    "4,7 4H ad: alpha to the ketone C=O", NULL },
+  { "diastereomeric arms are two sites", "C[C@H](O)[C@@H](F)CC(=O)C[C@H](F)[C@@H](C)O",
+    "3 1H h: alcohol O-H, atom 3|"
+    "6 2H ad: alpha to the ketone C=O, atom 6|"
+    "9 2H ad: alpha to the ketone C=O, atom 9|"
+    "14 1H h: alcohol O-H, atom 14", NULL },
   { "CH2 next to a stereocentre", "CC(=O)CC(C)O",
     "1 3H a: alpha to the ketone C=O, CH3 side|"
     "4 2H ad: alpha to the ketone C=O, CH2 side|"
