@@ -1,7 +1,7 @@
 """Sizes, sources and headers of the tree.
 
 Usage: check-tree.py SOURCE_ROOT
-- no file of code over 800 lines, no line over 100 columns, no function over 60 lines;
+- no file of code over 800 lines (NAME-cases.h holds data), no line over 100 columns, no function over 60 lines;
 - every row of every table under resources/ has a source;
 - every header compiles alone;
 - nothing at the top level that does not belong there.
@@ -29,7 +29,7 @@ def size_faults(root):
     for path in code_files(root):
         lines = path.read_text(encoding='utf-8').splitlines()
         name, seen = path.relative_to(root), seen + 1
-        if len(lines) > 800:
+        if len(lines) > 800 and not path.name.endswith('-cases.h'):  # tables of test cases are data
             faults.append('%s has %d lines' % (name, len(lines)))
         faults += ['%s:%d is wider than 100 columns' % (name, n) for n, line in enumerate(lines, 1)
                    if len(line) > 100]
