@@ -19,7 +19,7 @@ typedef struct {
   const EnlTheme *theme;
   EnlScene *scene;
   double low, high; /* common axis */
-  bool has_axis;
+  bool has_axis, has_outside;
   double pad; /* inside a card */
 } Sheet;
 
@@ -114,7 +114,8 @@ make_list (const Sheet *s, const EnlSubstrateCard *card, double width)
   if (card->estimate)
     y = draw_axis (s, scene, y, width);
   if (n < card->sites->n_sites) {
-    g_autofree char *more = g_strdup_printf ("and %u weaker sites", card->sites->n_sites - n);
+    g_autofree char *more = g_strdup_printf ("and %u weaker site%s", card->sites->n_sites - n,
+                                             card->sites->n_sites - n > 1 ? "s" : "");
     enl_scene_paragraph (scene, (EnlPoint){0, y + 0.3 * s->theme->small_size}, width, more,
                          s->theme->small_size, false, ENL_TONE_MUTED);
   }
@@ -216,6 +217,8 @@ find_axis (Sheet *s)
     const EnlSubstrateCard *card = &s->sheet->card[i];
     if (card->sites && card->estimate && card->rank)
       enl_whisker_range (card->estimate, card->sites->n_sites, &s->low, &s->high);
+    for (uint32_t k = 0; card->sites && card->estimate && k < card->sites->n_sites; k++)
+      s->has_outside |= card->estimate[k].outside;
   }
   s->has_axis = s->high > s->low;
 }
@@ -256,6 +259,10 @@ draw_foot (const Sheet *s, double y, double right)
     y += enl_text_line_height (s->theme->family, size);
     y = draw_legend (s, x, y + 0.3 * s->theme->small_size) + 0.3 * s->theme->small_size;
   }
+  if (s->has_outside)
+    y = enl_scene_paragraph (s->scene, (EnlPoint){x, y}, width,
+                             "Broken rim: outside the experience of the model.",
+                             s->theme->small_size, false, ENL_TONE_MUTED);
   if (s->sheet->caption && *s->sheet->caption)
     y = enl_scene_paragraph (s->scene, (EnlPoint){x, y}, width, s->sheet->caption,
                              s->theme->small_size, false, ENL_TONE_MUTED);
