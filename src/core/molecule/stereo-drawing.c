@@ -10,7 +10,9 @@
 
 #include "core/molecule/graph.h"
 
-#define FLAT_SINE 0.05 /* bonds closer to a line than this (3 degrees) decide nothing */
+#define FLAT_SINE  0.05               /* bonds nearer to a line (3 degrees) decide nothing */
+#define HALF_PLANE (G_PI + FLAT_SINE) /* re-entrant: bonds leave more than this empty */
+#define T_SHAPE    (G_PI - 0.35)      /* nearly so (20 degrees): clear to few readers */
 
 /* A centre as the viewer sees it: ligands anticlockwise, and how far each is wedged. */
 typedef struct {
@@ -57,15 +59,16 @@ view_of (const EnlMolecule *mol, uint32_t centre)
   return view;
 }
 
-/* Ligand between two others that all lie within a half plane; ENL_NONE when they spread wider. */
+/* Ligand between two others that leave an angle beyond `open` empty; ENL_NONE when there is none. A
+ * half plane is the limit for reading, writing stays well within it. */
 static uint32_t
-re_entrant (const View *view)
+inner_ligand (const View *view, double open)
 {
   for (uint32_t i = 0; i < 3 && view->count == 3; i++) {
     double gap = view->angle[(i + 1) % 3] - view->angle[i];
     if (gap < 0)
       gap += 2 * G_PI;
-    if (gap > G_PI + FLAT_SINE)
+    if (gap > open)
       return (i + 2) % 3;
   }
   return ENL_NONE;
@@ -79,7 +82,7 @@ static int
 viewed_sign (const View *view)
 {
   int sign = 0;
-  uint32_t inner = re_entrant (view);
+  uint32_t inner = inner_ligand (view, HALF_PLANE);
 
   for (uint32_t i = 0; i < view->count; i++) {
     if (view->depth[i] == 0)
@@ -190,6 +193,7 @@ enl_stereo_from_drawing (EnlMolecule *mol)
 enum {
   COST_RING = 8,    /* ring bonds stay plain where another bond is there */
   COST_CENTRE = 16, /* two centres at one wedge mislead */
+  COST_T_SHAPE = 32,
   COST_MULTIPLE = 64,
   COST_CHAIN = 2, /* terminal atoms first, then chains */
   COST_CARBON = 1,
@@ -203,8 +207,10 @@ wedge_cost (const EnlMolecule *mol, const View *view, uint32_t i)
   const EnlAtom *other = enl_molecule_atom (mol, view->atom[i]);
   int cost = 0;
 
-  if (bond->wedge != ENL_WEDGE_NONE || i == re_entrant (view))
+  if (bond->wedge != ENL_WEDGE_NONE || i == inner_ligand (view, HALF_PLANE))
     return COST_TAKEN;
+  if (i == inner_ligand (view, T_SHAPE))
+    cost += COST_T_SHAPE;
   if (bond->order != 1)
     cost += COST_MULTIPLE;
   if (other->winding)
@@ -283,20 +289,39 @@ draw_centre (EnlMolecule *mol, uint32_t centre)
     wedge_beside (mol, centre, &view, i, wedge);
 }
 
-/* Bonds of the centre that no other centre may want: those centres choose last. */
+/* How urgent a centre is: fewer usable bonds first, and among those the ones that no other centre
+ * may want count double. */
 static uint32_t
-free_bonds (const EnlMolecule *mol, uint32_t centre)
+freedom (const EnlMolecule *mol, uint32_t centre)
 {
-  uint32_t n = 0;
+  View view = view_of (mol, centre);
+  uint32_t sum = 0;
 
-  for (uint32_t k = 0; k < enl_molecule_degree (mol, centre); k++)
-    n += enl_molecule_atom (mol, enl_molecule_neighbour (mol, centre, k))->winding == 0;
-  return n;
+  for (uint32_t i = 0; i < view.count; i++)
+    if (wedge_cost (mol, &view, i) < COST_TAKEN)
+      sum += enl_molecule_atom (mol, view.atom[i])->winding ? 1 : 2;
+  return sum;
+}
+
+static uint32_t
+most_urgent (const EnlMolecule *mol, const bool *waits)
+{
+  uint32_t best = ENL_NONE, least = ENL_NONE;
+
+  for (uint32_t v = 0; v < enl_molecule_atoms (mol); v++) {
+    uint32_t sum = waits[v] ? freedom (mol, v) : ENL_NONE;
+    if (sum < least) {
+      least = sum;
+      best = v;
+    }
+  }
+  return best;
 }
 
 void
 enl_stereo_draw_wedges (EnlMolecule *mol)
 {
+  g_autofree bool *waits = g_new0 (bool, enl_molecule_atoms (mol) + 1);
   EnlUnit unit;
 
   if (!enl_molecule_has_layout (mol))
@@ -304,9 +329,10 @@ enl_stereo_draw_wedges (EnlMolecule *mol)
   for (uint32_t b = 0; b < enl_molecule_bonds (mol); b++)
     if (enl_molecule_bond (mol, b)->wedge != ENL_WEDGE_EITHER)
       enl_molecule_edit_bond (mol, b)->wedge = ENL_WEDGE_NONE;
-  for (uint32_t wanted = 0; wanted <= 4; wanted++)
-    for (uint32_t v = 0; v < enl_molecule_atoms (mol); v++)
-      if (enl_molecule_atom (mol, v)->winding && free_bonds (mol, v) == wanted &&
-          enl_unit_of_atom (mol, v, &unit))
-        draw_centre (mol, v);
+  for (uint32_t v = 0; v < enl_molecule_atoms (mol); v++)
+    waits[v] = enl_molecule_atom (mol, v)->winding && enl_unit_of_atom (mol, v, &unit);
+  for (uint32_t v = most_urgent (mol, waits); v != ENL_NONE; v = most_urgent (mol, waits)) {
+    draw_centre (mol, v);
+    waits[v] = false;
+  }
 }
