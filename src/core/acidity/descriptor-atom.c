@@ -61,14 +61,13 @@ fill_azole (EnlSiteView *view)
     uint32_t size;
     const uint32_t *ring = enl_molecule_ring (view->mol, r, &size);
     int nitrogen = 0;
-    bool here = false;
+    if (!enl_ring_holds (ring, size, view->site))
+      continue;
     for (uint32_t k = 0; k < size; k++) {
       const EnlAtom *atom = enl_molecule_atom (view->mol, ring[k]);
-      here |= ring[k] == view->site;
       nitrogen += atom->element == NITROGEN && atom->aromatic;
     }
-    if (here)
-      best = MAX (best, nitrogen);
+    best = MAX (best, nitrogen);
   }
   SET (aza_ring, best);
   SET (aza_next, beside);

@@ -5,15 +5,6 @@
 #define ORTHO_EXTRA 0.6
 /* Empirical ortho constants are taken as the para ones: both pass resonance and field on. */
 
-static bool
-is_aromatic_ring (const EnlMolecule *mol, const uint32_t *ring, uint32_t size)
-{
-  for (uint32_t k = 0; k < size; k++)
-    if (!enl_molecule_atom (mol, ring[k])->aromatic)
-      return false;
-  return true;
-}
-
 static void
 add_effect (EnlRingSigma *sum, EnlRingSigma more)
 {
@@ -53,9 +44,8 @@ add_member (EnlSiteView *view, EnlRingSigma *sum, uint32_t atom, uint32_t positi
     add_effect (sum, enl_substituents_ring_effect (table, ENL_RING_CATION, position));
   for (uint32_t k = 0; k < enl_molecule_degree (view->mol, atom); k++) {
     uint32_t x = enl_molecule_neighbour (view->mol, atom, k);
-    bool inside = x == view->site || enl_atom_is_hydrogen (view->mol, x);
-    for (uint32_t i = 0; i < size; i++)
-      inside |= ring[i] == x;
+    bool inside =
+        x == view->site || enl_atom_is_hydrogen (view->mol, x) || enl_ring_holds (ring, size, x);
     if (inside)
       continue;
     if (enl_molecule_bond (view->mol, enl_molecule_bond_at (view->mol, atom, k))->aromatic)
@@ -98,7 +88,7 @@ enl_view_fill_ring_sums (EnlSiteView *view)
   for (uint32_t r = 0; r < enl_molecule_rings (view->mol); r++) {
     uint32_t size, nearest = ENL_NONE;
     const uint32_t *ring = enl_molecule_ring (view->mol, r, &size);
-    if (size < 5 || size > 6 || !is_aromatic_ring (view->mol, ring, size))
+    if (size < 5 || size > 6 || !enl_ring_is_aromatic (view->mol, ring, size))
       continue;
     for (uint32_t k = 0; k < size; k++)
       nearest = MIN (nearest, view->distance[ring[k]]);

@@ -6,24 +6,6 @@ enum { NITROGEN = 7, OXYGEN = 8, SULFUR = 16 };
 #define SET(name, expression) (view->value[ENL_D_##name] = (double)(expression))
 #define ADD(name, expression) (view->value[ENL_D_##name] += (double)(expression))
 
-static bool
-holds (const uint32_t *ring, uint32_t size, uint32_t atom)
-{
-  for (uint32_t k = 0; k < size; k++)
-    if (ring[k] == atom)
-      return true;
-  return false;
-}
-
-static bool
-is_aromatic_ring (const EnlMolecule *mol, const uint32_t *ring, uint32_t size)
-{
-  for (uint32_t k = 0; k < size; k++)
-    if (!enl_molecule_atom (mol, ring[k])->aromatic)
-      return false;
-  return true;
-}
-
 /* Aromatic rings that share one bond with this ring. */
 static int
 fused_aromatics (const EnlMolecule *mol, uint32_t which)
@@ -35,10 +17,10 @@ fused_aromatics (const EnlMolecule *mol, uint32_t which)
   for (uint32_t r = 0; r < enl_molecule_rings (mol); r++) {
     const uint32_t *other = enl_molecule_ring (mol, r, &other_size);
     int common = 0;
-    if (r == which || !is_aromatic_ring (mol, other, other_size))
+    if (r == which || !enl_ring_is_aromatic (mol, other, other_size))
       continue;
     for (uint32_t k = 0; k < other_size; k++)
-      common += holds (ring, size, other[k]);
+      common += enl_ring_holds (ring, size, other[k]);
     n += common == 2;
   }
   return n;
@@ -57,7 +39,7 @@ add_ring_acceptor (EnlSiteView *view, const uint32_t *ring, uint32_t size, uint3
   for (uint32_t k = 0; k < enl_molecule_degree (view->mol, acceptor); k++) {
     uint32_t x = enl_molecule_neighbour (view->mol, acceptor, k);
     uint8_t element = enl_molecule_atom (view->mol, x)->element;
-    if (!holds (ring, size, x))
+    if (!enl_ring_holds (ring, size, x))
       continue;
     ADD (ring_ester, element == OXYGEN);
     ADD (ring_amide, element == NITROGEN || element == SULFUR);
@@ -74,13 +56,13 @@ fill_ring_acceptors (EnlSiteView *view)
     uint32_t size;
     const uint32_t *ring = enl_molecule_ring (view->mol, r, &size);
     int here = 0;
-    if (!holds (ring, size, view->site))
+    if (!enl_ring_holds (ring, size, view->site))
       continue;
     ADD (rings_shared, 1);
     if (!enl_molecule_atom (view->mol, view->site)->aromatic)
       ADD (benzo, fused_aromatics (view->mol, r));
     for (uint32_t i = 0; i < view->n_acceptors; i++) {
-      if (!holds (ring, size, view->acceptor[i]))
+      if (!enl_ring_holds (ring, size, view->acceptor[i]))
         continue;
       inside[i] = true;
       here++;
@@ -128,7 +110,7 @@ fill_ortho (EnlSiteView *view)
       for (uint32_t r = 0; r < enl_molecule_rings (view->mol); r++) {
         uint32_t size;
         const uint32_t *ring = enl_molecule_ring (view->mol, r, &size);
-        closes |= holds (ring, size, view->site) && holds (ring, size, y);
+        closes |= enl_ring_holds (ring, size, view->site) && enl_ring_holds (ring, size, y);
       }
       ADD (ortho, enl_molecule_atom (view->mol, y)->aromatic && !closes &&
                       enl_atom_heavy_degree (view->mol, y) == 3);

@@ -32,3 +32,22 @@ enl_view_next (const EnlSiteView *view, int kind)
 {
   return view->value[ENL_D_next + kind];
 }
+
+/* The ring, as enl_molecule_ring gives it, holds the atom. */
+static inline bool
+enl_ring_holds (const uint32_t *ring, uint32_t size, uint32_t atom)
+{
+  for (uint32_t k = 0; k < size; k++)
+    if (ring[k] == atom)
+      return true;
+  return false;
+}
+
+static inline bool
+enl_ring_is_aromatic (const EnlMolecule *mol, const uint32_t *ring, uint32_t size)
+{
+  for (uint32_t k = 0; k < size; k++)
+    if (!enl_molecule_atom (mol, ring[k])->aromatic)
+      return false;
+  return true;
+}
