@@ -48,3 +48,18 @@ enl_cli_atoms (const EnlMolecule *mol, const EnlSite *site)
     g_string_append_printf (out, i ? ",%u" : "%u", enl_molecule_atom (mol, site->atom[i])->input);
   return g_string_free (out, FALSE);
 }
+
+int
+enl_cli_run (const EnlOptions *options, const char *const *column, EnlVisit visit)
+{
+  EnlKnowledge *knowledge = enl_cli_knowledge ();
+  if (!knowledge)
+    return 1;
+  EnlRun run = {knowledge, options, enl_output_new (options->format, column)};
+  uint32_t failed = enl_input_each (knowledge->names, options->input,
+                                    options->format == ENL_FORMAT_TEXT, visit, &run);
+
+  enl_output_finish (run.out);
+  enl_knowledge_free (knowledge);
+  return failed > 0;
+}

@@ -6,12 +6,6 @@ static const char *const column[] = {"substrate",   "atom",       "base",     "p
                                      "gap",         "conversion", "low",      "high",
                                      "selectivity", "verdict",    "cautions", NULL};
 
-typedef struct {
-  const EnlKnowledge *knowledge;
-  const EnlOptions *options;
-  EnlOutput *out;
-} Run;
-
 /* The reason, then the cautions: "gap +15.6: ... [H05] Evolves hydrogen ... [R12] ..." */
 static char *
 cautions (const EnlCandidate *candidate, bool only_ids)
@@ -29,7 +23,7 @@ cautions (const EnlCandidate *candidate, bool only_ids)
 }
 
 static void
-print_candidate (const Run *run, const char *name, uint32_t position, const EnlCandidate *c)
+print_candidate (const EnlRun *run, const char *name, uint32_t position, const EnlCandidate *c)
 {
   const EnlBase *base = enl_base_table_get (run->knowledge->bases, c->base);
   g_autofree char *text = cautions (c, run->options->format == ENL_FORMAT_TEXT);
@@ -50,7 +44,7 @@ print_candidate (const Run *run, const char *name, uint32_t position, const EnlC
 static EnlStatus
 visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
-  const Run *run = data;
+  const EnlRun *run = data;
   g_autoptr (EnlAnalysis) a = NULL;
   g_autoptr (EnlComparison) comparison = NULL;
   uint32_t site;
@@ -74,14 +68,5 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 int
 enl_verb_bases (const EnlOptions *options)
 {
-  EnlKnowledge *knowledge = enl_cli_knowledge ();
-  if (!knowledge)
-    return 1;
-  Run run = {knowledge, options, enl_output_new (options->format, column)};
-  uint32_t failed = enl_input_each (knowledge->names, options->input,
-                                    options->format == ENL_FORMAT_TEXT, visit, &run);
-
-  enl_output_finish (run.out);
-  enl_knowledge_free (knowledge);
-  return failed > 0;
+  return enl_cli_run (options, column, visit);
 }

@@ -6,12 +6,6 @@
 static const char *const column[] = {"substrate", "atom",    "form", "smiles",
                                      "weight",    "charges", NULL};
 
-typedef struct {
-  const EnlKnowledge *knowledge;
-  const EnlOptions *options;
-  EnlOutput *out;
-} Run;
-
 /* "3:-1,5:+1": formal charges by input position. */
 static char *
 formal_charges (const EnlForms *forms, uint32_t index)
@@ -44,7 +38,7 @@ hybrid_charges (const EnlForms *forms)
 }
 
 static void
-print_row (const Run *run, const char *name, uint32_t position, const char *form,
+print_row (const EnlRun *run, const char *name, uint32_t position, const char *form,
            const char *smiles, double weight, const char *charges)
 {
   enl_output_text (run->out, name);
@@ -56,7 +50,7 @@ print_row (const Run *run, const char *name, uint32_t position, const char *form
 }
 
 static void
-print_forms (const Run *run, const char *name, const EnlForms *forms)
+print_forms (const EnlRun *run, const char *name, const EnlForms *forms)
 {
   uint32_t position = enl_molecule_atom (forms->anion, forms->site_atom)->input;
 
@@ -79,7 +73,7 @@ print_forms (const Run *run, const char *name, const EnlForms *forms)
 static EnlStatus
 visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
-  const Run *run = data;
+  const EnlRun *run = data;
   g_autoptr (EnlAnalysis) a = NULL;
   g_autoptr (EnlForms) forms = NULL;
   uint32_t site;
@@ -98,14 +92,5 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 int
 enl_verb_forms (const EnlOptions *options)
 {
-  EnlKnowledge *knowledge = enl_cli_knowledge ();
-  if (!knowledge)
-    return 1;
-  Run run = {knowledge, options, enl_output_new (options->format, column)};
-  uint32_t failed = enl_input_each (knowledge->names, options->input,
-                                    options->format == ENL_FORMAT_TEXT, visit, &run);
-
-  enl_output_finish (run.out);
-  enl_knowledge_free (knowledge);
-  return failed > 0;
+  return enl_cli_run (options, column, visit);
 }

@@ -19,7 +19,8 @@ hydrogens_per_atom (const EnlMolecule *mol)
 static EnlStatus
 visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
-  EnlOutput *out = data;
+  const EnlRun *run = data;
+  EnlOutput *out = run->out;
   g_autofree char *key = NULL;
   g_autofree char *formula = enl_molecule_formula (mol);
   g_autofree char *hydrogens = hydrogens_per_atom (mol);
@@ -42,14 +43,5 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 int
 enl_verb_molecule (const EnlOptions *options)
 {
-  EnlKnowledge *knowledge = enl_cli_knowledge ();
-  if (!knowledge)
-    return 1;
-  EnlOutput *out = enl_output_new (options->format, column);
-  uint32_t failed = enl_input_each (knowledge->names, options->input,
-                                    options->format == ENL_FORMAT_TEXT, visit, out);
-
-  enl_output_finish (out);
-  enl_knowledge_free (knowledge);
-  return failed > 0;
+  return enl_cli_run (options, column, visit);
 }

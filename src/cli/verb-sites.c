@@ -7,12 +7,6 @@ static const char *const column[] = {"substrate", "rank",     "atoms",      "ele
                                      "hydrogens", "position", "pka",        "low",
                                      "high",      "basis",    "precedents", NULL};
 
-typedef struct {
-  const EnlKnowledge *knowledge;
-  const EnlOptions *options;
-  EnlOutput *out;
-} Run;
-
 /* "ethyl acetoacetate 14.2 (Olmstead & Bordwell ...) | ..." */
 static char *
 precedents (const EnlReference *reference, const EnlEstimate *e)
@@ -42,7 +36,7 @@ short_precedents (const EnlReference *reference, const EnlEstimate *e)
 }
 
 static void
-print_site (const Run *run, const char *name, const EnlAnalysis *a, uint32_t rank)
+print_site (const EnlRun *run, const char *name, const EnlAnalysis *a, uint32_t rank)
 {
   const EnlSite *site = &a->sites->site[a->rank[rank]];
   const EnlEstimate *e = &a->estimate[a->rank[rank]];
@@ -65,7 +59,7 @@ print_site (const Run *run, const char *name, const EnlAnalysis *a, uint32_t ran
 }
 
 static void
-print_reason (const Run *run, const char *name, const char *reason)
+print_reason (const EnlRun *run, const char *name, const char *reason)
 {
   enl_output_text (run->out, name);
   enl_output_integer (run->out, 0);
@@ -82,7 +76,7 @@ print_reason (const Run *run, const char *name, const char *reason)
 static EnlStatus
 visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
-  const Run *run = data;
+  const EnlRun *run = data;
   g_autoptr (EnlAnalysis) a = NULL;
   EnlStatus status =
       enl_analysis_new (run->knowledge, mol, run->options->conditions.solvent, false, &a, err);
@@ -105,14 +99,5 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 int
 enl_verb_sites (const EnlOptions *options)
 {
-  EnlKnowledge *knowledge = enl_cli_knowledge ();
-  if (!knowledge)
-    return 1;
-  Run run = {knowledge, options, enl_output_new (options->format, column)};
-  uint32_t failed = enl_input_each (knowledge->names, options->input,
-                                    options->format == ENL_FORMAT_TEXT, visit, &run);
-
-  enl_output_finish (run.out);
-  enl_knowledge_free (knowledge);
-  return failed > 0;
+  return enl_cli_run (options, column, visit);
 }

@@ -13,6 +13,17 @@ int enl_verb_validate (const EnlOptions *options);
 
 /* What several verbs need. */
 
+/* A verb at work: given to its visit function as data. */
+typedef struct {
+  const EnlKnowledge *knowledge;
+  const EnlOptions *options;
+  EnlOutput *out;
+} EnlRun;
+
+/* Opens the knowledge, visits every input with an EnlRun whose output has these columns, and
+ * returns the exit code. */
+int enl_cli_run (const EnlOptions *options, const char *const *column, EnlVisit visit);
+
 /* The knowledge inside the program; explains itself on standard error and returns NULL when a
  * table is damaged (a broken build). Caller: enl_knowledge_free. */
 EnlKnowledge *enl_cli_knowledge (void);

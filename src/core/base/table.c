@@ -112,6 +112,17 @@ enl_table_column (const EnlTable *table, const char *name)
   return -1;
 }
 
+EnlStatus
+enl_table_require (const EnlTable *table, const char *const *column, size_t n, const char *what,
+                   EnlError *err)
+{
+  for (size_t i = 0; i < n; i++)
+    if (enl_table_column (table, column[i]) < 0)
+      return enl_error_set (err, ENL_ERROR_FORMAT, "restore the header line",
+                            "column '%s' of the %s is missing", column[i], what);
+  return ENL_OK;
+}
+
 const char *
 enl_table_cell (const EnlTable *table, size_t row, int column)
 {

@@ -25,6 +25,11 @@ size_t enl_table_columns (const EnlTable *table);
 int enl_table_column (const EnlTable *table, const char *name);
 const char *enl_table_header (const EnlTable *table, size_t column);
 
+/* ENL_OK when every named column is there; else ENL_ERROR_FORMAT that names the missing one. `what`
+ * is the table in words ("base table"). */
+EnlStatus enl_table_require (const EnlTable *table, const char *const *column, size_t n,
+                             const char *what, EnlError *err);
+
 /* Text of a cell, owned by the table, never NULL; column -1 gives "". */
 const char *enl_table_cell (const EnlTable *table, size_t row, int column);
 

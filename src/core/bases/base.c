@@ -88,11 +88,7 @@ check_columns (const EnlTable *table, EnlError *err)
                                        "pKaH_water", "pKaH_THF",    "attacks",     "irreversible",
                                        "source",     "thf_footing", "number_holds"};
 
-  for (size_t i = 0; i < ENL_COUNT (needed); i++)
-    if (enl_table_column (table, needed[i]) < 0)
-      return enl_error_set (err, ENL_ERROR_FORMAT, "restore the header line of the base table",
-                            "column '%s' is missing", needed[i]);
-  return ENL_OK;
+  return enl_table_require (table, needed, ENL_COUNT (needed), "base table", err);
 }
 
 EnlStatus

@@ -59,11 +59,7 @@ check_columns (const EnlTable *table, EnlError *err)
   static const char *const needed[] = {"id",       "severity", "bases", "solvents",
                                        "carbonyl", "text",     "source"};
 
-  for (size_t i = 0; i < ENL_COUNT (needed); i++)
-    if (enl_table_column (table, needed[i]) < 0)
-      return enl_error_set (err, ENL_ERROR_FORMAT, "restore the header line of the caution table",
-                            "column '%s' is missing", needed[i]);
-  return ENL_OK;
+  return enl_table_require (table, needed, ENL_COUNT (needed), "caution table", err);
 }
 
 EnlStatus

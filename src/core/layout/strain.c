@@ -215,6 +215,7 @@ enl_strain_clashes (const EnlSketch *sketch, uint32_t *n)
 
   tally_all (sketch, add_clash, list);
   *n = list->len;
-  qsort (list->data, list->len, sizeof (EnlClash), compare_clashes);
+  if (list->len) /* an empty array has no data to sort */
+    qsort (list->data, list->len, sizeof (EnlClash), compare_clashes);
   return (EnlClash *)(void *)g_array_free (list, FALSE);
 }
