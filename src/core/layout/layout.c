@@ -108,6 +108,10 @@ EnlStatus
 enl_layout (EnlMolecule *mol, EnlError *err)
 {
   uint32_t n = enl_molecule_atoms (mol);
+  if (n > ENL_LAYOUT_MAX_ATOMS)
+    return enl_error_set (
+        err, ENL_ERROR_LIMIT, "give coordinates with it or use a smaller structure",
+        "a picture of %u atoms is too large to lay out (at most %d)", n, ENL_LAYOUT_MAX_ATOMS);
   g_autofree uint32_t *rank = g_new0 (uint32_t, n + 1);
   g_autofree uint32_t *of = g_new0 (uint32_t, n + 1);
 

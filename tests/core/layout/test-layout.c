@@ -369,6 +369,18 @@ START_TEST (large_structures_come_in_time)
 }
 END_TEST
 
+START_TEST (a_huge_structure_is_refused)
+{
+  g_autofree char *text = ring (ENL_LAYOUT_MAX_ATOMS + 1); /* and one oxygen */
+  g_autoptr (EnlMolecule) mol = read_molecule (text);
+  EnlError err;
+
+  ck_assert_int_eq (enl_layout (mol, &err), ENL_ERROR_LIMIT);
+  ck_assert (!enl_molecule_has_layout (mol));
+  ck_assert (err.text[0] && err.advice[0]);
+}
+END_TEST
+
 static Suite *
 layout_suite (void)
 {
@@ -388,6 +400,7 @@ layout_suite (void)
   tcase_add_test (tc, a_carbonyl_group_stands_upright);
   tcase_add_test (tc, a_steroid_stands_as_usual);
   tcase_add_test (tc, large_structures_come_in_time);
+  tcase_add_test (tc, a_huge_structure_is_refused);
   suite_add_tcase (suite, tc);
   return suite;
 }
