@@ -30,13 +30,15 @@ TEXT_FILES = {"CMakeLists.txt", "README.txt", "readme.txt", "requirements.txt"}
 SEED = 20
 SPELLINGS = 3          # random spellings of each sampled molecule
 SAMPLE = 1200          # molecules sampled besides those with stereo marks
+LEAST_STRUCTURES = 10000  # fewer mean that the data files were not found
 MAX_AUTOMORPHISMS = 20000
 
 
 # ---- structures ----
 
 def files():
-    listing = subprocess.run(["dpkg", "-L", "rdkit-data"], capture_output=True, text=True, check=True)
+    listing = subprocess.run(["dpkg", "-L", "rdkit-data"], capture_output=True, text=True,
+                             check=True)
     for name in listing.stdout.split("\n"):
         path = pathlib.Path(name)
         wanted = path.suffix in {".smi", ".smiles", ".csv", ".txt", ".sdf"}
@@ -213,7 +215,7 @@ def labels(mol):
             found[f"{atom.GetIntProp('at')}"] = atom.GetProp("_CIPCode")
     for bond in mol.GetBonds():
         if bond.HasProp("_CIPCode") and bond.GetStereo() > Chem.BondStereo.STEREOANY:
-            ends = sorted([bond.GetBeginAtom().GetIntProp("at"), bond.GetEndAtom().GetIntProp("at")])
+            ends = sorted(a.GetIntProp("at") for a in (bond.GetBeginAtom(), bond.GetEndAtom()))
             found[f"{ends[0]}={ends[1]}"] = bond.GetProp("_CIPCode")
     return found
 
@@ -351,6 +353,8 @@ def main():
     tool, differences = sys.argv[1:3]
     tally = Tally()
     smiles = structures(tally.remarks)
+    if len(smiles) < LEAST_STRUCTURES:
+        sys.exit(f"only {len(smiles)} structures found in the files of rdkit-data")
     rows = dump(tool, smiles)
     print(f"{len(smiles)} structures")
     for text, row in zip(smiles, rows):
