@@ -396,14 +396,15 @@ enl_molecule_find_aromatic (EnlMolecule *mol)
   if (mol->n_rings == 0)
     return;
   g_autofree Offer *offer = g_new (Offer, mol->n_atoms);
-  g_autofree uint32_t *rings = g_new (uint32_t, 2 * (size_t)mol->n_rings + mol->n_ring_atoms);
+  size_t n_rings = (size_t)mol->n_rings + mol->n_spare;
+  g_autofree uint32_t *rings = g_new (uint32_t, 2 * n_rings + mol->n_ring_atoms);
   c.offer = offer;
   c.ring = rings;
-  c.member = rings + mol->n_rings;
-  c.bond = rings + 2 * (size_t)mol->n_rings;
+  c.member = rings + n_rings;
+  c.bond = rings + 2 * n_rings;
   for (uint32_t a = 0; a < mol->n_atoms; a++)
     c.offer[a] = mol->smallest[a] ? judge_atom (mol, a) : no_offer;
-  for (uint32_t r = 0; r < mol->n_rings; r++)
+  for (uint32_t r = 0; r < n_rings; r++)
     if (is_candidate (&c, r))
       c.ring[c.n++] = r;
   if (c.n == 0)

@@ -93,8 +93,13 @@ move_reference (EnlMolecule *mol, EnlBond *bond, uint32_t end, uint32_t partner,
   if (bond->side == ENL_SIDE_NONE || mol->atom[*reference].element != HYDROGEN)
     return;
   uint32_t other = find_substitute (mol, end, partner, *reference);
-  if (other == ENL_NONE)
+  if (other == ENL_NONE) {
+    if (mol->atom[end].hydrogens) { /* =CH2: two equal neighbours */
+      bond->side = ENL_SIDE_NONE;
+      bond->side_from = bond->side_to = ENL_NONE;
+    }
     return;
+  }
   *reference = other;
   bond->side = bond->side == ENL_SIDE_SAME ? ENL_SIDE_OPPOSITE : ENL_SIDE_SAME;
 }

@@ -17,7 +17,7 @@ enl_molecule_forget_derived (EnlMolecule *mol)
 {
   g_clear_pointer (&mol->first, g_free);
   g_clear_pointer (&mol->ring_first, g_free);
-  mol->n_rings = mol->n_ring_atoms = 0;
+  mol->n_rings = mol->n_spare = mol->n_ring_atoms = 0;
   mol->linked = mol->finished = false;
 }
 
@@ -51,7 +51,7 @@ static void
 place_rings (EnlMolecule *mol, uint32_t *block)
 {
   mol->ring_first = block;
-  mol->ring_count = block + mol->n_rings + 1;
+  mol->ring_count = block + mol->n_rings + mol->n_spare + 1;
   mol->smallest = mol->ring_count + mol->n_atoms;
   mol->ring_atom = mol->smallest + mol->n_atoms;
 }
@@ -59,14 +59,16 @@ place_rings (EnlMolecule *mol, uint32_t *block)
 static size_t
 ring_block_size (const EnlMolecule *mol)
 {
-  return (size_t)mol->n_rings + 1 + 2 * (size_t)mol->n_atoms + mol->n_ring_atoms;
+  return (size_t)mol->n_rings + mol->n_spare + 1 + 2 * (size_t)mol->n_atoms + mol->n_ring_atoms;
 }
 
 void
-enl_molecule_make_ring_block (EnlMolecule *mol, uint32_t n_rings, uint32_t n_ring_atoms)
+enl_molecule_make_ring_block (EnlMolecule *mol, uint32_t n_rings, uint32_t n_spare,
+                              uint32_t n_ring_atoms)
 {
   g_free (mol->ring_first);
   mol->n_rings = n_rings;
+  mol->n_spare = n_spare;
   mol->n_ring_atoms = n_ring_atoms;
   place_rings (mol, g_new (uint32_t, ring_block_size (mol)));
 }
@@ -302,11 +304,11 @@ enl_molecule_in_ring (const EnlMolecule *mol, uint32_t atom)
 bool
 enl_molecule_in_ring_of (const EnlMolecule *mol, uint32_t atom, uint32_t size)
 {
-  for (uint32_t r = 0; r < enl_molecule_rings (mol); r++) {
-    uint32_t n;
-    const uint32_t *member = enl_molecule_ring (mol, r, &n);
-    for (uint32_t i = 0; n == size && i < n; i++)
-      if (member[i] == atom)
+  g_assert (mol->finished);
+  for (uint32_t r = 0; r < mol->n_rings + mol->n_spare; r++) {
+    uint32_t start = mol->ring_first[r], stop = mol->ring_first[r + 1];
+    for (uint32_t i = start; stop - start == size && i < stop; i++)
+      if (mol->ring_atom[i] == atom)
         return true;
   }
   return false;

@@ -120,6 +120,7 @@ uint32_t enl_molecule_order_sum (const EnlMolecule *mol, uint32_t atom);
 uint32_t enl_molecule_rings (const EnlMolecule *mol);
 const uint32_t *enl_molecule_ring (const EnlMolecule *mol, uint32_t ring, uint32_t *size);
 bool enl_molecule_in_ring (const EnlMolecule *mol, uint32_t atom);
+/* Any smallest ring counts here, also one that the set leaves out. */
 bool enl_molecule_in_ring_of (const EnlMolecule *mol, uint32_t atom, uint32_t size);
 uint32_t enl_molecule_smallest_ring (const EnlMolecule *mol, uint32_t atom); /* 0: in none */
 uint32_t enl_molecule_ring_count_of_atom (const EnlMolecule *mol, uint32_t atom);

@@ -8,6 +8,10 @@
  *    atoms of lower rank than the root, so that each cycle comes up once). They are tried from
  *    short to long, and kept when they are not the sum (modulo 2) of kept ones.
  *
+ * Cages have more than one such set; which one is found depends on the order of atoms. So every
+ * candidate that is no sum of shorter rings is kept beside the set ("spare"): set and spare rings
+ * together do not depend on the order, and aromaticity is judged on both.
+ *
  * Candidates are made in windows of length, so that a usual molecule never walks farther than half
  * a common ring.
  */
@@ -15,7 +19,10 @@
 
 #include <string.h>
 
-enum { FIRST_WINDOW = 8 }; /* rings up to here are looked for first; longer ones are uncommon */
+enum {
+  FIRST_WINDOW = 8, /* rings up to here are looked for first; longer ones are uncommon */
+  MAX_SPARE = 1000  /* spare rings kept; graphs with more are no molecules that anyone drew */
+};
 
 typedef struct {
   uint32_t length, root, left, right; /* left and right: the atoms where the two paths end */
@@ -37,9 +44,11 @@ typedef struct {
   uint64_t *row; /* kept cycles as sets of bonds, one row each */
   uint32_t *row_with_pivot;
   uint32_t words, rank, wanted;
+  uint32_t shorter; /* kept cycles that are shorter than those at hand */
 
   /* the result */
   GArray *ring_first, *ring_atom;
+  GArray *spare_first, *spare_atom;
 } Search;
 
 /* ---- blocks ---- */
@@ -117,13 +126,6 @@ walk_blocks (Search *search, Blocks *b, uint32_t start)
 }
 
 /* ---- one block ---- */
-
-static void
-add_ring (Search *search, const uint32_t *atom, uint32_t n)
-{
-  g_array_append_vals (search->ring_atom, atom, n);
-  g_array_append_val (search->ring_first, search->ring_atom->len);
-}
 
 /* Numbers the atoms of the block and builds its adjacency. */
 static void
@@ -279,22 +281,27 @@ find_lowest (const uint64_t *set, uint32_t words)
   return ENL_NONE;
 }
 
-/* Reduces the cycle in the next free row by the kept rows; true (and kept) when something is left.
- */
-static bool
-keep_if_new (Search *search)
+typedef enum { RING_SUM, RING_SPARE, RING_NEW } RingKind;
+
+/* Reduces the cycle in the next free row by the kept rows. New: something is left, and the row is
+ * kept. Spare: a sum of kept rings, but not of shorter ones alone. */
+static RingKind
+judge_row (Search *search)
 {
   uint64_t *set = search->row + (size_t)search->rank * search->words;
+  RingKind kind = RING_SUM;
 
   for (;;) {
     uint32_t pivot = find_lowest (set, search->words);
     if (pivot == ENL_NONE)
-      return false;
+      return kind;
     uint32_t other = search->row_with_pivot[pivot];
     if (other == ENL_NONE) {
       search->row_with_pivot[pivot] = search->rank++;
-      return true;
+      return RING_NEW;
     }
+    if (other >= search->shorter)
+      kind = RING_SPARE;
     const uint64_t *row = search->row + (size_t)other * search->words;
     for (uint32_t w = pivot / 64; w < search->words; w++)
       set[w] ^= row[w];
@@ -320,7 +327,7 @@ flip_path (Search *search, uint64_t *set, uint32_t root, uint32_t a)
 }
 
 static void
-add_candidate_ring (Search *search, const Candidate *c)
+add_candidate_ring (Search *search, const Candidate *c, GArray *first, GArray *atoms)
 {
   const uint32_t *parent = search->parent + (size_t)c->root * search->n_atoms;
   uint32_t *ring = search->queue; /* free between walks */
@@ -339,7 +346,8 @@ add_candidate_ring (Search *search, const Candidate *c)
   }
   if (c->top != ENL_NONE)
     ring[n++] = search->atom[c->top];
-  add_ring (search, ring, n);
+  g_array_append_vals (atoms, ring, n);
+  g_array_append_val (first, atoms->len);
 }
 
 static void
@@ -356,8 +364,29 @@ try_candidate (Search *search, const Candidate *c)
     flip (set, find_local_bond (search, c->left, c->top));
     flip (set, find_local_bond (search, c->top, c->right));
   }
-  if (keep_if_new (search))
-    add_candidate_ring (search, c);
+  RingKind kind = judge_row (search);
+  if (kind == RING_NEW)
+    add_candidate_ring (search, c, search->ring_first, search->ring_atom);
+  else if (kind == RING_SPARE && search->spare_first->len <= MAX_SPARE)
+    add_candidate_ring (search, c, search->spare_first, search->spare_atom);
+}
+
+/* Up to the last one that is as long as the longest ring of the set. */
+static void
+try_candidates (Search *search)
+{
+  uint32_t length = 0;
+
+  for (uint32_t i = 0; i < search->candidate->len; i++) {
+    const Candidate *c = &g_array_index (search->candidate, Candidate, i);
+    bool complete = search->rank == search->wanted;
+    if (complete && (c->length > length || search->spare_first->len > MAX_SPARE))
+      return;
+    if (c->length > length)
+      search->shorter = search->rank;
+    length = c->length;
+    try_candidate (search, c);
+  }
 }
 
 static void
@@ -370,8 +399,7 @@ search_window (Search *search, uint32_t shortest, uint32_t longest)
       propose_at (search, root, search->queue[i], shortest, longest);
   }
   g_array_sort (search->candidate, compare_candidates);
-  for (uint32_t i = 0; i < search->candidate->len && search->rank < search->wanted; i++)
-    try_candidate (search, &g_array_index (search->candidate, Candidate, i));
+  try_candidates (search);
 }
 
 static void
@@ -404,15 +432,26 @@ find_rings_of_block (Search *search, const uint32_t *bond, uint32_t n_bonds)
 /* ---- the whole molecule ---- */
 
 static void
+copy_rings (uint32_t *first, uint32_t *atom, uint32_t start, const GArray *from_first,
+            const GArray *from_atom)
+{
+  for (uint32_t r = 0; r < from_first->len; r++)
+    first[r] = start + g_array_index (from_first, uint32_t, r);
+  if (from_atom->len)
+    memcpy (atom + start, from_atom->data, from_atom->len * sizeof *atom);
+}
+
+static void
 store_rings (Search *search)
 {
   EnlMolecule *mol = search->mol;
-  uint32_t n_rings = search->ring_first->len - 1;
+  uint32_t n_rings = search->ring_first->len - 1, n_spare = search->spare_first->len - 1;
 
-  enl_molecule_make_ring_block (mol, n_rings, search->ring_atom->len);
-  memcpy (mol->ring_first, search->ring_first->data, (n_rings + 1) * sizeof (uint32_t));
-  if (n_rings)
-    memcpy (mol->ring_atom, search->ring_atom->data, mol->n_ring_atoms * sizeof (uint32_t));
+  enl_molecule_make_ring_block (mol, n_rings, n_spare,
+                                search->ring_atom->len + search->spare_atom->len);
+  copy_rings (mol->ring_first, mol->ring_atom, 0, search->ring_first, search->ring_atom);
+  copy_rings (mol->ring_first + n_rings, mol->ring_atom, search->ring_atom->len,
+              search->spare_first, search->spare_atom);
   memset (mol->ring_count, 0, mol->n_atoms * sizeof (uint32_t));
   memset (mol->smallest, 0, mol->n_atoms * sizeof (uint32_t));
   for (uint32_t r = 0; r < n_rings; r++) {
@@ -448,26 +487,35 @@ share_memory (Search *search, Blocks *b)
   return memory;
 }
 
+static GArray *
+new_list (bool with_zero)
+{
+  GArray *list = g_array_new (FALSE, FALSE, sizeof (uint32_t));
+  uint32_t zero = 0;
+
+  if (with_zero)
+    g_array_append_val (list, zero);
+  return list;
+}
+
 void
 enl_molecule_find_rings (EnlMolecule *mol)
 {
   Search search = {.mol = mol};
   Blocks blocks = {0};
-  uint32_t zero = 0;
 
   g_assert (mol->linked);
   for (uint32_t i = 0; i < mol->n_bonds; i++)
     mol->bond[i].ring = false;
   g_autofree uint32_t *memory = share_memory (&search, &blocks);
-  search.ring_first = g_array_new (FALSE, FALSE, sizeof (uint32_t));
-  search.ring_atom = g_array_new (FALSE, FALSE, sizeof (uint32_t));
-  search.candidate = g_array_new (FALSE, FALSE, sizeof (Candidate));
-  g_array_append_val (search.ring_first, zero);
+  g_autoptr (GArray) ring_first = search.ring_first = new_list (true);
+  g_autoptr (GArray) ring_atom = search.ring_atom = new_list (false);
+  g_autoptr (GArray) spare_first = search.spare_first = new_list (true);
+  g_autoptr (GArray) spare_atom = search.spare_atom = new_list (false);
+  g_autoptr (GArray) candidate = g_array_new (FALSE, FALSE, sizeof (Candidate));
+  search.candidate = candidate;
   for (uint32_t a = 0; a < mol->n_atoms; a++)
     if (blocks.order[a] == 0)
       walk_blocks (&search, &blocks, a);
   store_rings (&search);
-  g_array_unref (search.ring_first);
-  g_array_unref (search.ring_atom);
-  g_array_unref (search.candidate);
 }

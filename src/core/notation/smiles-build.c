@@ -287,8 +287,9 @@ enl_smiles_build (EnlSmilesReader *r)
   enl_valence_separate_charges (r->mol);
   if ((status = check_valence (r)) != ENL_OK)
     return status;
-  if (!enl_molecule_fold_hydrogens (r->mol))
-    enl_molecule_find_aromatic (r->mol);
-  enl_stereo_clean (r->mol);
+  enl_molecule_find_aromatic (r->mol);
+  enl_stereo_clean (r->mol); /* before folding, which keeps hydrogens that stereo rests on */
+  if (enl_molecule_fold_hydrogens (r->mol))
+    enl_stereo_clean (r->mol);
   return ENL_OK;
 }

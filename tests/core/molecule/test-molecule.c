@@ -163,6 +163,9 @@ static const struct {
     {"hydrogen on any atom stays", "*[H]", 2, 1},
     {"imine geometry needs its hydrogen", "C(/C)=N/[H]", 4, 1},
     {"imine without geometry does not", "C(C)=N[H]", 3, 1},
+    {"marks on an imine with equal ends", "C(C)(/C)=N/[H]", 4, 0},
+    {"marks on =CH2", "C(/F)=C/[H]", 3, 1},
+    {"marks on =CH2, both written", "C(/F)=C(\\[H])[H]", 3, 1},
 };
 
 START_TEST (plain_hydrogens_are_folded)
