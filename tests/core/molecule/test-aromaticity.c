@@ -93,6 +93,27 @@ START_TEST (a_new_finish_forgets_old_flags)
 }
 END_TEST
 
+/* Bridged rings with more than one smallest set of rings: flags must not follow the set that the
+ * order of atoms happens to select. */
+START_TEST (flags_do_not_depend_on_the_order_of_atoms)
+{
+  static const char *const pair[][2] = {
+      {"ClC1=CC2=C=CC=C(NC=N2)C=C1", "ClC1=CC2=C=CC=C(C=C1)NC=N2"},
+      {"N2C1=CC2=C(NNC2=C=CC=C2)C=C1", "C=1=CC=CC1NNc1ccc2cc1N2"},
+  };
+
+  for (size_t i = 0; i < ENL_COUNT (pair); i++) {
+    uint32_t count[2] = {0};
+    for (int k = 0; k < 2; k++) {
+      g_autoptr (EnlMolecule) mol = read_structure (pair[i][k]);
+      for (uint32_t a = 0; a < enl_molecule_atoms (mol); a++)
+        count[k] += enl_molecule_atom (mol, a)->aromatic;
+    }
+    ck_assert_uint_eq (count[0], count[1]);
+  }
+}
+END_TEST
+
 static Suite *
 aromaticity_suite (void)
 {
@@ -102,6 +123,7 @@ aromaticity_suite (void)
   tcase_add_loop_test (tc, flags, 0, (int)ENL_COUNT (aromatic_case));
   tcase_add_test (tc, the_bond_inside_azulene_is_single);
   tcase_add_test (tc, a_new_finish_forgets_old_flags);
+  tcase_add_test (tc, flags_do_not_depend_on_the_order_of_atoms);
   suite_add_tcase (suite, tc);
   return suite;
 }
