@@ -90,6 +90,18 @@ print_fault (const char *message)
   putchar ('\n');
 }
 
+static void
+print_structure (const inchi_OutputStruct *made)
+{
+  printf ("enolith-inchi 1\n");
+  for (int i = 0; i < made->num_atoms; i++)
+    print_atom (&made->atom[i]);
+  print_bonds (made);
+  for (int i = 0; i < made->num_stereo0D; i++)
+    print_stereo (&made->stereo0D[i]);
+  printf ("end\n");
+}
+
 int
 enl_inchi_worker_main (void)
 {
@@ -102,16 +114,10 @@ enl_inchi_worker_main (void)
   text[size] = '\0';
   inchi_InputINCHI input = {text, options};
   int result = GetStructFromINCHI (&input, &made);
-  if ((result != inchi_Ret_OKAY && result != inchi_Ret_WARNING) || !made.atom) {
+  if ((result == inchi_Ret_OKAY || result == inchi_Ret_WARNING) && made.atom)
+    print_structure (&made);
+  else
     print_fault (made.szMessage);
-    return fflush (stdout) == 0 ? EXIT_SUCCESS : EXIT_FAILURE;
-  }
-  printf ("enolith-inchi 1\n");
-  for (int i = 0; i < made.num_atoms; i++)
-    print_atom (&made.atom[i]);
-  print_bonds (&made);
-  for (int i = 0; i < made.num_stereo0D; i++)
-    print_stereo (&made.stereo0D[i]);
-  printf ("end\n");
+  FreeStructFromINCHI (&made);
   return fflush (stdout) == 0 ? EXIT_SUCCESS : EXIT_FAILURE;
 }
