@@ -143,6 +143,7 @@ START_TEST (saving_is_whole_or_not_at_all)
 
   ck_assert_int_eq (enl_workset_save (set, path, &err), ENL_OK);
   ck_assert_int_eq (enl_workset_load (path, &again, &err), ENL_OK);
+  g_clear_pointer (&again, enl_workset_free);
   ck_assert_int_eq (enl_workset_save (set, "/no/such/folder/a.enolith", &err), ENL_ERROR_IO);
   ck_assert (err.text[0] && err.advice[0]);
   ck_assert_int_eq (enl_workset_load ("/no/such/folder/a.enolith", &again, &err), ENL_ERROR_IO);
