@@ -507,11 +507,12 @@ enl_molecule_find_rings (EnlMolecule *mol)
   g_assert (mol->linked);
   for (uint32_t i = 0; i < mol->n_bonds; i++)
     mol->bond[i].ring = false;
-  g_autofree uint32_t *memory = share_memory (&search, &blocks);
-  g_autoptr (GArray) ring_first = search.ring_first = new_list (true);
-  g_autoptr (GArray) ring_atom = search.ring_atom = new_list (false);
-  g_autoptr (GArray) spare_first = search.spare_first = new_list (true);
-  g_autoptr (GArray) spare_atom = search.spare_atom = new_list (false);
+  /* These only free; `search` is what is used. */
+  g_autofree G_GNUC_UNUSED uint32_t *memory = share_memory (&search, &blocks);
+  g_autoptr (GArray) G_GNUC_UNUSED ring_first = search.ring_first = new_list (true);
+  g_autoptr (GArray) G_GNUC_UNUSED ring_atom = search.ring_atom = new_list (false);
+  g_autoptr (GArray) G_GNUC_UNUSED spare_first = search.spare_first = new_list (true);
+  g_autoptr (GArray) G_GNUC_UNUSED spare_atom = search.spare_atom = new_list (false);
   g_autoptr (GArray) candidate = g_array_new (FALSE, FALSE, sizeof (Candidate));
   search.candidate = candidate;
   for (uint32_t a = 0; a < mol->n_atoms; a++)
