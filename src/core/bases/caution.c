@@ -47,6 +47,7 @@ read_rule (EnlCautionTable *table, size_t row)
   rule->caution.text = text;
   rule->caution.source = enl_table_cell (t, row, enl_table_column (t, "source"));
   rule->caution.severity = atoi (enl_table_cell (t, row, enl_table_column (t, "severity")));
+  rule->caution.prevents_above = enl_table_number (t, row, enl_table_column (t, "prevents_above"));
   rule->base = split_list (enl_table_cell (t, row, enl_table_column (t, "bases")));
   rule->solvent = split_list (enl_table_cell (t, row, enl_table_column (t, "solvents")));
   rule->carbonyl = strcmp (enl_table_cell (t, row, enl_table_column (t, "carbonyl")), "yes") == 0;
@@ -56,8 +57,8 @@ read_rule (EnlCautionTable *table, size_t row)
 static EnlStatus
 check_columns (const EnlTable *table, EnlError *err)
 {
-  static const char *const needed[] = {"id",       "severity", "bases", "solvents",
-                                       "carbonyl", "text",     "source"};
+  static const char *const needed[] = {"id",       "severity", "bases",  "solvents",
+                                       "carbonyl", "text",     "source", "prevents_above"};
 
   return enl_table_require (table, needed, ENL_COUNT (needed), "caution table", err);
 }

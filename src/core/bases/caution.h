@@ -6,10 +6,12 @@
 #include "core/bases/base.h"
 
 typedef struct {
-  const char *id;     /* "H05", of the practice rules */
-  const char *text;   /* one sentence */
-  const char *source; /* "common practice" where there is no single one */
-  int severity;       /* 1 care, 2 serious, 3 extreme */
+  const char *id;        /* "H05", of the practice rules */
+  const char *text;      /* one sentence */
+  const char *source;    /* "common practice" where there is no single one */
+  int severity;          /* 1 care, 2 serious, 3 extreme */
+  double prevents_above; /* happens instead of deprotonation where the site's pKa is larger; NAN:
+                            never */
 } EnlCaution;
 
 typedef struct EnlCautionTable EnlCautionTable;

@@ -62,6 +62,7 @@ enl_verdict_text (EnlVerdict verdict)
       [ENL_VERDICT_PARTIAL] = "partial",
       [ENL_VERDICT_TRACE] = "trace only",
       [ENL_VERDICT_NO] = "no",
+      [ENL_VERDICT_REACTS] = "reacts otherwise",
       [ENL_VERDICT_NO_NUMBER] = "no usable number",
       [ENL_VERDICT_OFF_SCALE] = "not on this scale",
       [ENL_VERDICT_SOLVENT] = "attacks the solvent",
@@ -157,10 +158,10 @@ static EnlStatus
 judge_equilibrium (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err)
 {
   double ionised, unused;
-  double doubt =
-      Z90 * hypot (c->estimate[c->target].sigma, isnan (base->sigma[c->conditions->solvent])
-                                                     ? 0.0
-                                                     : base->sigma[c->conditions->solvent]);
+  double doubt = Z90 * hypot (c->estimate[c->target].sigma,
+                              out->levelled || isnan (base->sigma[c->conditions->solvent])
+                                  ? 0.0
+                                  : base->sigma[c->conditions->solvent]);
   EnlStatus status = solve_at (c, out->pkah, &out->conversion, &ionised, err);
 
   if (status == ENL_OK)
@@ -246,7 +247,7 @@ tail_of_partial (const Comparing *c, const EnlBase *base, const EnlCandidate *ou
   if (out->selectivity < 0.5 && c->target != c->most_acidic)
     return "; another hydrogen takes the base first";
   if (base->irreversible)
-    return "; add more base";
+    return out->conversion < COMPLETE_FROM ? "; add more base" : "";
   if (c->sites->site[c->target].alpha_carbonyl && out->conversion > 0.05)
     return "; anion and carbonyl compound side by side can condense";
   return "";
@@ -339,6 +340,21 @@ by_merit (const void *left, const void *right, void *data)
   return a->base < b->base ? -1 : a->base > b->base;
 }
 
+/* A caution that comes true before the hydrogen is taken overrules the equilibrium. */
+static void
+apply_cautions (const Comparing *c, EnlCandidate *out)
+{
+  for (uint32_t i = 0; i < out->n_cautions; i++) {
+    if (!(c->estimate[c->target].value > out->caution[i]->prevents_above) ||
+        out->verdict > ENL_VERDICT_REACTS)
+      continue;
+    out->verdict = ENL_VERDICT_REACTS;
+    out->conversion = out->low = out->high = out->selectivity = NAN;
+    g_free (out->reason);
+    out->reason = g_strdup (out->caution[i]->text);
+  }
+}
+
 /* ---- the comparison ---- */
 
 static EnlStatus
@@ -355,6 +371,7 @@ fill (const Comparing *c, EnlComparison *comparison, EnlError *err)
     candidate->caution =
         enl_caution_collect (c->cautions, base, c->conditions->solvent,
                              c->sites->site[c->target].alpha_carbonyl, &candidate->n_cautions);
+    apply_cautions (c, candidate);
   }
   return ENL_OK;
 }

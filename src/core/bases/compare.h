@@ -29,6 +29,7 @@ typedef enum {
   ENL_VERDICT_PARTIAL,   /* 10 % or more: both species side by side */
   ENL_VERDICT_TRACE,     /* 0.1 % or more */
   ENL_VERDICT_NO,        /* less, or another site takes the base */
+  ENL_VERDICT_REACTS,    /* does something else first (adds to C=O ...), see the reason */
   ENL_VERDICT_NO_NUMBER, /* its number does not describe what happens (carbonate ...) */
   ENL_VERDICT_OFF_SCALE, /* no value on the footing in use: never a borrowed number */
   ENL_VERDICT_SOLVENT,   /* base and solvent destroy each other */
