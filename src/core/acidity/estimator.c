@@ -4,6 +4,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/acidity/part.h"
 #include "core/acidity/predict.h"
 
 /* Half width of the 90 % interval of a normal law in standard deviations. */
@@ -225,28 +226,54 @@ move_to_thf (const EnlSites *sites, EnlEstimate *out)
   }
 }
 
-EnlStatus
-enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
-                   EnlSolvent solvent, EnlEstimate *out, EnlError *err)
+/* The scale of DMSO or water, one fragment. */
+static void
+run_fragment (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
+              EnlSolvent solvent, EnlEstimate *out)
 {
-  Run run = {
-      .estimator = estimator,
-      .mol = mol,
-      .sites = sites,
-      .solvent = solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
-      .out = out,
-  };
+  Run run = {.estimator = estimator, .mol = mol, .sites = sites, .solvent = solvent, .out = out};
   bool seconds = false;
 
-  g_assert (solvent < ENL_N_SOLVENTS);
-  if (enl_molecule_heavy_atoms (mol) > ENL_MAX_HEAVY)
-    return enl_error_set (err, ENL_ERROR_LIMIT, "give a smaller structure",
-                          "more than %d heavy atoms", ENL_MAX_HEAVY);
   for (uint32_t i = 0; i < sites->n_sites; i++)
     seconds |= sites->site[i].second;
   fill_sites (&run, mol, false);
   if (seconds)
     fill_seconds (&run);
+}
+
+/* Each fragment of a salt or mixture by itself. */
+static void
+run_fragments (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
+               EnlSolvent solvent, EnlEstimate *out)
+{
+  g_autofree uint32_t *fragment = g_new (uint32_t, enl_molecule_atoms (mol) + 1);
+  g_autofree EnlEstimate *found = g_new0 (EnlEstimate, sites->n_sites + 1);
+  uint32_t n = enl_molecule_fragments (mol, fragment);
+
+  if (n <= 1) {
+    run_fragment (estimator, mol, sites, solvent, out);
+    return;
+  }
+  for (uint32_t f = 0; f < n; f++) {
+    g_autoptr (EnlPart) part = enl_part_new (mol, sites, fragment, f);
+    if (part->sites.n_sites == 0)
+      continue;
+    run_fragment (estimator, part->mol, &part->sites, solvent, found);
+    for (uint32_t i = 0; i < part->sites.n_sites; i++)
+      out[part->site_of[i]] = found[i];
+  }
+}
+
+EnlStatus
+enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
+                   EnlSolvent solvent, EnlEstimate *out, EnlError *err)
+{
+  g_assert (solvent < ENL_N_SOLVENTS);
+  if (enl_molecule_heavy_atoms (mol) > ENL_MAX_HEAVY)
+    return enl_error_set (err, ENL_ERROR_LIMIT, "give a smaller structure",
+                          "more than %d heavy atoms", ENL_MAX_HEAVY);
+  run_fragments (estimator, mol, sites, solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
+                 out);
   if (solvent == ENL_SOLVENT_THF)
     move_to_thf (sites, out);
   return ENL_OK;

@@ -19,7 +19,8 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlEstimator, enl_estimator_free)
 
 /* Estimates every site of a molecule in one solvent; `out` has sites->n_sites places. A site that
  * the table holds gets the measured value. In THF the DMSO-based value is given with a wider
- * interval and a remark that names the footing. Thread-safe: touches no shared state. */
+ * interval and a remark that names the footing.
+ * Each fragment of a salt or mixture is taken by itself. Thread-safe: touches no shared state. */
 EnlStatus enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol,
                              const EnlSites *sites, EnlSolvent solvent, EnlEstimate *out,
                              EnlError *err) ENL_MUST_USE;

@@ -176,6 +176,32 @@ START_TEST (strangers_are_told)
 }
 END_TEST
 
+/* Salts, solvates and alike molecules side by side: each fragment by itself. */
+static const struct {
+  const char *label, *alone, *together;
+} salt_case[] = {
+    {"sodium acetate", "[CH3:1]C(=O)[O-]", "[CH3:1]C(=O)[O-].[Na+]"},
+    {"a solvate", "CC(=O)[CH2:1]C(=O)OCC", "ClCCl.CC(=O)[CH2:1]C(=O)OCC.O"},
+    {"potassium salt written first", "CC(=O)[CH2:1]c1ccc(C(=O)[O-])cc1",
+     "[K+].CC(=O)[CH2:1]c1ccc(C(=O)[O-])cc1"},
+};
+
+START_TEST (a_counter_ion_changes_nothing)
+{
+  for (int solvent = 0; solvent < ENL_N_SOLVENTS; solvent++) {
+    Result a = run (salt_case[_i].alone, (EnlSolvent)solvent);
+    Result b = run (salt_case[_i].together, (EnlSolvent)solvent);
+
+    ck_assert_msg (fabs (marked (&a)->value - marked (&b)->value) < 1e-9, "%s",
+                   salt_case[_i].label);
+    ck_assert_double_eq_tol (marked (&a)->high, marked (&b)->high, 1e-9);
+    ck_assert_int_eq (marked (&a)->basis, marked (&b)->basis);
+    clear (&a);
+    clear (&b);
+  }
+}
+END_TEST
+
 START_TEST (same_answer_for_every_spelling)
 {
   Result a = run ("O=C1CC(C)(C)c2cc(OC)ccc2[CH2:1]1", ENL_SOLVENT_DMSO);
@@ -218,6 +244,7 @@ estimator_suite (void)
   tcase_add_test (tc, thf_stands_on_dmso);
   tcase_add_test (tc, second_sites_are_those_of_the_anion);
   tcase_add_loop_test (tc, strangers_are_told, 0, (int)ENL_COUNT (strange));
+  tcase_add_loop_test (tc, a_counter_ion_changes_nothing, 0, (int)ENL_COUNT (salt_case));
   tcase_add_test (tc, same_answer_for_every_spelling);
   tcase_add_test (tc, ranking_is_by_value_then_hydrogens);
   suite_add_tcase (suite, tc);
