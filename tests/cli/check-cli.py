@@ -75,11 +75,15 @@ def check_forms():
     carbanion = [r for r in listed if '[CH-]' in r['smiles']]
     enolates = [r for r in listed if '[O-]' in r['smiles']]
     expect('one carbanion form', len(carbanion) == 1, rows)
-    weights = [float(r['weight']) / (2 if 'x 2' in r['form'] else 1) for r in enolates]
-    copies = sum(2 if 'x 2' in r['form'] else 1 for r in enolates)
-    expect('two enolate forms', copies == 2, rows)
+    weights = [float(r['weight']) for r in enolates]
+    expect('two enolate forms', len(enolates) == 2, rows)
     expect('equal and above the carbanion', max(weights) - min(weights) < 1e-6 and
            min(weights) > float(carbanion[0]['weight']), rows)
+    _, typed = tsv('forms', 'CC(=O)[CH-]C(C)=O')
+    expect('the anion as typed has the same forms', [(r['smiles'], r['weight']) for r in typed] ==
+           [(r['smiles'], r['weight']) for r in rows], typed)
+    _, nitro = tsv('forms', 'C[N+](=O)[O-]')
+    expect('a nitro group is no anion', nitro[0]['smiles'].startswith('[CH2-]'), nitro)
     expect('weights add up', abs(sum(float(r['weight']) for r in listed) - 1) < 1e-3, rows)
 
 

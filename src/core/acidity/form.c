@@ -253,6 +253,20 @@ fill_from_states (EnlForms *forms, const double *charge, const EnlFormNetwork *n
   enl_form_states_clear (&states);
 }
 
+/* Forms, weights and hybrid of forms->anion, whose charge sits on forms->site_atom. */
+static void
+fill (EnlForms *forms)
+{
+  g_autoptr (EnlPi) pi = enl_pi_new (forms->anion);
+  g_autoptr (GPtrArray) networks = enl_form_networks (forms->anion, forms->site_atom);
+
+  if (networks->len == 0)
+    fill_single (forms, enl_pi_charge (pi));
+  else
+    fill_from_states (forms, enl_pi_charge (pi), networks->pdata[0]);
+  forms->note = enl_form_note (forms);
+}
+
 EnlStatus
 enl_forms_of_site (const EnlMolecule *mol, uint32_t atom, EnlForms **out, EnlError *err)
 {
@@ -271,13 +285,26 @@ enl_forms_of_site (const EnlMolecule *mol, uint32_t atom, EnlForms **out, EnlErr
   EnlForms *forms = g_new0 (EnlForms, 1);
   forms->site_atom = atom;
   forms->anion = make_anion (mol, &forms->site_atom);
-  g_autoptr (EnlPi) pi = enl_pi_new (forms->anion);
-  g_autoptr (GPtrArray) networks = enl_form_networks (forms->anion, forms->site_atom);
-  if (networks->len == 0)
-    fill_single (forms, enl_pi_charge (pi));
-  else
-    fill_from_states (forms, enl_pi_charge (pi), networks->pdata[0]);
-  forms->note = enl_form_note (forms);
+  fill (forms);
+  *out = forms;
+  return ENL_OK;
+}
+
+EnlStatus
+enl_forms_of_anion (const EnlMolecule *anion, uint32_t atom, EnlForms **out, EnlError *err)
+{
+  EnlStatus status = check_size (anion, err);
+
+  *out = NULL;
+  if (status != ENL_OK)
+    return status;
+  if (atom >= enl_molecule_atoms (anion) || enl_molecule_atom (anion, atom)->charge >= 0)
+    return enl_error_set (err, ENL_ERROR_RANGE, "name an atom drawn with a negative charge",
+                          "atom %u carries no negative charge", atom + 1);
+  EnlForms *forms = g_new0 (EnlForms, 1);
+  forms->site_atom = atom;
+  forms->anion = enl_molecule_copy (anion);
+  fill (forms);
   *out = forms;
   return ENL_OK;
 }
@@ -335,6 +362,13 @@ enl_forms_molecule (const EnlForms *forms, uint32_t form)
 {
   g_assert (form < forms->n_forms);
   return make_molecule (forms->anion, &forms->form[form]);
+}
+
+EnlMolecule *
+enl_forms_molecule_of_all (const EnlForms *forms, uint32_t index)
+{
+  g_assert (index < forms->n_all);
+  return make_molecule (forms->anion, &forms->all[index]);
 }
 
 /* Adds every combination of the forms so far with the states of one more network. */

@@ -48,6 +48,10 @@ typedef struct {
  * meets: a nitro or carboxylate group apart from it stays as drawn. Caller: enl_forms_free. */
 EnlStatus enl_forms_of_site (const EnlMolecule *mol, uint32_t atom, EnlForms **out,
                              EnlError *err) ENL_MUST_USE;
+/* The same for an anion as it stands, whose charge is drawn on `atom` (ENL_ERROR_RANGE otherwise).
+ * Form 0 is the given drawing. */
+EnlStatus enl_forms_of_anion (const EnlMolecule *anion, uint32_t atom, EnlForms **out,
+                              EnlError *err) ENL_MUST_USE;
 void enl_forms_free (EnlForms *forms);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlForms, enl_forms_free)
 
@@ -60,3 +64,5 @@ EnlStatus enl_forms_enumerate (const EnlMolecule *anion, GPtrArray **out, bool *
 
 /* Structure of one form, finished, same atom order as the anion. Caller frees. */
 EnlMolecule *enl_forms_molecule (const EnlForms *forms, uint32_t form) ENL_MUST_USE;
+/* The same for one of `all`. */
+EnlMolecule *enl_forms_molecule_of_all (const EnlForms *forms, uint32_t index) ENL_MUST_USE;
