@@ -550,6 +550,26 @@ START_TEST (least_squares_is_optimal)
 }
 END_TEST
 
+START_TEST (a_typed_anion_has_the_forms_of_its_acid)
+{
+  const char anion[] = "CC(=O)[CH-]C(C)=O";
+  EnlMolecule *mol = NULL;
+  EnlForms *forms = NULL;
+  EnlError err;
+
+  ck_assert_int_eq (enl_smiles_parse (anion, strlen (anion), &mol, &err), ENL_OK);
+  ck_assert_int_eq (enl_forms_of_anion (mol, 0, &forms, &err), ENL_ERROR_RANGE);
+  ck_assert_ptr_null (forms);
+  ck_assert_int_eq (enl_forms_of_anion (mol, 99, &forms, &err), ENL_ERROR_RANGE);
+  ck_assert_int_eq (enl_forms_of_anion (mol, 3, &forms, &err), ENL_OK);
+  ck_assert_uint_eq (forms->n_all, 3);
+  ck_assert_double_eq_tol (forms->all[1].weight, forms->all[2].weight, 1e-9);
+  ck_assert_double_gt (forms->all[1].weight, forms->all[0].weight);
+  enl_forms_free (forms);
+  enl_molecule_free (mol);
+}
+END_TEST
+
 static Suite *
 form_suite (void)
 {
@@ -570,6 +590,7 @@ form_suite (void)
   tcase_add_test (tc, enumerate_takes_every_system);
   tcase_add_test (tc, least_squares);
   tcase_add_loop_test (tc, least_squares_is_optimal, 0, 20);
+  tcase_add_test (tc, a_typed_anion_has_the_forms_of_its_acid);
   suite_add_tcase (suite, tc);
   return suite;
 }
