@@ -39,9 +39,10 @@ static const char *
 verdict_shape (EnlVerdict verdict)
 {
   static const char *const shape[ENL_N_VERDICTS] = {
-      [ENL_VERDICT_COMPLETE] = "●",  [ENL_VERDICT_LARGELY] = "◕",   [ENL_VERDICT_PARTIAL] = "◑",
-      [ENL_VERDICT_TRACE] = "◔",     [ENL_VERDICT_NO] = "○",        [ENL_VERDICT_REACTS] = "↯",
-      [ENL_VERDICT_NO_NUMBER] = "?", [ENL_VERDICT_OFF_SCALE] = "–", [ENL_VERDICT_SOLVENT] = "×",
+      [ENL_VERDICT_COMPLETE] = "●", [ENL_VERDICT_SHARED] = "◒",    [ENL_VERDICT_LARGELY] = "◕",
+      [ENL_VERDICT_PARTIAL] = "◑",  [ENL_VERDICT_TRACE] = "◔",     [ENL_VERDICT_NO] = "○",
+      [ENL_VERDICT_REACTS] = "↯",   [ENL_VERDICT_NO_NUMBER] = "?", [ENL_VERDICT_OFF_SCALE] = "–",
+      [ENL_VERDICT_SOLVENT] = "×",
   };
 
   return shape[verdict];

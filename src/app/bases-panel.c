@@ -10,6 +10,8 @@ struct _EnlBasesPanel {
   GListStore *items;
   GtkSingleSelection *selection;
   gboolean filling;
+  guint pending; /* timeout that fills the list, 0: none */
+  guint reveal;  /* timeout that scrolls to the selected row, 0: none */
 
   GtkWidget *box, *conditions, *details_scroller;
   GtkLabel *heading, *details, *deferral;
@@ -84,6 +86,26 @@ show_details (EnlBasesPanel *self)
   gtk_label_set_text (self->details, text);
 }
 
+/* The list has rows of one height; GTK 4.8 cannot scroll to one of them by itself. */
+static gboolean
+reveal_row (gpointer data)
+{
+  EnlBasesPanel *self = data;
+  GtkAdjustment *place = gtk_scrollable_get_vadjustment (GTK_SCROLLABLE (self->view));
+  guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items));
+  guint row = gtk_single_selection_get_selected (self->selection);
+
+  self->reveal = 0;
+  if (row < n) {
+    double height = gtk_adjustment_get_upper (place) / n;
+    gtk_adjustment_clamp_page (place, row * height, (row + 1) * height);
+  }
+  return G_SOURCE_REMOVE;
+}
+
+/* After layout: the rows have no place before. */
+#define REVEAL_MS 80
+
 static void
 select_wanted (EnlBasesPanel *self)
 {
@@ -97,6 +119,8 @@ select_wanted (EnlBasesPanel *self)
       found = i;
   }
   gtk_single_selection_set_selected (self->selection, found);
+  g_clear_handle_id (&self->reveal, g_source_remove);
+  self->reveal = g_timeout_add (REVEAL_MS, reveal_row, self);
 }
 
 static void
@@ -152,13 +176,33 @@ refresh (EnlBasesPanel *self)
   show_details (self);
 }
 
+/* While a structure is typed every letter changes the selection: the list follows when it rests. */
+#define REST_MS 60
+
+static gboolean
+on_rest (gpointer data)
+{
+  EnlBasesPanel *self = data;
+
+  self->pending = 0;
+  refresh (self);
+  return G_SOURCE_REMOVE;
+}
+
+static void
+queue_refresh (EnlBasesPanel *self)
+{
+  g_clear_handle_id (&self->pending, g_source_remove);
+  self->pending = g_timeout_add (REST_MS, on_rest, self);
+}
+
 /* ---- events ---- */
 
 static void
 on_session_changed (EnlSession *session, EnlBasesPanel *self)
 {
   (void)session;
-  refresh (self);
+  queue_refresh (self);
 }
 
 static void
@@ -195,7 +239,7 @@ on_selection_changed (EnlSession *session, EnlBasesPanel *self)
 {
   (void)session;
   if (!self->filling)
-    refresh (self);
+    queue_refresh (self);
 }
 
 /* On the projector the verdicts are what the audience reads. */
@@ -215,6 +259,8 @@ enl_bases_panel_dispose (GObject *object)
 {
   EnlBasesPanel *self = ENL_BASES_PANEL (object);
 
+  g_clear_handle_id (&self->pending, g_source_remove);
+  g_clear_handle_id (&self->reveal, g_source_remove);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   g_clear_object (&self->session);
   g_clear_object (&self->selection);

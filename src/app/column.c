@@ -14,6 +14,7 @@ struct _EnlColumn {
   EnlLook *look;       /* owned */
   uint32_t index;
   gboolean filling; /* the widgets are being set from the session */
+  double low, high; /* axis of the rows shown */
 
   GtkWidget *box;
   GtkEntry *name, *line;
@@ -174,19 +175,18 @@ refresh_sites (EnlColumn *self)
 {
   const EnlAnalysis *a = enl_session_outcome (self->session, self->index).analysis;
   gboolean focused = gtk_widget_get_focus_child (GTK_WIDGET (self->sites)) != NULL;
-  double low, high;
 
   if (focused) /* the row with the keyboard goes away */
     enl_column_focus_picture (self);
   clear_list (self->sites);
   if (!a)
     return;
-  enl_session_range (self->session, &low, &high);
+  enl_session_range (self->session, &self->low, &self->high);
   if (a->sites->no_enol)
     gtk_list_box_append (self->sites, enl_site_reason_row_new (a->sites->no_enol));
   for (uint32_t i = 0; i < a->sites->n_sites; i++)
-    gtk_list_box_append (self->sites,
-                         enl_site_row_new (a, i, low, high, enl_look_theme (self->look)));
+    gtk_list_box_append (
+        self->sites, enl_site_row_new (a, i, self->low, self->high, enl_look_theme (self->look)));
   mark_row (self);
 }
 
@@ -264,11 +264,15 @@ refresh (EnlColumn *self)
 static void
 on_substrate_changed (EnlSession *session, guint index, EnlColumn *self)
 {
-  (void)session;
-  if (index == self->index)
+  double low, high;
+
+  if (index == self->index) {
     refresh (self);
-  else if (index < enl_workset_size (enl_session_set (self->session)))
-    refresh_sites (self); /* the common axis may have moved */
+  } else if (self->index < enl_workset_size (enl_session_set (session))) {
+    enl_session_range (session, &low, &high);
+    if (low != self->low || high != self->high)
+      refresh_sites (self); /* the common axis has moved */
+  }
 }
 
 static void

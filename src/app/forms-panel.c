@@ -10,6 +10,7 @@ struct _EnlFormsPanel {
   GtkWidget parent;
   EnlSession *session; /* owned */
   EnlLook *look;       /* owned */
+  guint pending;       /* timeout that draws the forms, 0: none */
 
   GtkWidget *box;
   GtkLabel *heading;
@@ -54,7 +55,7 @@ show_forms (EnlFormsPanel *self, const EnlAnalysis *a, uint32_t site)
   g_autofree char *heading = g_strdup_printf (
       "Anion forms of site %u, %s", enl_analysis_rank (a, site), a->sites->site[site].position);
   gtk_label_set_text (self->heading, heading);
-  EnlFormsSheet sheet = {.forms = forms, .layout = a->mol, .columns = 4};
+  EnlFormsSheet sheet = {.forms = forms, .layout = a->mol};
   enl_canvas_take_scene (self->canvas, enl_forms_sheet (&sheet, enl_look_theme (self->look)));
   g_autofree char *text = describe (forms);
   enl_canvas_describe (self->canvas, heading, text);
@@ -73,11 +74,25 @@ refresh (EnlFormsPanel *self)
   show_forms (self, enl_session_outcome (self->session, substrate).analysis, site);
 }
 
+/* As for the bases: the forms follow when the typing rests. */
+#define REST_MS 60
+
+static gboolean
+on_rest (gpointer data)
+{
+  EnlFormsPanel *self = data;
+
+  self->pending = 0;
+  refresh (self);
+  return G_SOURCE_REMOVE;
+}
+
 static void
 on_selection_changed (EnlSession *session, EnlFormsPanel *self)
 {
   (void)session;
-  refresh (self);
+  g_clear_handle_id (&self->pending, g_source_remove);
+  self->pending = g_timeout_add (REST_MS, on_rest, self);
 }
 
 static void
@@ -92,6 +107,7 @@ enl_forms_panel_dispose (GObject *object)
 {
   EnlFormsPanel *self = ENL_FORMS_PANEL (object);
 
+  g_clear_handle_id (&self->pending, g_source_remove);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   g_clear_object (&self->session);
   g_clear_object (&self->look);

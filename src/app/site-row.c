@@ -17,7 +17,7 @@ label_new (const char *text, const char *css, float xalign)
 static GtkWidget *
 position_new (const EnlSite *site)
 {
-  g_autofree char *count = g_strdup_printf ("%s, %u H", site->position, site->hydrogens);
+  g_autofree char *count = g_strdup_printf ("%u H, %s", site->hydrogens, site->position);
   GtkWidget *label = label_new (count, "site-position", 0.0f);
 
   gtk_label_set_wrap (GTK_LABEL (label), TRUE);

@@ -30,7 +30,10 @@ short_precedents (const EnlReference *reference, const EnlEstimate *e)
 
   for (uint32_t i = 0; i < MIN (e->n_precedents, 2); i++) {
     const EnlReferenceRow *row = enl_reference_row (reference, e->precedent[i].row);
-    g_string_append_printf (out, "%s%s %.4g", i ? "; " : "", row->name, row->pka);
+    bool same = row->solvent == e->solvent ||
+                (row->solvent == ENL_SOLVENT_DMSO && e->solvent == ENL_SOLVENT_THF);
+    g_string_append_printf (out, "%s%s %.4g%s%s", i ? "; " : "", row->name, row->pka,
+                            same ? "" : " in ", same ? "" : enl_solvent_label (row->solvent));
   }
   return g_string_free (out, FALSE);
 }

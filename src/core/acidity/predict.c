@@ -5,6 +5,7 @@
 #include <string.h>
 
 #include "core/acidity/gaussian.h"
+#include "core/acidity/group.h"
 #include "core/molecule/elements.h"
 
 /* Uncertainty that a new measurement would have by itself: as most rows of the table. */
@@ -21,8 +22,22 @@ struct EnlPredictor {
   EnlModel *model;
   bool site_seen[ENL_N_ELEMENTS]; /* elements of acidic atoms in the table */
   bool seen[ENL_N_ELEMENTS];      /* elements anywhere in its molecules */
+  bool beside[ENL_N_GROUPS];      /* groups next to an acidic carbon of the table */
   uint32_t *compound;             /* first row of the compound of every row */
 };
+
+static void
+note_experience (EnlPredictor *predictor, const EnlReferenceRow *row)
+{
+  uint8_t element = enl_molecule_atom (row->mol, row->site)->element;
+
+  predictor->site_seen[element] = true;
+  for (uint32_t k = 0; k < enl_molecule_atoms (row->mol); k++)
+    predictor->seen[enl_molecule_atom (row->mol, k)->element] = true;
+  for (uint32_t k = 0; element == 6 && k < enl_molecule_degree (row->mol, row->site); k++)
+    predictor->beside[enl_group_of (row->mol, enl_molecule_neighbour (row->mol, row->site, k))] =
+        true;
+}
 
 EnlStatus
 enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, EnlPredictor **out,
@@ -38,12 +53,8 @@ enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, Enl
     return status;
   predictor->compound = g_new (uint32_t, enl_reference_rows (ref) + 1);
   enl_model_compound_folds (ref, predictor->compound);
-  for (uint32_t i = 0; i < enl_reference_rows (ref); i++) {
-    const EnlReferenceRow *row = enl_reference_row (ref, i);
-    predictor->site_seen[enl_molecule_atom (row->mol, row->site)->element] = true;
-    for (uint32_t k = 0; k < enl_molecule_atoms (row->mol); k++)
-      predictor->seen[enl_molecule_atom (row->mol, k)->element] = true;
-  }
+  for (uint32_t i = 0; i < enl_reference_rows (ref); i++)
+    note_experience (predictor, enl_reference_row (ref, i));
   predictor->seen[1] = true;
   *out = g_steal_pointer (&predictor);
   return ENL_OK;
@@ -207,6 +218,12 @@ strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, uint32_t
   }
   if (!predictor->site_seen[enl_molecule_atom (mol, atom)->element])
     return "outside its experience: no hydrogen on this element was measured";
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, atom); k++) {
+    EnlGroup group = enl_group_of (mol, enl_molecule_neighbour (mol, atom, k));
+    if (enl_molecule_atom (mol, atom)->element == 6 && enl_group_is_acceptor (group) &&
+        !predictor->beside[group])
+      return "outside its experience: no hydrogen beside this group was measured";
+  }
   if (left > NOVEL_SHARE)
     return "outside its experience: nothing alike was measured";
   return NULL;

@@ -62,7 +62,7 @@ static const char *
 carbonyl_reason (const EnlCarbonylSides *sides)
 {
   if (sides->bredt)
-    return "the only hydrogen next to C=O sits on a bridgehead (Bredt's rule)";
+    return "hydrogens next to C=O only on bridgeheads (Bredt's rule)";
   if (sides->strain)
     return "the enolate would need C=C inside a three-membered ring";
   if (sides->vinylic)

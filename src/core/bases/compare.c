@@ -17,6 +17,9 @@
  * textbook figure before it is called strong enough: more than the doubt of that figure. */
 #define NOMINAL_MARGIN 5.0
 
+/* An irreversible base stands this far above every site: then it is used up to 1e-10. */
+#define OUT_OF_REACH 25.0
+
 typedef struct {
   const EnlBaseTable *bases;
   const EnlCautionTable *cautions;
@@ -58,6 +61,7 @@ enl_verdict_text (EnlVerdict verdict)
 {
   static const char *const text[ENL_N_VERDICTS] = {
       [ENL_VERDICT_COMPLETE] = "complete",
+      [ENL_VERDICT_SHARED] = "shared with other sites",
       [ENL_VERDICT_LARGELY] = "largely",
       [ENL_VERDICT_PARTIAL] = "partial",
       [ENL_VERDICT_TRACE] = "trace only",
@@ -134,65 +138,80 @@ solvent_ceiling (const EnlBaseTable *bases, EnlSolvent solvent)
 
 /* ---- one base ---- */
 
-static EnlStatus
-solve_at (const Comparing *c, double pkah, double *conversion, double *ionised, EnlError *err)
-{
-  EnlEquilibrium problem = {c->species, c->n_species, c->conditions->concentration,
-                            c->conditions->concentration * c->conditions->equivalents, pkah};
-  EnlComposition *at = g_new (EnlComposition, 1);
-  EnlStatus status = enl_equilibrium_solve (&problem, at, err);
+typedef struct {
+  double conversion; /* fraction of the substrate that has lost the target's hydrogen */
+  double ionised;    /* fraction that has lost any */
+  double level;      /* fraction that has lost as many as the target's own form */
+} Share;
 
-  *conversion = 0.0;
-  *ionised = 0.0;
-  if (status == ENL_OK) {
-    for (uint32_t i = 0; i < c->n_species; i++)
-      if (c->holds_target[i])
-        *conversion += at->fraction[i];
-    *ionised = 1.0 - at->neutral;
+/* Composition with the target's pKa moved by `shift`: against the base and against other sites. */
+static EnlStatus
+solve_at (const Comparing *c, double pkah, double shift, Share *share, EnlError *err)
+{
+  g_autofree EnlSpecies *form = g_memdup2 (c->species, c->n_species * sizeof *c->species);
+  EnlEquilibrium problem = {form, c->n_species, c->conditions->concentration,
+                            c->conditions->concentration * c->conditions->equivalents, pkah};
+  g_autofree EnlComposition *at = g_new (EnlComposition, 1);
+
+  for (uint32_t i = 0; i < c->n_species; i++)
+    if (c->holds_target[i])
+      form[i].pk_sum += shift;
+  EnlStatus status = enl_equilibrium_solve (&problem, at, err);
+  *share = (Share){0};
+  for (uint32_t i = 0; status == ENL_OK && i < c->n_species; i++) {
+    share->conversion += c->holds_target[i] ? at->fraction[i] : 0.0;
+    share->level += form[i].lost >= form[c->target].lost ? at->fraction[i] : 0.0;
+    share->ionised += at->fraction[i];
   }
-  g_free (at);
   return status;
 }
 
-static EnlStatus
-judge_equilibrium (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err)
+static EnlVerdict
+verdict_of (const Share *share)
 {
-  double ionised, unused;
-  double doubt = Z90 * hypot (c->estimate[c->target].sigma,
-                              out->levelled || isnan (base->sigma[c->conditions->solvent])
-                                  ? 0.0
-                                  : base->sigma[c->conditions->solvent]);
-  EnlStatus status = solve_at (c, out->pkah, &out->conversion, &ionised, err);
+  if (share->conversion >= COMPLETE_FROM)
+    return ENL_VERDICT_COMPLETE;
+  if (share->level >= COMPLETE_FROM && share->conversion >= PARTIAL_FROM)
+    return ENL_VERDICT_SHARED;
+  if (share->conversion >= LARGELY_FROM)
+    return ENL_VERDICT_LARGELY;
+  if (share->conversion >= PARTIAL_FROM)
+    return ENL_VERDICT_PARTIAL;
+  return share->conversion >= TRACE_FROM ? ENL_VERDICT_TRACE : ENL_VERDICT_NO;
+}
+
+/* `sigma` is the doubt about the base, one standard deviation. */
+static EnlStatus
+judge_equilibrium (const Comparing *c, double pkah, double sigma, EnlCandidate *out, EnlError *err)
+{
+  double doubt = Z90 * hypot (c->estimate[c->target].sigma, isnan (sigma) ? 0.0 : sigma);
+  Share likely, low, high;
+  EnlStatus status = solve_at (c, pkah, 0.0, &likely, err);
 
   if (status == ENL_OK)
-    status = solve_at (c, out->pkah - doubt, &out->low, &unused, err);
+    status = solve_at (c, pkah, doubt, &low, err);
   if (status == ENL_OK)
-    status = solve_at (c, out->pkah + doubt, &out->high, &unused, err);
+    status = solve_at (c, pkah, -doubt, &high, err);
   if (status != ENL_OK)
     return status;
-  out->selectivity = ionised > 0.0 ? out->conversion / ionised : NAN;
-  out->verdict = out->conversion >= COMPLETE_FROM  ? ENL_VERDICT_COMPLETE
-                 : out->conversion >= LARGELY_FROM ? ENL_VERDICT_LARGELY
-                 : out->conversion >= PARTIAL_FROM ? ENL_VERDICT_PARTIAL
-                 : out->conversion >= TRACE_FROM   ? ENL_VERDICT_TRACE
-                                                   : ENL_VERDICT_NO;
+  out->conversion = likely.conversion;
+  out->low = low.conversion;
+  out->high = high.conversion;
+  out->selectivity = likely.ionised > 0.0 ? likely.conversion / likely.ionised : NAN;
+  out->verdict = verdict_of (&likely);
   return ENL_OK;
 }
 
-/* Stoichiometric: the base is used up by the most acidic hydrogens in turn. */
-static void
-judge_irreversible (const Comparing *c, EnlCandidate *out)
+/* Stoichiometric: as a base that leaves no proton it can reach, with the sites in equilibrium among
+ * themselves. */
+static EnlStatus
+judge_irreversible (const Comparing *c, EnlCandidate *out, EnlError *err)
 {
-  bool in_turn = c->target == c->most_acidic || c->n_before > 0;
-  double left = c->conditions->equivalents - c->n_before;
+  double strongest = c->estimate[c->target].value;
 
-  out->conversion = in_turn ? CLAMP (left, 0.0, 1.0) : 0.0;
-  out->low = out->high = out->conversion;
-  out->selectivity = in_turn ? 1.0 : 0.0;
-  out->verdict = out->conversion >= COMPLETE_FROM  ? ENL_VERDICT_COMPLETE
-                 : out->conversion >= LARGELY_FROM ? ENL_VERDICT_LARGELY
-                 : out->conversion >= PARTIAL_FROM ? ENL_VERDICT_PARTIAL
-                                                   : ENL_VERDICT_NO;
+  for (uint32_t i = 0; i < c->sites->n_sites; i++)
+    strongest = fmax (strongest, c->estimate[i].value);
+  return judge_equilibrium (c, strongest + OUT_OF_REACH, 0.0, out, err);
 }
 
 static bool
@@ -229,12 +248,12 @@ judge (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err
     out->verdict = ENL_VERDICT_NO_NUMBER;
   } else if (base->irreversible && strong_enough (c, base)) {
     set_strength (c, base, out);
-    judge_irreversible (c, out);
+    return judge_irreversible (c, out, err);
   } else if (isnan (base->pkah[solvent])) {
     out->verdict = ENL_VERDICT_OFF_SCALE;
   } else {
     set_strength (c, base, out);
-    return judge_equilibrium (c, base, out, err);
+    return judge_equilibrium (c, out->pkah, out->levelled ? 0.0 : base->sigma[solvent], out, err);
   }
   return ENL_OK;
 }
@@ -244,6 +263,8 @@ judge (const Comparing *c, const EnlBase *base, EnlCandidate *out, EnlError *err
 static const char *
 tail_of_partial (const Comparing *c, const EnlBase *base, const EnlCandidate *out)
 {
+  if (out->verdict == ENL_VERDICT_SHARED)
+    return ", the rest is the anion of other sites; none stays neutral";
   if (out->selectivity < 0.5 && c->target != c->most_acidic)
     return "; another hydrogen takes the base first";
   if (base->irreversible)
@@ -260,15 +281,15 @@ equilibrium_reason (const Comparing *c, const EnlBase *base, const EnlCandidate 
   g_autofree char *gap = isnan (out->gap) ? g_strdup ("stronger by far")
                                           : g_strdup_printf ("gap %+.1f%s", out->gap, level);
 
-  if (base->irreversible)
-    return g_strdup_printf ("%s and the proton does not come back%s; what forms first under mixing "
-                            "need not be the equilibrium anion",
-                            gap, tail_of_partial (c, base, out));
-  if (out->verdict == ENL_VERDICT_COMPLETE)
-    return g_strdup_printf ("%s: the anion forms completely", gap);
   g_autofree char *share = out->conversion < TRACE_FROM
                                ? g_strdup ("less than 0.1 %")
                                : g_strdup_printf ("%.3g %%", 100.0 * out->conversion);
+  if (base->irreversible)
+    return g_strdup_printf ("%s, and the proton does not come back: %s of the anion%s; what forms "
+                            "first under mixing need not be the equilibrium anion",
+                            gap, share, tail_of_partial (c, base, out));
+  if (out->verdict == ENL_VERDICT_COMPLETE)
+    return g_strdup_printf ("%s: the anion forms completely", gap);
   return g_strdup_printf ("%s: %s of the anion at %.3g equivalents%s", gap, share,
                           c->conditions->equivalents, tail_of_partial (c, base, out));
 }

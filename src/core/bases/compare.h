@@ -25,6 +25,7 @@ EnlStatus enl_conditions_check (const EnlConditions *conditions, EnlError *err);
 
 typedef enum {
   ENL_VERDICT_COMPLETE,  /* takes the site off completely (99 % or more) */
+  ENL_VERDICT_SHARED,    /* nothing stays neutral, but other sites have a share of the anion */
   ENL_VERDICT_LARGELY,   /* 90 % or more */
   ENL_VERDICT_PARTIAL,   /* 10 % or more: both species side by side */
   ENL_VERDICT_TRACE,     /* 0.1 % or more */

@@ -188,6 +188,27 @@ START_TEST (a_phenol_eats_the_first_equivalent)
 }
 END_TEST
 
+START_TEST (two_sites_share_what_a_strong_base_takes)
+{
+  EnlSite site[] = {inner_ch2, outer_ch3};
+  EnlEstimate e[] = {published (26.0, 1.0, ENL_SOLVENT_THF),
+                     published (26.5, 1.0, ENL_SOLVENT_THF)};
+  EnlComparison *c = compare (site, e, 2, 0, ENL_SOLVENT_THF, 1.05);
+  const char *const strong[] = {"lda", "nah", "kh"};
+  double share = 1.0 / (1.0 + pow (10.0, -0.5)); /* K = 10^(26.5 - 26.0) between the anions */
+
+  for (size_t i = 0; i < ENL_COUNT (strong); i++) {
+    const EnlCandidate *found = candidate_of (c, strong[i]);
+    ck_assert_int_eq (found->verdict, ENL_VERDICT_SHARED);
+    ck_assert_double_eq_tol (found->conversion, share, 1e-3);
+    ck_assert_double_eq_tol (found->selectivity, share, 1e-3);
+    ck_assert (found->low < 0.4 && found->high > 0.95);
+    ck_assert_ptr_null (strstr (found->reason, "condense"));
+  }
+  enl_comparison_free (c);
+}
+END_TEST
+
 START_TEST (order_is_best_first_mildest_among_equals)
 {
   EnlEstimate e = published (14.2, 0.1, ENL_SOLVENT_DMSO);
@@ -259,6 +280,7 @@ compare_suite (void)
   tcase_add_test (tc, interval_holds_the_value_and_shrinks_with_certainty);
   tcase_add_test (tc, a_weaker_site_of_the_molecule_gets_nothing);
   tcase_add_test (tc, a_phenol_eats_the_first_equivalent);
+  tcase_add_test (tc, two_sites_share_what_a_strong_base_takes);
   tcase_add_test (tc, order_is_best_first_mildest_among_equals);
   tcase_add_test (tc, hydride_in_dmso_carries_its_warning);
   tcase_add_test (tc, every_verdict_has_words_and_every_caution_a_base);
