@@ -11,7 +11,8 @@ struct _EnlBasesPanel {
   GtkSingleSelection *selection;
   gboolean filling;
   guint pending; /* timeout that fills the list, 0: none */
-  guint reveal;  /* timeout that scrolls to the selected row, 0: none */
+  guint reveal;  /* tick that scrolls to the selected row, 0: none */
+  guint frames;  /* since the list was filled */
 
   GtkWidget *box, *conditions, *details_scroller;
   GtkLabel *heading, *details, *deferral;
@@ -88,13 +89,18 @@ show_details (EnlBasesPanel *self)
 
 /* The list has rows of one height; GTK 4.8 cannot scroll to one of them by itself. */
 static gboolean
-reveal_row (gpointer data)
+reveal_row (GtkWidget *view, GdkFrameClock *clock, gpointer data)
 {
   EnlBasesPanel *self = data;
   GtkAdjustment *place = gtk_scrollable_get_vadjustment (GTK_SCROLLABLE (self->view));
   guint n = g_list_model_get_n_items (G_LIST_MODEL (self->items));
   guint row = gtk_single_selection_get_selected (self->selection);
 
+  (void)view;
+  (void)clock;
+  /* A tick comes before the layout of its frame: the rows have their places at the second one. */
+  if (self->frames++ == 0)
+    return G_SOURCE_CONTINUE;
   self->reveal = 0;
   if (row < n) {
     double height = gtk_adjustment_get_upper (place) / n;
@@ -103,8 +109,13 @@ reveal_row (gpointer data)
   return G_SOURCE_REMOVE;
 }
 
-/* After layout: the rows have no place before. */
-#define REVEAL_MS 80
+static void
+stop_revealing (EnlBasesPanel *self)
+{
+  if (self->reveal)
+    gtk_widget_remove_tick_callback (GTK_WIDGET (self->view), self->reveal);
+  self->reveal = 0;
+}
 
 static void
 select_wanted (EnlBasesPanel *self)
@@ -119,8 +130,9 @@ select_wanted (EnlBasesPanel *self)
       found = i;
   }
   gtk_single_selection_set_selected (self->selection, found);
-  g_clear_handle_id (&self->reveal, g_source_remove);
-  self->reveal = g_timeout_add (REVEAL_MS, reveal_row, self);
+  stop_revealing (self);
+  self->frames = 0;
+  self->reveal = gtk_widget_add_tick_callback (GTK_WIDGET (self->view), reveal_row, self, NULL);
 }
 
 static void
@@ -248,6 +260,8 @@ on_look_changed (EnlLook *look, EnlBasesPanel *self)
 {
   gboolean working = enl_look_get (look) != ENL_THEME_PROJECTOR;
 
+  if (!working && (gtk_widget_get_state_flags (self->conditions) & GTK_STATE_FLAG_FOCUS_WITHIN))
+    gtk_window_set_focus (GTK_WINDOW (gtk_widget_get_root (GTK_WIDGET (self))), NULL);
   gtk_widget_set_visible (self->conditions, working);
   gtk_widget_set_visible (self->details_scroller, working);
 }
@@ -260,8 +274,10 @@ enl_bases_panel_dispose (GObject *object)
   EnlBasesPanel *self = ENL_BASES_PANEL (object);
 
   g_clear_handle_id (&self->pending, g_source_remove);
-  g_clear_handle_id (&self->reveal, g_source_remove);
+  if (self->view)
+    stop_revealing (self);
   g_clear_pointer (&self->box, gtk_widget_unparent);
+  self->view = NULL;
   g_clear_object (&self->session);
   g_clear_object (&self->selection);
   G_OBJECT_CLASS (enl_bases_panel_parent_class)->dispose (object);

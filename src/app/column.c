@@ -211,6 +211,15 @@ refresh_name (EnlColumn *self, const EnlSubstrate *s)
   gtk_entry_set_placeholder_text (self->name, a && a->known_as ? a->known_as : numbered);
 }
 
+/* A widget that hides with the keyboard in it would hand it to whatever comes next. */
+static void
+show (EnlColumn *self, GtkWidget *widget, gboolean shown)
+{
+  if (!shown && (gtk_widget_get_state_flags (widget) & GTK_STATE_FLAG_FOCUS_WITHIN))
+    enl_column_focus_picture (self);
+  gtk_widget_set_visible (widget, shown);
+}
+
 /* On the projector the audience reads and nobody types; the buttons stand on the selected column
  * only, so that names have room. */
 static void
@@ -219,10 +228,10 @@ refresh_chrome (EnlColumn *self)
   gboolean typing = enl_look_get (self->look) != ENL_THEME_PROJECTOR;
   gboolean buttons = typing && is_selected (self);
 
-  gtk_widget_set_visible (GTK_WIDGET (self->line), typing);
-  gtk_widget_set_visible (GTK_WIDGET (self->left), buttons);
-  gtk_widget_set_visible (GTK_WIDGET (self->right), buttons);
-  gtk_widget_set_visible (GTK_WIDGET (self->remove), buttons);
+  show (self, GTK_WIDGET (self->line), typing);
+  show (self, GTK_WIDGET (self->left), buttons);
+  show (self, GTK_WIDGET (self->right), buttons);
+  show (self, GTK_WIDGET (self->remove), buttons);
 }
 
 static void
