@@ -5,7 +5,6 @@
 struct _EnlBaseItem {
   GObject parent;
   char *id, *cell[ENL_N_CELLS], *details;
-  EnlVerdict verdict;
 };
 
 G_DEFINE_FINAL_TYPE (EnlBaseItem, enl_base_item, G_TYPE_OBJECT)
@@ -97,7 +96,6 @@ enl_base_item_new (const EnlBase *base, const EnlCandidate *c)
   EnlBaseItem *self = g_object_new (ENL_TYPE_BASE_ITEM, NULL);
 
   self->id = g_strdup (base->id);
-  self->verdict = c->verdict;
   self->cell[ENL_CELL_NAME] = g_strdup (base->name);
   self->cell[ENL_CELL_PKAH] = isnan (c->pkah) ? g_strdup ("") : g_strdup_printf ("%.1f", c->pkah);
   self->cell[ENL_CELL_GAP] = isnan (c->gap) ? g_strdup ("") : g_strdup_printf ("%+.1f", c->gap);
@@ -126,10 +124,4 @@ const char *
 enl_base_item_details (EnlBaseItem *self)
 {
   return self->details;
-}
-
-EnlVerdict
-enl_base_item_verdict (EnlBaseItem *self)
-{
-  return self->verdict;
 }

@@ -21,4 +21,3 @@ const char *enl_base_item_id (EnlBaseItem *item);
 const char *enl_base_item_cell (EnlBaseItem *item, EnlBaseCell cell);
 /* Cautions and notes, a line each; "" for none. */
 const char *enl_base_item_details (EnlBaseItem *item);
-EnlVerdict enl_base_item_verdict (EnlBaseItem *item);

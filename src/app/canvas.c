@@ -170,12 +170,6 @@ enl_canvas_init (EnlCanvas *self)
   gtk_widget_add_controller (GTK_WIDGET (self), motion);
 }
 
-GtkWidget *
-enl_canvas_new (void)
-{
-  return g_object_new (ENL_TYPE_CANVAS, NULL);
-}
-
 void
 enl_canvas_take_scene (EnlCanvas *self, EnlScene *scene)
 {
@@ -186,12 +180,6 @@ enl_canvas_take_scene (EnlCanvas *self, EnlScene *scene)
     gtk_widget_queue_draw (GTK_WIDGET (self));
   else
     gtk_widget_queue_resize (GTK_WIDGET (self));
-}
-
-const EnlScene *
-enl_canvas_scene (EnlCanvas *self)
-{
-  return self->scene;
 }
 
 void

@@ -10,11 +10,8 @@
 #define ENL_TYPE_CANVAS (enl_canvas_get_type ())
 G_DECLARE_FINAL_TYPE (EnlCanvas, enl_canvas, ENL, CANVAS, GtkWidget)
 
-GtkWidget *enl_canvas_new (void);
-
 /* Takes the scene (NULL: empty). */
 void enl_canvas_take_scene (EnlCanvas *canvas, EnlScene *scene);
-const EnlScene *enl_canvas_scene (EnlCanvas *canvas);
 
 /* True: the scene is scaled to the widget, up to `largest` times its size. False: the widget asks
  * for the scene's own size, for use in a scrolled window. Default: fit, 1.4. */

@@ -3,6 +3,7 @@
 
 #include "app/window-private.h"
 #include "core/notation/molfile.h"
+#include "core/notation/read.h"
 
 static void
 tell_error (EnlWindow *self, const char *path, const EnlError *err)
@@ -19,17 +20,18 @@ tell_error (EnlWindow *self, const char *path, const EnlError *err)
 /* One structure a line with an optional name, or the records of an SDF: each becomes a substrate.
  */
 static void
-add_lines (EnlWorkset *set, const char *text)
+add_lines (const EnlNames *names, EnlWorkset *set, const char *text)
 {
   g_auto (GStrv) line = g_strsplit (text, "\n", -1);
 
   for (char **l = line; *l; l++) {
-    char *start = g_strstrip (*l), *end = start + strcspn (start, " \t");
-    if (!*start || *start == '#')
+    EnlListLine part;
+    if (**l == '#' || !enl_read_list_line (names, *l, strlen (*l), &part))
       continue;
-    g_autofree char *name = g_strdup (*end ? end + 1 : "");
-    *end = '\0';
-    if (enl_workset_insert (set, enl_workset_size (set), g_strstrip (name), start, NULL) != ENL_OK)
+    bool named = part.name >= part.end;
+    g_autofree char *name = g_strndup (*l + part.name, named ? part.name_end - part.name : 0);
+    g_autofree char *structure = g_strndup (*l + part.start, part.end - part.start);
+    if (enl_workset_insert (set, enl_workset_size (set), name, structure, NULL) != ENL_OK)
       return;
   }
 }
@@ -70,7 +72,7 @@ open_structures (EnlWindow *self, const char *path)
   if (strstr (text, "M  END"))
     add_records (found, text, size);
   else
-    add_lines (found, text);
+    add_lines (enl_session_knowledge (self->session)->names, found, text);
   for (uint32_t i = 0; i < enl_workset_size (found); i++) {
     const EnlSubstrate *s = enl_workset_get (found, i);
     if (enl_session_add (self->session, s->name, s->text, &err) != ENL_OK) {

@@ -99,32 +99,15 @@ read_one (Walk *walk, const char *name, bool own_name, const char *text, size_t 
 
 /* ---- lists ---- */
 
-/* False for a blank line. "CC=O ethanal": the structure ends at the first white space. A whole line
- * that is a known name
- * ("ethyl acetoacetate") is that name. */
 static bool
 read_line (Walk *walk, const char *line, size_t size, size_t number)
 {
-  while (size && g_ascii_isspace (line[size - 1]))
-    size--;
-  size_t lead = 0;
-  while (lead < size && g_ascii_isspace (line[lead]))
-    lead++;
-  if (lead == size)
+  EnlListLine part;
+
+  if (!enl_read_list_line (walk->names, line, size, &part))
     return false;
-  size_t end = lead;
-  while (end < size && !g_ascii_isspace (line[end]))
-    end++;
-  size_t rest = end;
-  while (rest < size && g_ascii_isspace (line[rest]))
-    rest++;
-  bool whole =
-      rest >= size || (walk->names && enl_names_find (walk->names, line + lead, size - lead));
-  if (whole)
-    end = size;
-  g_autofree char *name =
-      whole ? g_strndup (line + lead, size - lead) : g_strndup (line + rest, size - rest);
-  read_one (walk, name, false, line, end, number);
+  g_autofree char *name = g_strndup (line + part.name, part.name_end - part.name);
+  read_one (walk, name, false, line, part.end, number);
   return true;
 }
 

@@ -324,3 +324,27 @@ enl_read_structure (const EnlNames *names, const char *text, size_t size, EnlMol
   }
   return read_trimmed (names, &in, out, notation, err);
 }
+
+bool
+enl_read_list_line (const EnlNames *names, const char *line, size_t size, EnlListLine *out)
+{
+  size_t start = 0;
+
+  while (size && g_ascii_isspace (line[size - 1]))
+    size--;
+  while (start < size && g_ascii_isspace (line[start]))
+    start++;
+  if (start == size)
+    return false;
+  size_t end = start;
+  while (end < size && !g_ascii_isspace (line[end]))
+    end++;
+  size_t rest = end;
+  while (rest < size && g_ascii_isspace (line[rest]))
+    rest++;
+  if (rest >= size || (names && enl_names_find (names, line + start, size - start)))
+    *out = (EnlListLine){start, size, start, size};
+  else
+    *out = (EnlListLine){start, end, rest, size};
+  return true;
+}

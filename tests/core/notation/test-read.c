@@ -127,6 +127,32 @@ START_TEST (noise_is_refused_quickly)
 }
 END_TEST
 
+static const struct {
+  const char *line, *structure, *name; /* NULL: blank */
+} line_case[] = {
+    {"CC=O ethanal", "CC=O", "ethanal"},
+    {"  CC=O \t two words \r", "CC=O", "two words"},
+    {"CC#N", "CC#N", "CC#N"},
+    {"ethyl acetoacetate", "ethyl acetoacetate", "ethyl acetoacetate"},
+    {" \t\r", NULL, NULL},
+};
+
+START_TEST (list_lines_are_split)
+{
+  const char *line = line_case[_i].line;
+  EnlListLine part;
+
+  ck_assert_int_eq (enl_read_list_line (names, line, strlen (line), &part),
+                    line_case[_i].structure != NULL);
+  if (!line_case[_i].structure)
+    return;
+  g_autofree char *structure = g_strndup (line + part.start, part.end - part.start);
+  g_autofree char *name = g_strndup (line + part.name, part.name_end - part.name);
+  ck_assert_str_eq (structure, line_case[_i].structure);
+  ck_assert_str_eq (name, line_case[_i].name);
+}
+END_TEST
+
 static Suite *
 read_suite (void)
 {
@@ -139,6 +165,7 @@ read_suite (void)
   tcase_add_test (tc, positions_of_atoms_are_those_of_the_text);
   tcase_add_test (tc, names_are_optional);
   tcase_add_test (tc, noise_is_refused_quickly);
+  tcase_add_loop_test (tc, list_lines_are_split, 0, (int)ENL_COUNT (line_case));
   suite_add_tcase (suite, tc);
   return suite;
 }
