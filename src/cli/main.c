@@ -16,7 +16,7 @@ static const EnlVerb verb[] = {
     {"figure", "Writes an annotated picture.", "sveowdma", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",
      true, enl_verb_molecule},
-    {"validate", "Left-out errors of the estimator, class by class.", "fg", false,
+    {"validate", "Left-out errors of the estimator, class by class.", "fgkFPRpwdm", false,
      enl_verb_validate},
 };
 

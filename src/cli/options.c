@@ -8,7 +8,8 @@
 
 typedef struct {
   char letter;
-  const char *name, *value, *help;
+  const char *name, *value; /* value NULL: a switch */
+  const char *help;
 } Option;
 
 static const Option option[] = {
@@ -24,6 +25,11 @@ static const Option option[] = {
     {'d', "--dpi", "D", "resolution of a .png (default 150)"},
     {'m', "--theme", "NAME", "light, dark, print or projector (default print)"},
     {'g', "--fold", "compound|cluster", "what is left out together (default compound)"},
+    {'k', "--ranking", NULL, "how many pairs of acids stand in the right order"},
+    {'F', "--families", NULL, "the same for every family of compounds"},
+    {'P', "--pairs", NULL, "pairs that stand in the wrong order"},
+    {'R', "--rows", NULL, "every row of the table, largest standardised residual first"},
+    {'p', "--plot", "FILE", "write the reliability picture: ends in .png, .svg or .pdf"},
 };
 
 static int wrong_use (const EnlVerb *verb, const char *format, ...) G_GNUC_PRINTF (2, 3);
@@ -48,7 +54,8 @@ print_help (const EnlVerb *verb)
           verb->summary);
   for (size_t i = 0; i < ENL_COUNT (option); i++)
     if (strchr (verb->options, option[i].letter)) {
-      g_autofree char *left = g_strdup_printf ("%s %s", option[i].name, option[i].value);
+      g_autofree char *left =
+          g_strjoin (option[i].value ? " " : NULL, option[i].name, option[i].value, NULL);
       printf ("  %-26s %s\n", left, option[i].help);
     }
   printf ("  %-26s %s\n", "--help", "this text");
@@ -111,6 +118,9 @@ take_value (char letter, const char *text, EnlOptions *out)
     return take_double (text, &out->width_mm) && out->width_mm > 0.0;
   case 'd':
     return take_double (text, &out->dpi) && out->dpi > 0.0;
+  case 'p':
+    out->plot = text;
+    return true;
   case 'v':
     out->view = text;
     return true;
@@ -124,6 +134,19 @@ take_value (char letter, const char *text, EnlOptions *out)
     out->fold = text;
     return true;
   }
+}
+
+static void
+take_switch (char letter, EnlOptions *out)
+{
+  static const char listing[] = {[ENL_LISTING_RANKING] = 'k',
+                                 [ENL_LISTING_FAMILIES] = 'F',
+                                 [ENL_LISTING_PAIRS] = 'P',
+                                 [ENL_LISTING_ROWS] = 'R'};
+
+  for (size_t i = 0; i < ENL_COUNT (listing); i++)
+    if (listing[i] == letter)
+      out->listing = (EnlListing)i;
 }
 
 static const Option *
@@ -145,6 +168,14 @@ parse_option (const EnlVerb *verb, int argc, char **argv, int *index, EnlOptions
 
   if (!found)
     return wrong_use (verb, "no option '%.*s'", (int)length, word);
+  if (!found->value && equals)
+    return wrong_use (verb, "%s takes no value", found->name);
+  if (!found->value) {
+    if (out->listing != ENL_LISTING_USUAL)
+      return wrong_use (verb, "one list at a time: %s is one too many", found->name);
+    take_switch (found->letter, out);
+    return -1;
+  }
   if (!equals && *index + 1 >= argc)
     return wrong_use (verb, "%s needs a value (%s)", found->name, found->value);
   const char *value = equals ? equals + 1 : argv[++*index];

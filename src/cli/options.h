@@ -4,11 +4,21 @@
 #include "cli/output.h"
 #include "core/bases/compare.h"
 
+/* What validate prints. */
+typedef enum {
+  ENL_LISTING_USUAL,
+  ENL_LISTING_RANKING,
+  ENL_LISTING_FAMILIES,
+  ENL_LISTING_PAIRS,
+  ENL_LISTING_ROWS
+} EnlListing;
+
 typedef struct {
   EnlFormat format;
   EnlConditions conditions;
   uint32_t atom; /* 1-based position in the input, 0: the most acidic C-H */
-  const char *view, *out, *theme, *fold;
+  const char *view, *out, *theme, *fold, *plot;
+  EnlListing listing;
   double width_mm, dpi;
   char **input; /* NULL-terminated */
 } EnlOptions;

@@ -132,28 +132,27 @@ compare_members (const void *a, const void *b)
   return (x->row > y->row) - (x->row < y->row);
 }
 
-/* One fold: its block of the inverse, inverted, is the covariance of its observations given all
- * the others; times alpha it is their error. */
-static void
-leave_out (const double *inverse, const double *alpha, const Member *member, uint32_t m,
-           double *error, double *variance)
+/* The block of the inverse, inverted, is the covariance of these observations given all the others;
+ * times alpha it is their error. */
+void
+enl_gaussian_leave_out (const double *inverse, const double *alpha, const uint32_t *row, uint32_t m,
+                        double *error, double *variance)
 {
   g_autofree double *block = g_new (double, ENL_PACKED (m, 0) + 1);
   g_autofree double *part = g_new (double, m + 1);
-  g_autofree double *out = g_new (double, m + 1);
 
   for (uint32_t i = 0; i < m; i++) {
-    part[i] = alpha[member[i].row];
+    part[i] = alpha[row[i]];
     for (uint32_t j = 0; j <= i; j++)
-      block[ENL_PACKED (i, j)] = inverse[ENL_PACKED (member[i].row, member[j].row)];
+      block[ENL_PACKED (i, j)] = inverse[ENL_PACKED (MAX (row[i], row[j]), MIN (row[i], row[j]))];
   }
   EnlStatus status = enl_gaussian_factor (block, m, NULL);
   g_assert (status == ENL_OK); /* a principal block of a positive definite matrix */
   g_autofree double *covariance = enl_gaussian_inverse (block, m);
-  enl_gaussian_multiply (covariance, m, part, out);
+  enl_gaussian_multiply (covariance, m, part, error);
   for (uint32_t i = 0; i < m; i++) {
-    error[member[i].row] = -out[i];
-    variance[member[i].row] = covariance[ENL_PACKED (i, i)];
+    error[i] = -error[i];
+    variance[i] = covariance[ENL_PACKED (i, i)];
   }
 }
 
@@ -162,13 +161,22 @@ enl_gaussian_left_out (const double *inverse, const double *alpha, uint32_t n, c
                        double *error, double *variance)
 {
   g_autofree Member *member = g_new (Member, n + 1);
+  g_autofree uint32_t *row = g_new (uint32_t, n + 1);
+  g_autofree double *e = g_new (double, n + 1);
+  g_autofree double *v = g_new (double, n + 1);
 
   for (uint32_t i = 0; i < n; i++)
     member[i] = (Member){fold[i], i};
   qsort (member, n, sizeof *member, compare_members);
+  for (uint32_t i = 0; i < n; i++)
+    row[i] = member[i].row;
   for (uint32_t i = 0, end; i < n; i = end) {
     for (end = i + 1; end < n && member[end].fold == member[i].fold;)
       end++;
-    leave_out (inverse, alpha, member + i, end - i, error, variance);
+    enl_gaussian_leave_out (inverse, alpha, row + i, end - i, e, v);
+    for (uint32_t k = i; k < end; k++) {
+      error[row[k]] = e[k - i];
+      variance[row[k]] = v[k - i];
+    }
   }
 }

@@ -32,6 +32,11 @@ double *enl_gaussian_inverse (const double *factor, uint32_t n) ENL_MUST_USE;
 void enl_gaussian_left_out (const double *inverse, const double *alpha, uint32_t n,
                             const uint32_t *fold, double *error, double *variance);
 
+/* One fold alone: the `m` rows in `row` leave together; error[k] and variance[k] are those of
+ * row[k]. */
+void enl_gaussian_leave_out (const double *inverse, const double *alpha, const uint32_t *row,
+                             uint32_t m, double *error, double *variance);
+
 /* y = A x for a packed symmetric matrix. */
 void enl_gaussian_multiply (const double *matrix, uint32_t n, const double *x, double *y);
 

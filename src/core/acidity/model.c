@@ -35,6 +35,15 @@ enl_acid_class (const EnlMolecule *mol, uint32_t atom)
   return ENL_CLASS_CARBON;
 }
 
+const char *
+enl_acid_class_text (EnlAcidClass class_of)
+{
+  static const char *const text[] = {"alpha C-H", "other C-H", "N-H", "O-H", "S-H"};
+
+  g_assert (class_of < ENL_N_CLASSES);
+  return text[class_of];
+}
+
 EnlStatus
 enl_model_describe (const EnlReference *ref, EnlSiteSet **out, EnlError *err)
 {
@@ -89,6 +98,13 @@ enl_model_compound_folds (const EnlReference *ref, uint32_t *fold)
   }
 }
 
+/* Variance of a published value about the model. */
+static double
+row_noise (const EnlModel *model, const EnlReferenceRow *row)
+{
+  return model->hyper.value[ENL_H_noise] + row->sigma * row->sigma;
+}
+
 static double *
 covariance (const EnlModel *model, const EnlReference *ref)
 {
@@ -101,8 +117,7 @@ covariance (const EnlModel *model, const EnlReference *ref)
       enl_kernel_parts (&model->hyper, &model->relevance, rows, i, rows, j, &parts);
       matrix[ENL_PACKED (i, j)] = enl_kernel_value (&model->hyper, &parts);
     }
-    double sigma = enl_reference_row (ref, i)->sigma;
-    matrix[ENL_PACKED (i, i)] += model->hyper.value[ENL_H_noise] + sigma * sigma;
+    matrix[ENL_PACKED (i, i)] += row_noise (model, enl_reference_row (ref, i));
   }
   return matrix;
 }
@@ -116,6 +131,16 @@ enl_model_left_out (const EnlModel *model, const uint32_t *fold, double *error, 
   enl_gaussian_left_out (inverse, model->alpha, n, fold, error, sd);
   for (uint32_t i = 0; i < n; i++)
     sd[i] = sqrt (sd[i]);
+}
+
+/* K alpha = (K + noise) alpha - noise alpha = y - noise alpha. */
+void
+enl_model_fitted (const EnlModel *model, const EnlReference *ref, double *value)
+{
+  for (uint32_t i = 0; i < model->rows->n; i++) {
+    const EnlReferenceRow *row = enl_reference_row (ref, i);
+    value[i] = row->pka - row_noise (model, row) * model->alpha[i];
+  }
 }
 
 static int

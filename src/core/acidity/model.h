@@ -19,6 +19,9 @@ typedef enum {
   ENL_N_CLASSES
 } EnlAcidClass;
 
+/* "alpha C-H", "other C-H", "N-H", "O-H", "S-H"; static. */
+const char *enl_acid_class_text (EnlAcidClass class_of);
+
 EnlAcidClass enl_acid_class (const EnlMolecule *mol, uint32_t atom);
 
 #define ENL_MODEL_SOLVENTS 2 /* DMSO, water */
@@ -57,6 +60,9 @@ void enl_model_compound_folds (const EnlReference *ref, uint32_t *fold);
 
 /* Left-out errors (predicted - published) and standard deviations for any folds. */
 void enl_model_left_out (const EnlModel *model, const uint32_t *fold, double *error, double *sd);
+
+/* What the model says at its own rows: the smoothed value, not the published one. */
+void enl_model_fitted (const EnlModel *model, const EnlReference *ref, double *value);
 
 /* Half width, in standard deviations, that holds nine tenths of the rows for which `use` is true
  * and which are not in `skip_fold` (ENL_NONE: none); NAN below `at_least` rows. */

@@ -16,7 +16,8 @@ typedef enum {
 
 /* Errors are predicted minus published, in pK units. */
 typedef struct {
-  const char *class_name; /* "alpha C-H of carbonyls", "all C-H", "N-H", "O-H", "S-H", "all" */
+  const char *
+      class_name; /* "alpha C-H of carbonyls", "all C-H", "C-H other", "N-H", "O-H", "S-H", "all" */
   EnlSolvent solvent;
   uint32_t n;
   double mae, median, rmse, max; /* of the size of the error */
@@ -38,6 +39,10 @@ EnlStatus enl_validate (const EnlReference *ref, const char *model_bytes, size_t
 /* The left-out rows themselves: new array (g_free), one for each row of the table. */
 EnlStatus enl_validate_rows (const EnlReference *ref, const char *model_bytes, size_t size,
                              EnlFold fold, EnlLeftOut **out, EnlError *err) ENL_MUST_USE;
+
+/* Half width of the interval that shall hold the share `nominal` (0..1) of all cases, relative to
+ * that of the 90 % interval: the estimate states a normal distribution. */
+double enl_interval_scale (double nominal);
 
 /* "compound", "cluster"; false for another word. */
 bool enl_fold_parse (const char *text, EnlFold *out);
