@@ -161,7 +161,8 @@ def check_usage():
                       ('sites', '--colour', 'CC'), ('sites', '--format'), ('bases', '--equiv', '-1', 'CC=O'),
                       ('bases', '--equiv', 'nan', 'CC=O'), ('forms', '--atom', '0', 'CC=O'),
                       ('figure', 'CC=O'), ('figure', '--view', 'forms', '--out', 'x.gif', 'CC=O'),
-                      ('validate', '--fold', 'paper'), ('validate', 'CC')):
+                      ('validate', '--fold', 'paper'), ('validate', 'CC'),
+                      ('validate', '--plot', 'x.gif'), ('validate', '--rows', '--pairs'), ('validate', '--rows=3')):
         _, err = run(*arguments, code=2)
         expect('%s: explained' % (arguments,), len(err) > 10, err)
     for arguments in (('--help',), ('--version',), ('sites', '--help')):
@@ -188,6 +189,65 @@ def check_validate():
     expect('columns of validate', names == ['class', 'solvent', 'n', 'mae', 'median', 'rmse', 'max', 'cover90'], names)
     found = {(r['class'], r['solvent']): r for r in rows}
     expect('alpha C-H of carbonyls in DMSO', int(found[('alpha C-H of carbonyls', 'dmso')]['n']) >= 70, rows)
+    for solvent in ('dmso', 'water'):
+        parts = [int(found[(name, solvent)]['n']) for name in ('alpha C-H of carbonyls', 'C-H other')]
+        expect('C-H in %s add up' % solvent, sum(parts) == int(found[('all C-H', solvent)]['n']), parts)
+    _, families = tsv('validate', '--fold', 'cluster')
+    expect('families left out are harder', float(families[-1]['mae']) > float(rows[-1]['mae']), families[-1])
+    text, _ = run('validate')
+    expect('the order stands in the plain report', 'compounds of one family' in text, text[-400:])
+    total = sum(int(found[('all', solvent)]['n']) for solvent in ('dmso', 'water'))
+    check_order()
+    check_rows(total)
+    check_plot(total)
+
+
+def check_order():
+    names, rows = tsv('validate', '--ranking')
+    expect('columns of --ranking', names == ['pairs', 'solvent', 'n', 'fitted', 'left_out'], names)
+    everything = rows[-1]
+    expect('all pairs', everything['pairs'] == 'all' and int(everything['n']) > 2000, everything)
+    expect('shares', all(0 < float(r[c]) <= 1 for r in rows for c in ('fitted', 'left_out')), rows)
+    names, families = tsv('validate', '--families')
+    expect('columns of --families', names == ['family', 'parent', 'solvent', 'n', 'fitted', 'left_out'], names)
+    pairs = [r for r in rows if r['pairs'].startswith('compounds') and r['solvent'] == 'both']
+    expect('families add up', sum(int(r['n']) for r in families) == int(pairs[0]['n']), pairs)
+    expect('phenols are a family', any(r['parent'] == 'phenol' and r['solvent'] == 'water' for r in families))
+    names, wrong = tsv('validate', '--pairs')
+    expect('columns of --pairs', names == ['pairs', 'family', 'parent', 'solvent', 'first', 'second', 'published',
+                                           'fitted', 'left_out'], names)
+    counted = sum(round(int(r['n']) * (1 - float(r['left_out']))) for r in rows[-1:])
+    listed = sum(float(r['published']) * float(r['left_out']) <= 0 for r in wrong)
+    expect('wrong pairs are listed', abs(listed - counted) <= 0.001 * int(everything['n']) + 1, (listed, counted))
+
+
+def check_rows(total):
+    names, rows = tsv('validate', '--rows')
+    expect('columns of --rows', names == ['name', 'smiles', 'solvent', 'published', 'left_out', 'low', 'high',
+                                          'residual', 'class'], names)
+    expect('all rows', len(rows) == total, len(rows))
+    sizes = [abs(float(r['residual'])) for r in rows]
+    expect('largest residual first', sizes == sorted(sizes, reverse=True), sizes[:5])
+    inside = [float(r['low']) <= float(r['published']) <= float(r['high']) for r in rows]
+    expect('residual and interval agree', all((z < 1.6449) == held or abs(z - 1.6449) < 0.05
+                                              for z, held in zip(sizes, inside)))
+
+
+def check_plot(total):
+    with tempfile.TemporaryDirectory() as folder:
+        for ending, magic in (('png', b'\x89PNG'), ('svg', b'<?xml'), ('pdf', b'%PDF')):
+            path = os.path.join(folder, 'reliability.' + ending)
+            out, _ = run('validate', '--plot', path)
+            with open(path, 'rb') as stream:
+                data = stream.read()
+            expect('reliability as %s' % ending, data.startswith(magic) and out == '', (len(data), out[:80]))
+            if ending == 'svg':
+                shapes = data.count(b'<path') + data.count(b'<rect')
+                expect('a mark or more for every row', shapes > 2 * total, (shapes, total))
+                run('validate', '--plot', path)
+                with open(path, 'rb') as stream:
+                    expect('the same picture every time', stream.read() == data)
+        run('validate', '--plot', '/no/such/folder/a.svg', code=1)
 
 
 def main():

@@ -122,6 +122,27 @@ take_row (const Run *run, int row, EnlEstimate *e)
       e->precedent[e->n_precedents++] = old.precedent[i];
 }
 
+/* The atom that stands for a site. Where mesomerism makes several atoms one site it is the one that
+ * carries the charge as drawn, as in the rows of the table: the N of C=NH2+ in an amidinium ion. */
+static uint32_t
+atom_of_site (const EnlMolecule *mol, const EnlSite *site)
+{
+  for (uint32_t k = 0; k < site->n_atoms; k++)
+    if (enl_molecule_atom (mol, site->atom[k])->charge > 0)
+      return site->atom[k];
+  return site->atom[0];
+}
+
+/* Row for any of the atoms of a site, or -1. */
+static int
+row_of_site (const EnlSite *site, const int *row)
+{
+  for (uint32_t k = 0; k < site->n_atoms; k++)
+    if (row[site->atom[k]] >= 0)
+      return row[site->atom[k]];
+  return -1;
+}
+
 /* Estimates the sites for which second == `second` on `mol` (the molecule, or its anion with the
  * same atom numbers), then lets published values of that very species take over. */
 static void
@@ -135,7 +156,7 @@ fill_sites (const Run *run, const EnlMolecule *mol, bool second)
 
   for (uint32_t i = 0; i < run->sites->n_sites; i++)
     if (run->sites->site[i].second == second) {
-      atom[n] = run->sites->site[i].atom[0];
+      atom[n] = atom_of_site (mol, &run->sites->site[i]);
       site[n++] = i;
     }
   if (n == 0)
@@ -143,9 +164,10 @@ fill_sites (const Run *run, const EnlMolecule *mol, bool second)
   enl_predictor_run (run->estimator->predictor, mol, atom, n, run->solvent, prediction);
   enl_reference_find_all (run->estimator->ref, mol, run->solvent, row);
   for (uint32_t k = 0; k < n; k++) {
+    int published = row_of_site (&run->sites->site[site[k]], row);
     take_prediction (run, &prediction[k], &run->out[site[k]]);
-    if (row[atom[k]] >= 0)
-      take_row (run, row[atom[k]], &run->out[site[k]]);
+    if (published >= 0)
+      take_row (run, published, &run->out[site[k]]);
   }
 }
 
@@ -188,7 +210,8 @@ fill_seconds (const Run *run)
 {
   double floor = 0;
   const EnlSite *first = first_to_go (run, &floor);
-  g_autoptr (EnlMolecule) base = first ? conjugate_base (run->mol, first->atom[0]) : NULL;
+  g_autoptr (EnlMolecule) base =
+      first ? conjugate_base (run->mol, atom_of_site (run->mol, first)) : NULL;
   g_autofree int *row = g_new (int, enl_molecule_atoms (run->mol) + 1);
 
   fill_sites (run, base ? base : run->mol, true);
@@ -199,8 +222,9 @@ fill_seconds (const Run *run)
     if (!site->second)
       continue;
     /* A published value of the neutral molecule stands: someone measured that very hydrogen. */
-    if (row[site->atom[0]] >= 0)
-      take_row (run, row[site->atom[0]], e);
+    int published = row_of_site (site, row);
+    if (published >= 0)
+      take_row (run, published, e);
     if (e->basis == ENL_BASIS_MEASURED)
       continue;
     e->value = MAX (e->value, floor); /* a second loss is never easier than the first */

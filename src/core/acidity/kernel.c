@@ -77,28 +77,30 @@ enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper)
   }
 }
 
-/* Weighted product and squared distance. Four strands of each: the compiler may not reorder a
- * floating sum by itself. */
+/* Weighted product and squared distance. The descriptors are single numbers, but the sums go in
+ * double ones: so the model does not depend on how a machine or compiler orders them. Four strands
+ * of each: the compiler may not reorder a floating sum by itself. */
 static void
 products (const EnlRelevance *relevance, const float *a, const float *b, double *dot,
           double *square)
 {
   const float *linear = relevance->linear, *smooth = relevance->smooth;
-  float p[4] = {0}, q[4] = {0};
+  double p[4] = {0}, q[4] = {0};
   int k = 0;
 
   for (; k + 4 <= ENL_N_DESCRIPTORS; k += 4)
     for (int j = 0; j < 4; j++) {
-      float gap = a[k + j] - b[k + j];
-      p[j] += linear[k + j] * a[k + j] * b[k + j];
-      q[j] += smooth[k + j] * gap * gap;
+      double x = (double)a[k + j], y = (double)b[k + j], gap = x - y;
+      p[j] += (double)linear[k + j] * (x * y);
+      q[j] += (double)smooth[k + j] * (gap * gap);
     }
   for (; k < ENL_N_DESCRIPTORS; k++) {
-    p[0] += linear[k] * a[k] * b[k];
-    q[0] += smooth[k] * (a[k] - b[k]) * (a[k] - b[k]);
+    double x = (double)a[k], y = (double)b[k], gap = x - y;
+    p[0] += (double)linear[k] * (x * y);
+    q[0] += (double)smooth[k] * (gap * gap);
   }
-  *dot = (double)(p[0] + p[1]) + (double)(p[2] + p[3]);
-  *square = (double)(q[0] + q[1]) + (double)(q[2] + q[3]);
+  *dot = (p[0] + p[1]) + (p[2] + p[3]);
+  *square = (q[0] + q[1]) + (q[2] + q[3]);
 }
 
 double

@@ -1,9 +1,10 @@
 /* How good the estimates are: scores on compounds that the model has not seen.
  *
  * The closed form of leaving out (gaussian.h) gives, for every row, exactly what a model without
- * the rows of its fold would say: no left-out row takes part in its own prediction, and its error
- * does not enter the calibration of its own interval (that uses the left-out errors of the others,
- * whose models did see the row).
+ * the rows of its fold would say: no left-out row takes part in its own prediction, nor in the
+ * calibration of its own interval. That uses the errors of the other compounds, each left out
+ * together with the fold, as a model without the fold would do it. Only the hyperparameters have
+ * seen all rows.
  */
 #pragma once
 

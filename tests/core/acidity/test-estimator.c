@@ -81,6 +81,63 @@ START_TEST (published_values_come_back)
 }
 END_TEST
 
+/* A measured value names its row and is exactly that; an estimate names none. `at` is the row of
+ * this very site, or -1. A second site is that of the mono-anion and takes the row of that. */
+static void
+check_origin (const EnlReferenceRow *asked, const EnlSite *site, const EnlEstimate *e, int at)
+{
+  if (e->basis != ENL_BASIS_MEASURED) {
+    ck_assert_msg (e->basis == ENL_BASIS_ESTIMATED && e->row == -1 && at == -1,
+                   "%s: a measured value is shown as estimated", asked->name);
+    ck_assert_double_gt (e->high - e->low, 0.2);
+    return;
+  }
+  ck_assert_msg (e->row >= 0, "%s: an estimate is shown as measured", asked->name);
+  const EnlReferenceRow *row = enl_reference_row (acids, (uint32_t)e->row);
+  ck_assert_double_eq (e->value, row->pka);
+  ck_assert_int_eq (row->solvent, e->solvent);
+  if (at >= 0) {
+    ck_assert_int_eq (e->row, at);
+    ck_assert_str_eq (row->key, asked->key);
+    return;
+  }
+  ck_assert_msg (site->second, "%s: the row of another compound", asked->name);
+  ck_assert_int_eq (enl_molecule_charge (row->mol), enl_molecule_charge (asked->mol) - 1);
+  ck_assert_uint_eq (enl_molecule_heavy_atoms (row->mol), enl_molecule_heavy_atoms (asked->mol));
+}
+
+/* Every site of every molecule of the table in both solvents. */
+START_TEST (measured_and_estimated_are_never_mixed_up)
+{
+  uint32_t n = enl_reference_rows (acids), estimated = 0;
+  g_autofree bool *shown = g_new0 (bool, n);
+
+  for (uint32_t i = 0; i < n; i++) {
+    const EnlReferenceRow *row = enl_reference_row (acids, i);
+    g_autofree int *found = g_new (int, enl_molecule_atoms (row->mol));
+    for (int solvent = 0; solvent <= ENL_SOLVENT_WATER; solvent++) {
+      Result r = run (row->smiles, (EnlSolvent)solvent);
+      enl_reference_find_all (acids, row->mol, (EnlSolvent)solvent, found);
+      for (uint32_t s = 0; s < r.sites->n_sites; s++) {
+        const EnlSite *site = &r.sites->site[s];
+        int at = -1;
+        for (uint32_t k = 0; k < site->n_atoms; k++)
+          at = MAX (at, found[site->atom[k]]);
+        check_origin (row, site, &r.out[s], at);
+        estimated += r.out[s].basis == ENL_BASIS_ESTIMATED;
+        if (r.out[s].row >= 0)
+          shown[r.out[s].row] = true;
+      }
+      clear (&r);
+    }
+  }
+  for (uint32_t i = 0; i < n; i++)
+    ck_assert_msg (shown[i], "%s (%s) is never shown", enl_reference_row (acids, i)->name,
+                   enl_reference_row (acids, i)->smiles);
+  ck_assert_uint_gt (estimated, 500);
+}
+END_TEST
+
 /* Invented compounds close to measured families. The windows are those of the families. */
 static const struct {
   const char *label, *smiles;
@@ -115,6 +172,20 @@ START_TEST (estimates_are_sensible)
   }
   ck_assert (sum > 0 && sum <= 1 + 1e-9);
   clear (&r);
+}
+END_TEST
+
+START_TEST (unmeasured_compounds_are_estimated)
+{
+  for (uint32_t i = 0; i < ENL_COUNT (sensible); i++)
+    for (int solvent = 0; solvent < ENL_N_SOLVENTS; solvent++) {
+      Result r = run (sensible[i].smiles, (EnlSolvent)solvent);
+      for (uint32_t s = 0; s < r.sites->n_sites; s++) {
+        ck_assert_int_eq (r.out[s].basis, ENL_BASIS_ESTIMATED);
+        ck_assert_int_eq (r.out[s].row, -1);
+      }
+      clear (&r);
+    }
 }
 END_TEST
 
@@ -157,9 +228,7 @@ END_TEST
 
 /* What the model was not fitted on is said, and gets a wide interval. */
 static const char *const strange[] = {
-    "[CH3:1]C(=O)[Pb](C)(C)C",
-    "[CH2]C(=O)[CH3:1]",
-    "[AsH2:1]c1ccccc1",
+    "[CH3:1]C(=O)[Pb](C)(C)C", "[CH2]C(=O)[CH3:1]", "[AsH2:1]c1ccccc1",
     "[CH3:1]C(=O)Cl", /* no acyl halide is in the table */
 };
 
@@ -242,6 +311,8 @@ estimator_suite (void)
   tcase_add_unchecked_fixture (tc, setup, teardown);
   tcase_add_test (tc, published_values_come_back);
   tcase_add_loop_test (tc, estimates_are_sensible, 0, (int)ENL_COUNT (sensible));
+  tcase_add_test (tc, measured_and_estimated_are_never_mixed_up);
+  tcase_add_test (tc, unmeasured_compounds_are_estimated);
   tcase_add_test (tc, thf_stands_on_dmso);
   tcase_add_test (tc, second_sites_are_those_of_the_anion);
   tcase_add_loop_test (tc, strangers_are_told, 0, (int)ENL_COUNT (strange));

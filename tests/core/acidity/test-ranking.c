@@ -2,6 +2,7 @@
 #include "core/acidity/ranking.h"
 
 #include <math.h>
+#include <stdio.h>
 
 #include "core/acidity/family.h"
 #include "core/acidity/model.h"
@@ -147,7 +148,7 @@ START_TEST (fitted_values_are_those_of_the_predictor)
     EnlPrediction x, y;
     enl_predictor_run (predictor, a->mol, &a->site, 1, a->solvent, &x);
     enl_predictor_run (predictor, b->mol, &b->site, 1, b->solvent, &y);
-    ck_assert_double_eq_tol (pair[k].fitted, x.value - y.value, 1e-6);
+    ck_assert_double_eq_tol (pair[k].fitted, x.value - y.value, 1e-8);
     ck_assert_double_ne (pair[k].fitted, pair[k].published);
   }
   enl_predictor_free (predictor);
@@ -183,8 +184,8 @@ START_TEST (order_is_right)
                                 order_case[_i].left_out ? pair[k].left_out : pair[k].fitted);
   }
   double share = (double)right / n;
-  g_test_message ("%s: %u pairs, %.4f, asked %.2f", order_case[_i].label, n, share,
-                  order_case[_i].asked);
+  fprintf (stderr, "%s: %u pairs, %.4f in right order, asked %.2f\n", order_case[_i].label, n,
+           share, order_case[_i].asked);
   ck_assert_uint_gt (n, 500);
   ck_assert_msg (share >= order_case[_i].bound, "%s: %.4f of %u pairs, bound %.2f, asked %.2f",
                  order_case[_i].label, share, n, order_case[_i].bound, order_case[_i].asked);
@@ -215,6 +216,19 @@ shifted (uint32_t first, uint32_t second, double shift)
   return ref;
 }
 
+/* The same pair with the published values. */
+static const EnlPair *
+pair_of (const EnlPair *other)
+{
+  const EnlPair *last = pair;
+
+  while (last < pair + n_pairs && (last->first < other->first ||
+                                   (last->first == other->first && last->second < other->second)))
+    last++;
+  bool same = last < pair + n_pairs && last->first == other->first && last->second == other->second;
+  return same ? last : other; /* the shift makes and unmakes a few pairs */
+}
+
 /* Both rows of a pair five units higher: their left-out difference must not notice. */
 START_TEST (a_pair_does_not_see_its_own_values)
 {
@@ -238,9 +252,9 @@ START_TEST (a_pair_does_not_see_its_own_values)
   ck_assert_uint_lt (at, n);
   ck_assert_double_eq_tol (again[at].left_out, chosen->left_out, 1e-9);
   for (uint32_t k = 0; k < n; k++)
-    if (again[k].first == chosen->first && again[k].second != chosen->second)
-      most = fmax (most, fabs (again[k].left_out - again[k].published));
-  ck_assert_double_gt (most, 0);
+    if (again[k].first != chosen->first && again[k].second != chosen->second)
+      most = fmax (most, fabs (again[k].left_out - pair_of (&again[k])->left_out));
+  ck_assert_double_gt (most, 0.01); /* others do see it */
 }
 END_TEST
 
