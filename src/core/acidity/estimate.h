@@ -26,8 +26,9 @@ const char *enl_basis_text (EnlBasis basis);
 #define ENL_MAX_PRECEDENTS 5
 
 typedef struct {
-  uint32_t row;  /* of the reference table (enl_reference_...) */
-  double weight; /* share in the smooth part of the estimate, 0..1 */
+  uint32_t row;    /* of the reference table (enl_reference_...) */
+  double weight;   /* share in the smooth part of the estimate, 0..1 */
+  double likeness; /* of the surroundings of the acidic atoms, 0..1 */
 } EnlPrecedent;
 
 /* pK units at 25 °C, uncorrected for statistical factors as published. `low`..`high` is the 90 %

@@ -115,17 +115,15 @@ take_row (const Run *run, int row, EnlEstimate *e)
   e->outside = false;
   e->remark = NULL;
   set_interval (e, NORMAL_WIDTH * published->sigma);
-  e->precedent[0] = (EnlPrecedent){(uint32_t)row, 1};
+  e->precedent[0] = (EnlPrecedent){(uint32_t)row, 1, 1};
   e->n_precedents = 1;
   for (uint32_t i = 0; i < old.n_precedents && e->n_precedents < ENL_MAX_PRECEDENTS; i++)
     if (old.precedent[i].row != (uint32_t)row)
       e->precedent[e->n_precedents++] = old.precedent[i];
 }
 
-/* The atom that stands for a site. Where mesomerism makes several atoms one site it is the one that
- * carries the charge as drawn, as in the rows of the table: the N of C=NH2+ in an amidinium ion. */
-static uint32_t
-atom_of_site (const EnlMolecule *mol, const EnlSite *site)
+uint32_t
+enl_estimator_atom (const EnlMolecule *mol, const EnlSite *site)
 {
   for (uint32_t k = 0; k < site->n_atoms; k++)
     if (enl_molecule_atom (mol, site->atom[k])->charge > 0)
@@ -156,7 +154,7 @@ fill_sites (const Run *run, const EnlMolecule *mol, bool second)
 
   for (uint32_t i = 0; i < run->sites->n_sites; i++)
     if (run->sites->site[i].second == second) {
-      atom[n] = atom_of_site (mol, &run->sites->site[i]);
+      atom[n] = enl_estimator_atom (mol, &run->sites->site[i]);
       site[n++] = i;
     }
   if (n == 0)
@@ -175,17 +173,17 @@ fill_sites (const Run *run, const EnlMolecule *mol, bool second)
 
 /* The site that goes first: the lowest estimate among the acidic heteroatoms, else among all. */
 static const EnlSite *
-first_to_go (const Run *run, double *value)
+first_to_go (const EnlSites *sites, const EnlEstimate *estimate, double *value)
 {
   const EnlSite *best = NULL;
 
   for (int any = 0; any < 2 && !best; any++)
-    for (uint32_t i = 0; i < run->sites->n_sites; i++) {
-      const EnlSite *site = &run->sites->site[i];
+    for (uint32_t i = 0; i < sites->n_sites; i++) {
+      const EnlSite *site = &sites->site[i];
       if (site->second || (!any && !site->acidic_heteroatom))
         continue;
-      if (!best || run->out[i].value < *value)
-        best = site, *value = run->out[i].value;
+      if (!best || estimate[i].value < *value)
+        best = site, *value = estimate[i].value;
     }
   return best;
 }
@@ -205,13 +203,23 @@ conjugate_base (const EnlMolecule *mol, uint32_t atom)
   return base;
 }
 
+EnlMolecule *
+enl_estimator_first_anion (const EnlMolecule *mol, const EnlSites *sites,
+                           const EnlEstimate *estimate)
+{
+  double value = 0;
+  const EnlSite *first = first_to_go (sites, estimate, &value);
+
+  return first ? conjugate_base (mol, enl_estimator_atom (mol, first)) : NULL;
+}
+
 static void
 fill_seconds (const Run *run)
 {
   double floor = 0;
-  const EnlSite *first = first_to_go (run, &floor);
+  const EnlSite *first = first_to_go (run->sites, run->out, &floor);
   g_autoptr (EnlMolecule) base =
-      first ? conjugate_base (run->mol, atom_of_site (run->mol, first)) : NULL;
+      first ? conjugate_base (run->mol, enl_estimator_atom (run->mol, first)) : NULL;
   g_autofree int *row = g_new (int, enl_molecule_atoms (run->mol) + 1);
 
   fill_sites (run, base ? base : run->mol, true);
@@ -301,6 +309,31 @@ enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const 
   if (solvent == ENL_SOLVENT_THF)
     move_to_thf (sites, out);
   return ENL_OK;
+}
+
+/* ---- for explanations ---- */
+
+double
+enl_estimator_model_value (const EnlEstimator *estimator, const EnlMolecule *mol, uint32_t atom,
+                           EnlSolvent solvent)
+{
+  EnlPrediction prediction = {0};
+
+  enl_predictor_run (estimator->predictor, mol, &atom, 1,
+                     solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent, &prediction);
+  return isfinite (prediction.value) ? prediction.value : MOST_PKA;
+}
+
+bool
+enl_estimator_is_held (const EnlEstimate *estimate)
+{
+  return estimate->value == LEAST_PKA || estimate->value == MOST_PKA;
+}
+
+const EnlReference *
+enl_estimator_reference (const EnlEstimator *estimator)
+{
+  return estimator->ref;
 }
 
 /* ---- ranking ---- */

@@ -25,6 +25,23 @@ EnlStatus enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *m
                              const EnlSites *sites, EnlSolvent solvent, EnlEstimate *out,
                              EnlError *err) ENL_MUST_USE;
 
+/* ---- what an explanation asks (why.h) ---- */
+
+/* The atom that stands for a site. Where mesomerism makes several atoms one site it is the one that
+ * carries the charge as drawn, as in the rows of the table: the N of C=NH2+ in an amidinium ion. */
+uint32_t enl_estimator_atom (const EnlMolecule *mol, const EnlSite *site);
+/* What the model alone says of a hydrogen-bearing `atom` of a molecule of one fragment: published
+ * values are left aside; THF is the scale in DMSO. pK units, finite. */
+double enl_estimator_model_value (const EnlEstimator *estimator, const EnlMolecule *mol,
+                                  uint32_t atom, EnlSolvent solvent);
+/* The anion, atoms numbered as in `mol`, for which the sites marked `second` of a molecule of one
+ * fragment were estimated; NULL when it was the molecule itself. Caller: enl_molecule_free. */
+EnlMolecule *enl_estimator_first_anion (const EnlMolecule *mol, const EnlSites *sites,
+                                        const EnlEstimate *estimate) ENL_MUST_USE;
+/* The value was held at an end of the scale because the model runs off it. */
+bool enl_estimator_is_held (const EnlEstimate *estimate);
+const EnlReference *enl_estimator_reference (const EnlEstimator *estimator);
+
 /* Order of the sites by rising pKa (ties: more hydrogens first, then atom); fills rank[n_sites]
  * with site indices, most acidic first. */
 void enl_estimates_rank (const EnlSites *sites, const EnlEstimate *estimate, uint32_t *rank);

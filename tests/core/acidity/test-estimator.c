@@ -301,6 +301,45 @@ START_TEST (ranking_is_by_value_then_hydrogens)
 }
 END_TEST
 
+/* The list of precedents as a chemist sees it: every one has the acidic hydrogen on the same
+ * element and on the same kind of group, or there is none. */
+START_TEST (precedents_are_of_one_kind)
+{
+  static const struct {
+    const char *smiles, *first_has;
+  } kind_case[] = {
+      {"CC[CH2:1]C(=O)C(C)C", "C(=O)"},
+      {"[CH3:1]C(=O)c1ccc([N+](=O)[O-])cc1", "C(=O)c1"},
+      {"c1cc(O)ccc1[OH:1]", "[OH:1]c1"},
+      {"CC(=O)C=C[CH3:1]", NULL},
+  };
+
+  for (size_t k = 0; k < ENL_COUNT (kind_case); k++) {
+    Result r = run (kind_case[k].smiles, ENL_SOLVENT_DMSO);
+    const EnlEstimate *e = marked (&r);
+    uint8_t element = enl_molecule_atom (r.mol, mapped_atom (r.mol))->element;
+    double last = 2;
+
+    if (!kind_case[k].first_has)
+      ck_assert_msg (e->n_precedents == 0, "%s", kind_case[k].smiles);
+    else
+      ck_assert_msg (e->n_precedents > 0, "%s", kind_case[k].smiles);
+    for (uint32_t i = 0; i < e->n_precedents; i++) {
+      const EnlReferenceRow *row = enl_reference_row (acids, e->precedent[i].row);
+      ck_assert_uint_eq (enl_molecule_atom (row->mol, row->site)->element, element);
+      ck_assert_double_ge (e->precedent[i].likeness, 0.65);
+      ck_assert (e->precedent[i].weight > 0 && e->precedent[i].weight <= last);
+      last = e->precedent[i].weight;
+    }
+    if (e->n_precedents) {
+      const char *first = enl_reference_row (acids, e->precedent[0].row)->smiles;
+      ck_assert_msg (strstr (first, kind_case[k].first_has), "%s: %s", kind_case[k].smiles, first);
+    }
+    clear (&r);
+  }
+}
+END_TEST
+
 static Suite *
 estimator_suite (void)
 {
@@ -319,6 +358,7 @@ estimator_suite (void)
   tcase_add_loop_test (tc, a_counter_ion_changes_nothing, 0, (int)ENL_COUNT (salt_case));
   tcase_add_test (tc, same_answer_for_every_spelling);
   tcase_add_test (tc, ranking_is_by_value_then_hydrogens);
+  tcase_add_test (tc, precedents_are_of_one_kind);
   suite_add_tcase (suite, tc);
   return suite;
 }
