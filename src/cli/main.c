@@ -8,7 +8,7 @@
 
 static const EnlVerb verb[] = {
     {"sites", "Acidic hydrogens, ranked, with pKa, 90 % interval and nearest measured compounds.",
-     "fs", true, enl_verb_sites},
+     "fsx", true, enl_verb_sites},
     {"forms", "Contributing structures of the anion, with weights and charges.", "fsa", true,
      enl_verb_forms},
     {"bases", "Every base against one site: gap, conversion, verdict, cautions; best first.",

@@ -29,6 +29,7 @@ static const Option option[] = {
     {'F', "--families", NULL, "the same for every family of compounds"},
     {'P', "--pairs", NULL, "pairs that stand in the wrong order"},
     {'R', "--rows", NULL, "every row of the table, largest standardised residual first"},
+    {'x', "--explain", NULL, "why each value is what it is: contributions that add up, precedents"},
     {'p', "--plot", "FILE", "write the reliability picture: ends in .png, .svg or .pdf"},
 };
 
@@ -170,6 +171,10 @@ parse_option (const EnlVerb *verb, int argc, char **argv, int *index, EnlOptions
     return wrong_use (verb, "no option '%.*s'", (int)length, word);
   if (!found->value && equals)
     return wrong_use (verb, "%s takes no value", found->name);
+  if (found->letter == 'x') {
+    out->explain = true;
+    return -1;
+  }
   if (!found->value) {
     if (out->listing != ENL_LISTING_USUAL)
       return wrong_use (verb, "one list at a time: %s is one too many", found->name);

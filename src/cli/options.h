@@ -19,6 +19,7 @@ typedef struct {
   uint32_t atom; /* 1-based position in the input, 0: the most acidic C-H */
   const char *view, *out, *theme, *fold, *plot;
   EnlListing listing;
+  bool explain; /* sites: add why */
   double width_mm, dpi;
   char **input; /* NULL-terminated */
 } EnlOptions;

@@ -17,7 +17,20 @@ struct EnlOutput {
   const char *const *column;
   uint32_t n_columns;
   GArray *cell; /* of the rows held back (text) or of the present row */
+  GArray *note; /* to rows held back (text) */
 };
+
+/* Text below a row. */
+typedef struct {
+  uint32_t row;
+  char *text;
+} Note;
+
+static void
+clear_note (gpointer data)
+{
+  g_free (((Note *)data)->text);
+}
 
 static void
 clear_cell (gpointer data)
@@ -35,6 +48,8 @@ enl_output_new (EnlFormat format, const char *const *column)
   out->n_columns = g_strv_length ((char **)column);
   out->cell = g_array_new (FALSE, FALSE, sizeof (Cell));
   g_array_set_clear_func (out->cell, clear_cell);
+  out->note = g_array_new (FALSE, FALSE, sizeof (Note));
+  g_array_set_clear_func (out->note, clear_note);
   if (format == ENL_FORMAT_TSV)
     for (uint32_t i = 0; i < out->n_columns; i++)
       printf ("%s%c", column[i], i + 1 < out->n_columns ? '\t' : '\n');
@@ -133,6 +148,23 @@ enl_output_number (EnlOutput *out, double value, int decimals)
 }
 
 void
+enl_output_json (EnlOutput *out, const char *json)
+{
+  add_cell (out, g_strdup (json ? json : ""), true, !json);
+}
+
+void
+enl_output_note (EnlOutput *out, const char *text)
+{
+  Note note = {out->cell->len / out->n_columns, g_strdup (text)};
+
+  if (out->format == ENL_FORMAT_TEXT && note.row > 0)
+    g_array_append_val (out->note, note);
+  else
+    g_free (note.text);
+}
+
+void
 enl_output_integer (EnlOutput *out, int64_t value)
 {
   add_cell (out, g_strdup_printf ("%" G_GINT64_FORMAT, value), true, false);
@@ -158,6 +190,14 @@ print_padded (const char *text, size_t width, bool right, bool last)
 }
 
 static void
+print_notes (const EnlOutput *out, uint32_t row)
+{
+  for (uint32_t i = 0; i < out->note->len; i++)
+    if (g_array_index (out->note, Note, i).row == row)
+      fputs (g_array_index (out->note, Note, i).text, stdout);
+}
+
+static void
 print_block (const EnlOutput *out)
 {
   uint32_t rows = out->cell->len / out->n_columns;
@@ -170,10 +210,12 @@ print_block (const EnlOutput *out)
   }
   for (uint32_t c = 0; c < out->n_columns; c++)
     print_padded (out->column[c], width[c], cell_at (out, 0, c)->number, c + 1 == out->n_columns);
-  for (uint32_t r = 0; r < rows; r++)
+  for (uint32_t r = 0; r < rows; r++) {
     for (uint32_t c = 0; c < out->n_columns; c++)
       print_padded (cell_at (out, r, c)->text, width[c], cell_at (out, r, c)->number,
                     c + 1 == out->n_columns);
+    print_notes (out, r + 1);
+  }
 }
 
 void
@@ -186,6 +228,7 @@ enl_output_block (EnlOutput *out, const char *line)
   if (line)
     printf ("%s\n", line);
   g_array_set_size (out->cell, 0);
+  g_array_set_size (out->note, 0);
 }
 
 void
@@ -193,5 +236,6 @@ enl_output_finish (EnlOutput *out)
 {
   enl_output_block (out, NULL);
   g_array_unref (out->cell);
+  g_array_unref (out->note);
   g_free (out);
 }

@@ -21,5 +21,11 @@ void enl_output_text (EnlOutput *out, const char *text);
 void enl_output_number (EnlOutput *out, double value, int decimals);
 void enl_output_integer (EnlOutput *out, int64_t value);
 
+/* A cell that is JSON itself (not quoted again); NULL is an empty cell (null in json). For the json
+ * format. */
+void enl_output_json (EnlOutput *out, const char *json);
+/* text only: lines to stand below the row that is complete now. */
+void enl_output_note (EnlOutput *out, const char *text);
+
 /* text only: prints the rows so far as one aligned block, then `line` (NULL for none). */
 void enl_output_block (EnlOutput *out, const char *line);

@@ -1,11 +1,21 @@
 #include <math.h>
 
+#include "cli/explain.h"
 #include "cli/verbs.h"
 #include "core/molecule/elements.h"
 
 static const char *const column[] = {"substrate", "rank",     "atoms",      "element",
                                      "hydrogens", "position", "pka",        "low",
                                      "high",      "basis",    "precedents", NULL};
+
+/* With --explain; the first ones are the same, so that scripts go on. Text shows the reasons below
+ * each row instead. */
+static const char *const column_tsv[] = {
+    "substrate", "rank",  "atoms",      "element", "hydrogens", "position",   "pka", "low",
+    "high",      "basis", "precedents", "why",     "interval",  "structures", NULL};
+static const char *const column_json[] = {"substrate",  "rank", "atoms", "element", "hydrogens",
+                                          "position",   "pka",  "low",   "high",    "basis",
+                                          "precedents", "why",  NULL};
 
 /* "ethyl acetoacetate 14.2 (Olmstead & Bordwell ...) | ..." */
 static char *
@@ -38,6 +48,30 @@ short_precedents (const EnlReference *reference, const EnlEstimate *e)
   return g_string_free (out, FALSE);
 }
 
+/* What --explain adds to the row of site number `site`. */
+static void
+print_why (const EnlRun *run, const EnlAnalysis *a, uint32_t site)
+{
+  const EnlReference *reference = run->knowledge->reference;
+  const EnlEstimate *e = &a->estimate[site];
+  g_autoptr (EnlWhy) why =
+      enl_why_new (run->knowledge->estimator, a->mol, a->sites, a->estimate, site);
+
+  if (run->options->format == ENL_FORMAT_JSON) {
+    g_autofree char *json = enl_explain_json (reference, why, e);
+    enl_output_json (run->out, json);
+  } else if (run->options->format == ENL_FORMAT_TSV) {
+    g_autofree char *lines = enl_explain_lines (why);
+    g_autofree char *structures = enl_explain_structures (reference, e);
+    enl_output_text (run->out, lines);
+    enl_output_text (run->out, why->width);
+    enl_output_text (run->out, structures);
+  } else {
+    g_autofree char *text = enl_explain_text (reference, why, e);
+    enl_output_note (run->out, text);
+  }
+}
+
 static void
 print_site (const EnlRun *run, const char *name, const EnlAnalysis *a, uint32_t rank)
 {
@@ -59,6 +93,8 @@ print_site (const EnlRun *run, const char *name, const EnlAnalysis *a, uint32_t 
   enl_output_number (run->out, e->high, 2);
   enl_output_text (run->out, enl_basis_text (e->basis));
   enl_output_text (run->out, rows);
+  if (run->options->explain)
+    print_why (run, a, a->rank[rank]);
 }
 
 static void
@@ -74,6 +110,10 @@ print_reason (const EnlRun *run, const char *name, const char *reason)
     enl_output_number (run->out, NAN, 2);
   enl_output_text (run->out, "");
   enl_output_text (run->out, "");
+  if (run->options->explain && run->options->format == ENL_FORMAT_JSON)
+    enl_output_json (run->out, NULL);
+  for (int i = 0; run->options->explain && run->options->format == ENL_FORMAT_TSV && i < 3; i++)
+    enl_output_text (run->out, "");
 }
 
 static EnlStatus
@@ -102,5 +142,9 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 int
 enl_verb_sites (const EnlOptions *options)
 {
+  if (options->explain && options->format == ENL_FORMAT_TSV)
+    return enl_cli_run (options, column_tsv, visit);
+  if (options->explain && options->format == ENL_FORMAT_JSON)
+    return enl_cli_run (options, column_json, visit);
   return enl_cli_run (options, column, visit);
 }

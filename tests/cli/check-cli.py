@@ -68,6 +68,44 @@ def check_sites():
            rows)
 
 
+def check_explain():
+    """Published differences in DMSO (resources/acids.tsv): acetone 26.5, acetylacetone 13.3."""
+    plain, rows = tsv('sites', 'acetylacetone', '2-indanone', 'benzaldehyde')
+    names, explained = tsv('sites', '--explain', 'acetylacetone', '2-indanone', 'benzaldehyde')
+    expect('columns of sites --explain', names == plain + ['why', 'interval', 'structures'], names)
+    expect('the same table', [[r[n] for n in plain] for r in explained] == [[r[n] for n in plain] for r in rows],
+           explained)
+    for row in explained:
+        if row['rank'] == '0':
+            expect('no reasons without a value', row['why'] == row['interval'] == row['structures'] == '', row)
+            continue
+        parts = [part.rsplit(' ', 1) for part in row['why'].split(' | ')]
+        expect('at most six lines', 1 <= len(parts) <= 6 and parts[0][0].startswith('parent'), row['why'])
+        expect('they add up', abs(sum(float(v) for _, v in parts) - float(row['pka'])) < 1e-6, row['why'])
+        expect('interval in words', '90 %' in row['interval'], row)
+        expect('a structure for each precedent', len(row['structures'].split(' | ')) ==
+               len(row['precedents'].split(' | ')), row)
+    out, _ = run('sites', '--explain', '--format', 'json', 'acetylacetone', 'CC(=O)C=C[CH3:1]', 'benzaldehyde')
+    objects = [json.loads(line) for line in out.splitlines()]
+    first = objects[0]
+    lines = {line['words']: line['value'] for line in first['why']['lines']}
+    expect('json: parent and second acyl group', abs(lines['parent: acetone'] - 26.5) < 0.5 and
+           abs(lines['second acyl group (acetyl)'] + 13.2) < 0.6, lines)
+    expect('json: they add up', abs(sum(lines.values()) - first['pka']) < 1e-6, first)
+    precedent = first['why']['precedents'][0]
+    expect('json: the published row first', precedent['name'] == 'acetylacetone' and precedent['pka'] == 13.3 and
+           precedent['weight'] == 1 and precedent['solvent'] == 'dmso' and precedent['source'], precedent)
+    expect('json: a reason without a value', objects[-1]['rank'] == 0 and objects[-1]['why'] is None, objects[-1])
+    out, _ = run('sites', '--explain', 'acetylacetone')
+    lines = out.splitlines()
+    numbers = [float(line[:13]) for line in lines[2:lines.index(next(l for l in lines if '=' in l[:8]))]]
+    expect('text: a block under its site', abs(sum(numbers) - 13.3) < 1e-6 and
+           'second acyl group (acetyl)' in out, out)
+    expect('text: precedents with weight and source', 'weight 1.00' in out and 'Olmstead' in out, out)
+    run('sites', '--explain=2', 'acetone', code=2)
+    run('forms', '--explain', 'acetone', code=2)
+
+
 def check_forms():
     names, rows = tsv('forms', 'acetylacetone')
     expect('columns of forms', names == ['substrate', 'atom', 'form', 'smiles', 'weight', 'charges'], names)
@@ -251,8 +289,8 @@ def check_plot(total):
 
 
 def main():
-    for check in (check_sites, check_forms, check_bases, check_molecule, check_formats, check_failures,
-                  check_usage, check_figures, check_validate):
+    for check in (check_sites, check_explain, check_forms, check_bases, check_molecule, check_formats,
+                  check_failures, check_usage, check_figures, check_validate):
         check()
     print('%d checks, %d failed' % (count, len(failures)))
     print('\n'.join(failures))
