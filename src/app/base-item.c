@@ -76,7 +76,7 @@ details_text (const EnlBase *base, const EnlCandidate *c)
   GString *out = g_string_new (NULL);
 
   for (uint32_t i = 0; i < c->n_cautions; i++)
-    g_string_append_printf (out, "%s⚠ %s", out->len ? "\n" : "", c->caution[i]->text);
+    g_string_append_printf (out, "%s⚠ %s", out->len ? "\n" : "", c->caution[i].text);
   if (base->nucleophilicity[0])
     g_string_append_printf (out, "%sNucleophilicity: %s", out->len ? "\n" : "",
                             base->nucleophilicity);
@@ -100,8 +100,7 @@ enl_base_item_new (const EnlBase *base, const EnlCandidate *c)
   self->cell[ENL_CELL_PKAH] = isnan (c->pkah) ? g_strdup ("") : g_strdup_printf ("%.1f", c->pkah);
   self->cell[ENL_CELL_GAP] = isnan (c->gap) ? g_strdup ("") : g_strdup_printf ("%+.1f", c->gap);
   self->cell[ENL_CELL_CONVERSION] = conversion_text (c);
-  self->cell[ENL_CELL_VERDICT] =
-      g_strdup_printf ("%s %s", verdict_shape (c->verdict), enl_verdict_text (c->verdict));
+  self->cell[ENL_CELL_VERDICT] = g_strdup_printf ("%s %s", verdict_shape (c->verdict), c->words);
   self->cell[ENL_CELL_REASON] = g_strdup (c->reason);
   self->details = details_text (base, c);
   return self;

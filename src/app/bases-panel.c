@@ -145,8 +145,8 @@ fill (EnlBasesPanel *self, const EnlAnalysis *a, uint32_t site)
   EnlError err;
 
   conditions.solvent = a->solvent; /* until a new analysis arrives the old one stays consistent */
-  if (enl_bases_compare (k->bases, k->cautions, a->sites, a->estimate, site, &conditions,
-                         &comparison, &err) != ENL_OK) {
+  EnlQuestion question = enl_analysis_question (a, k, site, &conditions);
+  if (enl_bases_compare (&question, &comparison, &err) != ENL_OK) {
     g_autofree char *message = enl_error_message (&err);
     gtk_label_set_text (self->heading, message);
     g_list_store_remove_all (self->items);
@@ -326,7 +326,7 @@ enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session, EnlLook *look)
   g_assert (!self->session);
   self->session = g_object_ref (session);
   gtk_label_set_text (self->deferral,
-                      enl_caution_deferral (enl_session_knowledge (session)->cautions));
+                      enl_rule_table_deferral (enl_session_knowledge (session)->rules));
   g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self,
                            0);
   g_signal_connect_object (session, "conditions-changed", G_CALLBACK (on_session_changed), self, 0);

@@ -58,6 +58,22 @@ read_strengths (const RowReader *at, EnlBase *base)
     base->attacks[s] = lists_word (cell (at, "attacks"), enl_solvent_id ((EnlSolvent)s));
 }
 
+static bool
+says_yes (const RowReader *at, const char *column)
+{
+  return strcmp (cell (at, column), "yes") == 0;
+}
+
+static void
+read_form (const RowReader *at, EnlBase *base)
+{
+  base->form = cell (at, "form");
+  base->molar_mass = number (at, "molar_mass");
+  base->molarity = number (at, "molarity");
+  base->mass_percent = number (at, "mass_percent");
+  base->density = number (at, "density");
+}
+
 static void
 read_base (const RowReader *at, EnlBase *base)
 {
@@ -75,18 +91,35 @@ read_base (const RowReader *at, EnlBase *base)
   base->note = cell (at, "note");
   base->source = cell (at, "source");
   base->thf_scale = cell (at, "pKaH_THF_scale");
-  base->usual = strcmp (cell (at, "usual"), "yes") == 0;
-  base->irreversible = strcmp (cell (at, "irreversible"), "yes") == 0;
+  base->usual = says_yes (at, "usual");
+  base->irreversible = says_yes (at, "irreversible");
   base->number_unreliable = strcmp (cell (at, "number_holds"), "no") == 0;
+  base->soft = says_yes (at, "soft");
+  base->adds_to_carbonyl = says_yes (at, "adds_to_carbonyl");
+  base->beta_hydride = says_yes (at, "beta_hydride");
   read_strengths (at, base);
+  read_form (at, base);
 }
 
 static EnlStatus
 check_columns (const EnlTable *table, EnlError *err)
 {
-  static const char *const needed[] = {"id",         "name",        "class",       "pKaH_DMSO",
-                                       "pKaH_water", "pKaH_THF",    "attacks",     "irreversible",
-                                       "source",     "thf_footing", "number_holds"};
+  static const char *const needed[] = {"id",
+                                       "name",
+                                       "class",
+                                       "pKaH_DMSO",
+                                       "pKaH_water",
+                                       "pKaH_THF",
+                                       "attacks",
+                                       "irreversible",
+                                       "source",
+                                       "thf_footing",
+                                       "number_holds",
+                                       "soft",
+                                       "adds_to_carbonyl",
+                                       "beta_hydride",
+                                       "molar_mass",
+                                       "form"};
 
   return enl_table_require (table, needed, ENL_COUNT (needed), "base table", err);
 }

@@ -1,10 +1,11 @@
-/* The base table (resources/bases.tsv): what a base is, how strong, and what to beware of. */
+/* The base table (resources/bases.tsv): what a base is, how strong, how it is sold, and what to
+ * beware of. */
 #pragma once
 
-#include "core/acidity/estimate.h"
 #include <stdbool.h>
 #include <stdint.h>
 
+#include "core/acidity/estimate.h"
 #include "core/base/error.h"
 
 typedef struct {
@@ -17,8 +18,18 @@ typedef struct {
   bool irreversible;      /* the conjugate acid leaves or cannot give the proton back */
   bool number_unreliable; /* carbonate, fluoride, phosphate, soft-enolisation set: the number does
                              not describe what happens; no gap verdict is shown */
+  bool soft;              /* a soft-enolisation set: metal or silyl group and amine */
+  bool adds_to_carbonyl;  /* organolithium or Grignard reagent */
+  bool beta_hydride;      /* can hand a beta-hydride to C=O */
+  bool own;               /* added by the user, see own-base.h */
   double pkah[ENL_N_SOLVENTS];  /* NAN: not on this scale */
   double sigma[ENL_N_SOLVENTS]; /* one standard deviation */
+  /* As it is usually sold; NAN where that says nothing. */
+  const char *form;    /* "solution in THF", "dispersion in mineral oil" */
+  double molar_mass;   /* g/mol, of the base alone where the row is a mixture */
+  double molarity;     /* mol/L of a solution */
+  double mass_percent; /* base in a dispersion, solution or damp solid */
+  double density;      /* g/mL of a liquid or solution */
 } EnlBase;
 
 typedef struct EnlBaseTable EnlBaseTable;

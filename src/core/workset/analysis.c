@@ -73,3 +73,18 @@ enl_analysis_rank (const EnlAnalysis *a, uint32_t site)
       return i + 1;
   g_assert_not_reached ();
 }
+
+EnlQuestion
+enl_analysis_question (const EnlAnalysis *a, const EnlKnowledge *k, uint32_t site,
+                       const EnlConditions *conditions)
+{
+  g_assert (conditions->solvent == a->solvent);
+  return (EnlQuestion){.bases = k->bases,
+                       .rules = k->rules,
+                       .practice = &k->practice,
+                       .mol = a->mol,
+                       .sites = a->sites,
+                       .estimate = a->estimate,
+                       .target = site,
+                       .conditions = conditions};
+}

@@ -26,3 +26,8 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlAnalysis, enl_analysis_free)
 uint32_t enl_analysis_site (const EnlAnalysis *analysis, uint32_t atom);
 /* 1-based rank of a site. */
 uint32_t enl_analysis_rank (const EnlAnalysis *analysis, uint32_t site);
+
+/* The question which base takes the hydrogen of `site`. Everything in it is borrowed from the
+ * arguments; the conditions must be in the solvent of the analysis. */
+EnlQuestion enl_analysis_question (const EnlAnalysis *analysis, const EnlKnowledge *knowledge,
+                                   uint32_t site, const EnlConditions *conditions);

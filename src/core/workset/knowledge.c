@@ -14,8 +14,12 @@ open_tables (EnlKnowledge *k, EnlError *err)
     status = enl_base_table_new (text, size, &k->bases, err);
   }
   if (status == ENL_OK) {
-    text = enl_resource ("cautions.tsv", &size);
-    status = enl_caution_table_new (text, size, &k->cautions, err);
+    text = enl_resource ("rules.tsv", &size);
+    status = enl_rule_table_new (text, size, &k->rules, err);
+  }
+  if (status == ENL_OK) {
+    text = enl_resource ("practice.tsv", &size);
+    status = enl_practice_parse (text, size, &k->practice, err);
   }
   if (status == ENL_OK) {
     text = enl_resource ("names.tsv", &size);
@@ -46,7 +50,7 @@ enl_knowledge_free (EnlKnowledge *k)
   enl_estimator_free (k->estimator);
   enl_reference_free (k->reference);
   enl_base_table_free (k->bases);
-  enl_caution_table_free (k->cautions);
+  enl_rule_table_free (k->rules);
   enl_names_free (k->names);
   g_free (k);
 }

@@ -9,7 +9,8 @@ typedef struct {
   EnlReference *reference;
   EnlEstimator *estimator;
   EnlBaseTable *bases;
-  EnlCautionTable *cautions;
+  EnlRuleTable *rules;
+  EnlPractice practice;
   EnlNames *names;
 } EnlKnowledge;
 
