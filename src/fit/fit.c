@@ -5,6 +5,9 @@
  *   enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]    prints left-out scores
  *   enolith-fit fifths ACIDS.tsv [STEPS]                    tunes on four fifths, scores the fifth
  *   enolith-fit describe ACIDS.tsv                          prints the raw descriptors of every row
+ *   enolith-fit numbers ACIDS.tsv HYPER.tsv OUT.tsv [EVERY] writes what the model says, with all
+ *                                                           digits that shall agree between
+ * machines
  */
 #include <math.h>
 #include <stdio.h>
@@ -223,6 +226,59 @@ describe (int argc G_GNUC_UNUSED, char **argv)
   return EXIT_SUCCESS;
 }
 
+/* Every so many rows of the table stand in the list of numbers. */
+#define USUAL_EVERY 8
+
+static EnlStatus
+write_numbers (const EnlReference *ref, const GByteArray *bytes, uint32_t every, GString *text,
+               EnlError *err)
+{
+  g_autoptr (EnlModel) model = NULL;
+  g_autofree EnlLeftOut *left = NULL;
+  g_autofree double *fitted = g_new (double, enl_reference_rows (ref) + 1);
+  EnlStatus status;
+
+  if ((status = enl_model_open (ref, (const char *)bytes->data, bytes->len, &model, err)) !=
+          ENL_OK ||
+      (status = enl_validate_rows (ref, (const char *)bytes->data, bytes->len, ENL_FOLD_COMPOUND,
+                                   &left, err)) != ENL_OK)
+    return status;
+  enl_model_fitted (model, ref, fitted);
+  for (uint32_t i = 0; i < enl_reference_rows (ref); i += every) {
+    const EnlReferenceRow *row = enl_reference_row (ref, i);
+    const double value[] = {fitted[i], left[i].predicted, left[i].sd, left[i].half};
+    g_string_append_printf (text, "%s\t%s", row->smiles, enl_solvent_id (row->solvent));
+    for (size_t k = 0; k < ENL_COUNT (value); k++) {
+      char number[G_ASCII_DTOSTR_BUF_SIZE];
+      g_string_append_printf (text, "\t%s",
+                              g_ascii_formatd (number, sizeof number, "%.8f", value[k]));
+    }
+    g_string_append_c (text, '\n');
+  }
+  return ENL_OK;
+}
+
+static int
+numbers (int argc, char **argv)
+{
+  g_autoptr (EnlReference) ref = NULL;
+  g_autoptr (GByteArray) bytes = NULL;
+  g_autoptr (GString) text = g_string_new (
+      "# What the model says about some rows of resources/acids.tsv: the fitted value, and value,\n"
+      "# standard deviation and half width of the 90 % interval when the compound is left out.\n"
+      "# After a change of the model: meson compile -C BUILD model-numbers\n"
+      "smiles\tsolvent\tfitted\tleft_out\tsd\thalf\n");
+  int every = argc > 5 ? atoi (argv[5]) : USUAL_EVERY;
+  EnlError err;
+
+  if (fit_files (argv, &ref, &bytes, &err) != ENL_OK ||
+      write_numbers (ref, bytes, (uint32_t)MAX (every, 1), text, &err) != ENL_OK)
+    return fail ("numbers", &err);
+  if (!save (argv[4], text->str, text->len, &err))
+    return fail (argv[4], &err);
+  return EXIT_SUCCESS;
+}
+
 int
 main (int argc, char **argv)
 {
@@ -230,11 +286,8 @@ main (int argc, char **argv)
     const char *verb;
     int (*run) (int argc, char **argv);
     int least;
-  } verb[] = {{"tune", tune, 4},
-              {"build", build, 5},
-              {"score", score, 4},
-              {"fifths", fifths, 3},
-              {"describe", describe, 3}};
+  } verb[] = {{"tune", tune, 4},     {"build", build, 5},       {"score", score, 4},
+              {"fifths", fifths, 3}, {"describe", describe, 3}, {"numbers", numbers, 5}};
 
   for (size_t i = 0; argc > 1 && i < ENL_COUNT (verb); i++)
     if (strcmp (argv[1], verb[i].verb) == 0 && argc >= verb[i].least)
@@ -243,6 +296,7 @@ main (int argc, char **argv)
                    "       enolith-fit build ACIDS.tsv HYPER.tsv OUT.bin\n"
                    "       enolith-fit score ACIDS.tsv HYPER.tsv [cluster|rows]\n"
                    "       enolith-fit fifths ACIDS.tsv [STEPS]\n"
-                   "       enolith-fit describe ACIDS.tsv\n");
+                   "       enolith-fit describe ACIDS.tsv\n"
+                   "       enolith-fit numbers ACIDS.tsv HYPER.tsv OUT.tsv [EVERY]\n");
   return 2;
 }
