@@ -160,7 +160,7 @@ fill (EnlBasesPanel *self, const EnlAnalysis *a, uint32_t site)
                        items->pdata, items->len);
   g_autofree char *text =
       g_strdup_printf ("Bases for site %u, %s, in %s", enl_analysis_rank (a, site),
-                       a->sites->site[site].position, enl_solvent_label (a->solvent));
+                       a->sites->site[site].position, enl_solvent_heading (a->solvent));
   gtk_label_set_text (self->heading, text);
 }
 

@@ -17,8 +17,7 @@ refresh_title (EnlWindow *self)
   uint32_t n = enl_workset_size (enl_session_set (self->session));
   const EnlConditions *c = enl_workset_conditions (enl_session_set (self->session));
   g_autofree char *subtitle = g_strdup_printf (
-      "%u substrate%s, pKa in %s%s%s", n, n == 1 ? "" : "s", enl_solvent_label (c->solvent),
-      c->solvent == ENL_SOLVENT_THF ? " (DMSO-based footing)" : "",
+      "%u substrate%s, pKa in %s%s", n, n == 1 ? "" : "s", enl_solvent_heading (c->solvent),
       enl_session_unsaved (self->session) ? ", not saved" : "");
   g_autofree char *title = g_strdup_printf ("%s - Enolith", name);
 

@@ -49,17 +49,49 @@ enl_cli_atoms (const EnlMolecule *mol, const EnlSite *site)
   return g_string_free (out, FALSE);
 }
 
+/* One line a sentence, in the order of ranks: "site 1: ..." or "sites 1, 3: ...". */
+static void
+list_sentences (const EnlAnalysis *a, bool footing, GString *out)
+{
+  for (uint32_t i = 0; i < a->sites->n_sites; i++) {
+    const EnlEstimate *e = &a->estimate[a->rank[i]];
+    const char *sentence = footing ? e->footing : e->remark;
+    GString *sites = g_string_new (NULL);
+    uint32_t n = 0;
+    bool said = !sentence;
+    for (uint32_t k = 0; !said && k < a->sites->n_sites; k++) {
+      const EnlEstimate *other = &a->estimate[a->rank[k]];
+      if (g_strcmp0 (footing ? other->footing : other->remark, sentence) != 0)
+        continue;
+      said = k < i;
+      g_string_append_printf (sites, n++ ? ", %u" : "%u", k + 1);
+    }
+    if (!said)
+      g_string_append_printf (out, "  site%s %s: %s\n", n > 1 ? "s" : "", sites->str, sentence);
+    g_string_free (sites, TRUE);
+  }
+}
+
+char *
+enl_cli_remarks (const EnlAnalysis *a)
+{
+  GString *out = g_string_new (NULL);
+
+  list_sentences (a, false, out);
+  list_sentences (a, true, out);
+  return g_string_free (out, FALSE);
+}
+
 int
 enl_cli_run (const EnlOptions *options, const char *const *column, EnlVisit visit)
 {
-  EnlKnowledge *knowledge = enl_cli_knowledge ();
-  if (!knowledge)
-    return 1;
-  EnlRun run = {knowledge, options, enl_output_new (options->format, column)};
-  uint32_t failed = enl_input_each (knowledge->names, options->input,
-                                    options->format == ENL_FORMAT_TEXT, visit, &run);
+  EnlRun run;
 
+  if (!enl_cli_begin (&run, options))
+    return 1;
+  run.out = enl_output_new (options->format, column);
+  uint32_t failed = enl_cli_visit (&run, options->format == ENL_FORMAT_TEXT, visit);
   enl_output_finish (run.out);
-  enl_knowledge_free (knowledge);
+  enl_cli_end (&run);
   return failed > 0;
 }

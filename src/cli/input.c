@@ -5,7 +5,6 @@
 
 #include "core/notation/molfile.h"
 #include "core/notation/read.h"
-#include "core/workset/workset.h"
 
 /* Files of any size are legal lists; a single structure is limited by its reader. */
 #define MAX_FILE_BYTES (1u << 30)
@@ -17,6 +16,7 @@ typedef struct {
   const EnlNames *names;
   bool caret;
   EnlVisit visit;
+  EnlVisitSet visit_set; /* NULL: nobody asks */
   void *data;
   uint32_t failed;
 } Walk;
@@ -63,6 +63,15 @@ short_name (const char *name)
   return g_strconcat (start, cut ? "..." : "", NULL);
 }
 
+void
+enl_input_explain (const char *name, const EnlError *err)
+{
+  g_autofree char *message = enl_error_message (err);
+  g_autofree char *shown_name = short_name (name);
+
+  fprintf (stderr, "%s: %s\n", shown_name, message);
+}
+
 /* `first_line` is that of `text` in its file, 1 for a text of its own. */
 static void
 explain (Walk *walk, const char *name, const char *text, size_t size, size_t first_line,
@@ -72,9 +81,7 @@ explain (Walk *walk, const char *name, const char *text, size_t size, size_t fir
 
   if (shown.line)
     shown.line += first_line - 1;
-  g_autofree char *message = enl_error_message (&shown);
-  g_autofree char *shown_name = short_name (name);
-  fprintf (stderr, "%s: %s\n", shown_name, message);
+  enl_input_explain (name, &shown);
   if (walk->caret && err->line && text)
     print_caret (text, size, err);
   walk->failed++;
@@ -163,10 +170,14 @@ read_set (Walk *walk, const char *name, const char *text, size_t size)
     explain (walk, name, text, size, 1, &err);
     return;
   }
+  if (walk->visit_set)
+    walk->failed += walk->visit_set (name, set, walk->data);
   for (uint32_t i = 0; i < enl_workset_size (set); i++) {
     const EnlSubstrate *s = enl_workset_get (set, i);
     read_one (walk, s->name[0] ? s->name : s->text, false, s->text, strlen (s->text), 1);
   }
+  if (walk->visit_set)
+    walk->failed += walk->visit_set (name, NULL, walk->data);
 }
 
 /* ---- files ---- */
@@ -253,7 +264,14 @@ read_input (Walk *walk, const char *input)
 uint32_t
 enl_input_each (const EnlNames *names, char *const *input, bool caret, EnlVisit visit, void *data)
 {
-  Walk walk = {names, caret, visit, data, 0};
+  return enl_input_each_in_sets (names, input, caret, visit, NULL, data);
+}
+
+uint32_t
+enl_input_each_in_sets (const EnlNames *names, char *const *input, bool caret, EnlVisit visit,
+                        EnlVisitSet visit_set, void *data)
+{
+  Walk walk = {names, caret, visit, visit_set, data, 0};
 
   for (; *input; input++)
     read_input (&walk, *input);

@@ -8,12 +8,12 @@
 
 static const EnlVerb verb[] = {
     {"sites", "Acidic hydrogens, ranked, with pKa, 90 % interval and nearest measured compounds.",
-     "fsx", true, enl_verb_sites},
-    {"forms", "Contributing structures of the anion, with weights and charges.", "fsa", true,
+     "fsxl", true, enl_verb_sites},
+    {"forms", "Contributing structures of the anion, with weights and charges.", "fsal", true,
      enl_verb_forms},
     {"bases", "Every base against one site: gap, conversion, verdict, cautions; best first.",
-     "fsaect", true, enl_verb_bases},
-    {"figure", "Writes an annotated picture.", "sveowdma", true, enl_verb_figure},
+     "fsaectl", true, enl_verb_bases},
+    {"figure", "Writes an annotated picture.", "sveowdmal", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",
      true, enl_verb_molecule},
     {"validate", "Left-out errors of the estimator, class by class.", "fgkFPRpwdm", false,

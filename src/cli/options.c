@@ -24,6 +24,7 @@ static const Option option[] = {
     {'w', "--width-mm", "W", "width of the picture in mm (default: natural size)"},
     {'d', "--dpi", "D", "resolution of a .png (default 150)"},
     {'m', "--theme", "NAME", "light, dark, print or projector (default print)"},
+    {'l', "--lab", "FILE.tsv", "own measured values that join the table (may be given repeatedly)"},
     {'g', "--fold", "compound|cluster", "what is left out together (default compound)"},
     {'k', "--ranking", NULL, "how many pairs of acids stand in the right order"},
     {'F', "--families", NULL, "the same for every family of compounds"},
@@ -100,6 +101,17 @@ take_atom (const char *text, uint32_t *out)
 }
 
 static bool
+add_lab (const char *path, EnlOptions *out)
+{
+  guint n = out->lab ? g_strv_length (out->lab) : 0;
+
+  out->lab = g_renew (char *, out->lab, n + 2);
+  out->lab[n] = g_strdup (path);
+  out->lab[n + 1] = NULL;
+  return path[0] != '\0';
+}
+
+static bool
 take_value (char letter, const char *text, EnlOptions *out)
 {
   switch (letter) {
@@ -128,6 +140,8 @@ take_value (char letter, const char *text, EnlOptions *out)
   case 'o':
     out->out = text;
     return true;
+  case 'l':
+    return add_lab (text, out);
   case 'm':
     out->theme = text;
     return true;
@@ -229,4 +243,6 @@ enl_options_clear (EnlOptions *options)
 {
   g_strfreev (options->input);
   options->input = NULL;
+  g_strfreev (options->lab);
+  options->lab = NULL;
 }

@@ -21,6 +21,7 @@ typedef struct {
   EnlListing listing;
   bool explain; /* sites: add why */
   double width_mm, dpi;
+  char **lab;   /* files with own values, NULL-terminated, or NULL */
   char **input; /* NULL-terminated */
 } EnlOptions;
 

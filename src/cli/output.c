@@ -16,8 +16,9 @@ struct EnlOutput {
   EnlFormat format;
   const char *const *column;
   uint32_t n_columns;
-  GArray *cell; /* of the rows held back (text) or of the present row */
-  GArray *note; /* to rows held back (text) */
+  GArray *cell;      /* of the rows held back (text) or of the present row */
+  GArray *note;      /* to rows held back (text) */
+  GPtrArray *member; /* json: names and texts (NULL: null) behind the present row's cells */
 };
 
 /* Text below a row. */
@@ -50,6 +51,7 @@ enl_output_new (EnlFormat format, const char *const *column)
   g_array_set_clear_func (out->cell, clear_cell);
   out->note = g_array_new (FALSE, FALSE, sizeof (Note));
   g_array_set_clear_func (out->note, clear_note);
+  out->member = g_ptr_array_new_with_free_func (g_free);
   if (format == ENL_FORMAT_TSV)
     for (uint32_t i = 0; i < out->n_columns; i++)
       printf ("%s%c", column[i], i + 1 < out->n_columns ? '\t' : '\n');
@@ -106,6 +108,16 @@ print_json_row (const EnlOutput *out)
     else
       print_json_string (cell->text);
   }
+  for (guint i = 0; i < out->member->len; i += 2) {
+    const char *text = out->member->pdata[i + 1];
+    fputs (", ", stdout);
+    print_json_string (out->member->pdata[i]);
+    fputs (": ", stdout);
+    if (text)
+      print_json_string (text);
+    else
+      fputs ("null", stdout);
+  }
   fputs ("}\n", stdout);
 }
 
@@ -122,6 +134,16 @@ add_cell (EnlOutput *out, char *text, bool number, bool missing)
   else
     print_json_row (out);
   g_array_set_size (out->cell, 0);
+  g_ptr_array_set_size (out->member, 0);
+}
+
+void
+enl_output_member (EnlOutput *out, const char *name, const char *text)
+{
+  if (out->format != ENL_FORMAT_JSON)
+    return;
+  g_ptr_array_add (out->member, g_strdup (name));
+  g_ptr_array_add (out->member, g_strdup (text));
 }
 
 void
@@ -237,5 +259,6 @@ enl_output_finish (EnlOutput *out)
   enl_output_block (out, NULL);
   g_array_unref (out->cell);
   g_array_unref (out->note);
+  g_ptr_array_unref (out->member);
   g_free (out);
 }

@@ -20,6 +20,9 @@ void enl_output_finish (EnlOutput *out);
 void enl_output_text (EnlOutput *out, const char *text);
 void enl_output_number (EnlOutput *out, double value, int decimals);
 void enl_output_integer (EnlOutput *out, int64_t value);
+/* json only: a further member of the row that is being filled, null for NULL. Comes before the last
+ * cell of its row, and behind it in the object. */
+void enl_output_member (EnlOutput *out, const char *name, const char *text);
 
 /* A cell that is JSON itself (not quoted again); NULL is an empty cell (null in json). For the json
  * format. */

@@ -81,6 +81,8 @@ print_candidate (const EnlRun *run, const char *name, uint32_t position, const E
   enl_output_number (run->out, c->high, 6);
   enl_output_number (run->out, c->selectivity, 4);
   enl_output_text (run->out, c->words);
+  enl_output_member (run->out, "remark", q->estimate[q->target].remark);
+  enl_output_member (run->out, "site_footing", q->estimate[q->target].footing);
   enl_output_text (run->out, text);
   return run->options->format == ENL_FORMAT_JSON ? add_json_cells (run, q, c, err) : ENL_OK;
 }
@@ -108,6 +110,23 @@ print_advice (const EnlRun *run, const EnlQuestion *q, const EnlCandidate *best,
   return ENL_OK;
 }
 
+/* What to know about the value of the site that all gaps rest on. */
+static void
+print_value (const EnlRun *run, const EnlAnalysis *a, uint32_t site)
+{
+  const EnlEstimate *e = &a->estimate[site];
+  g_autofree char *line = g_strdup_printf (
+      "  site: %s, pKa %.1f (%.1f to %.1f) in %s, %s%s%s", a->sites->site[site].position, e->value,
+      e->low, e->high, enl_solvent_heading (e->solvent), enl_basis_text (e->basis),
+      e->remark ? "; " : "", e->remark ? e->remark : "");
+
+  enl_output_block (run->out, line);
+  if (e->footing) {
+    g_autofree char *footing = g_strdup_printf ("  %s", e->footing);
+    enl_output_block (run->out, footing);
+  }
+}
+
 static EnlStatus
 visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
@@ -127,6 +146,8 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
   uint32_t position = enl_molecule_atom (a->mol, a->sites->site[site].atom[0])->input;
   for (uint32_t i = 0; status == ENL_OK && i < comparison->n_candidates; i++)
     status = print_candidate (run, name, position, &question, &comparison->candidate[i], err);
+  if (status == ENL_OK)
+    print_value (run, a, site);
   if (status == ENL_OK && run->options->format == ENL_FORMAT_TEXT)
     status = print_advice (run, &question, &comparison->candidate[0], err);
   return status;

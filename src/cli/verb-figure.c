@@ -7,8 +7,7 @@
 #include "draw/substrates-sheet.h"
 
 typedef struct {
-  const EnlKnowledge *knowledge;
-  const EnlOptions *options;
+  EnlRun run;
   GPtrArray *analysis; /* EnlAnalysis, in the order of the inputs */
   GPtrArray *name;
 } Run;
@@ -18,8 +17,8 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
 {
   Run *run = data;
   EnlAnalysis *a;
-  EnlStatus status =
-      enl_analysis_new (run->knowledge, mol, run->options->conditions.solvent, true, &a, err);
+  EnlStatus status = enl_analysis_new (run->run.knowledge, mol,
+                                       run->run.options->conditions.solvent, true, &a, err);
 
   if (status != ENL_OK)
     return status;
@@ -39,7 +38,7 @@ substrates_scene (const Run *run, const EnlTheme *theme)
         g_ptr_array_index (run->name, i), a->mol, a->sites, a->estimate, a->rank, ENL_NONE, NULL};
   }
   const EnlSubstratesSheet sheet = {
-      .card = card, .n_cards = run->analysis->len, .solvent = run->options->conditions.solvent};
+      .card = card, .n_cards = run->analysis->len, .solvent = run->run.options->conditions.solvent};
   return enl_substrates_sheet (&sheet, theme);
 }
 
@@ -54,7 +53,7 @@ forms_scene (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *er
     const EnlAnalysis *a = g_ptr_array_index (run->analysis, i);
     g_autoptr (EnlForms) forms = NULL;
     uint32_t site;
-    EnlStatus status = enl_cli_site (a, run->options->atom, &site, err);
+    EnlStatus status = enl_cli_site (a, run->run.options->atom, &site, err);
     if (status == ENL_OK)
       status = enl_forms_of_site (a->mol, a->sites->site[site].atom[0], &forms, err);
     if (status != ENL_OK) {
@@ -74,7 +73,7 @@ forms_scene (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *er
 static EnlStatus
 write_figure (const Run *run, const EnlTheme *theme, EnlError *err)
 {
-  const EnlOptions *o = run->options;
+  const EnlOptions *o = run->run.options;
   g_autoptr (EnlScene) scene = NULL;
   EnlExport how = {o->width_mm, o->dpi, false, "Enolith"};
   EnlStatus status = ENL_OK;
@@ -108,15 +107,15 @@ check_options (const EnlOptions *o)
 static int
 make_figure (Run *run)
 {
-  const EnlTheme *theme = enl_theme_get ((EnlThemeName)enl_theme_find (run->options->theme));
-  uint32_t failed = enl_input_each (run->knowledge->names, run->options->input, true, visit, run);
+  const EnlTheme *theme = enl_theme_get ((EnlThemeName)enl_theme_find (run->run.options->theme));
+  uint32_t failed = enl_cli_visit (&run->run, true, visit);
   EnlError err = {0};
 
   if (run->analysis->len == 0)
     return 1;
   if (write_figure (run, theme, &err) != ENL_OK) {
     g_autofree char *message = enl_error_message (&err);
-    fprintf (stderr, "%s: %s\n", run->options->out, message);
+    fprintf (stderr, "%s: %s\n", run->run.options->out, message);
     return 1;
   }
   return failed > 0;
@@ -126,15 +125,17 @@ int
 enl_verb_figure (const EnlOptions *options)
 {
   int code = check_options (options);
-  EnlKnowledge *knowledge = code ? NULL : enl_cli_knowledge ();
+  Run run;
 
-  if (!knowledge)
-    return code ? code : 1;
-  Run run = {knowledge, options, g_ptr_array_new_with_free_func ((GDestroyNotify)enl_analysis_free),
-             g_ptr_array_new_with_free_func (g_free)};
+  if (code != 0)
+    return code;
+  if (!enl_cli_begin (&run.run, options))
+    return 1;
+  run.analysis = g_ptr_array_new_with_free_func ((GDestroyNotify)enl_analysis_free);
+  run.name = g_ptr_array_new_with_free_func (g_free);
   code = make_figure (&run);
   g_ptr_array_unref (run.analysis);
   g_ptr_array_unref (run.name);
-  enl_knowledge_free (knowledge);
+  enl_cli_end (&run.run);
   return code;
 }

@@ -26,8 +26,8 @@ precedents (const EnlReference *reference, const EnlEstimate *e)
   for (uint32_t i = 0; i < e->n_precedents; i++) {
     const EnlReferenceRow *row = enl_reference_row (reference, e->precedent[i].row);
     g_autofree char *value = g_strdup_printf ("%.4g", row->pka);
-    g_string_append_printf (out, "%s%s %s in %s (%s)", i ? " | " : "", row->name, value,
-                            enl_solvent_label (row->solvent), row->source);
+    g_string_append_printf (out, "%s%s%s %s in %s (%s)", i ? " | " : "", row->lab ? "lab: " : "",
+                            row->name, value, enl_solvent_label (row->solvent), row->source);
   }
   return g_string_free (out, FALSE);
 }
@@ -42,8 +42,9 @@ short_precedents (const EnlReference *reference, const EnlEstimate *e)
     const EnlReferenceRow *row = enl_reference_row (reference, e->precedent[i].row);
     bool same = row->solvent == e->solvent ||
                 (row->solvent == ENL_SOLVENT_DMSO && e->solvent == ENL_SOLVENT_THF);
-    g_string_append_printf (out, "%s%s %.4g%s%s", i ? "; " : "", row->name, row->pka,
-                            same ? "" : " in ", same ? "" : enl_solvent_label (row->solvent));
+    g_string_append_printf (out, "%s%s%s %.4g%s%s", i ? "; " : "", row->lab ? "lab: " : "",
+                            row->name, row->pka, same ? "" : " in ",
+                            same ? "" : enl_solvent_label (row->solvent));
   }
   return g_string_free (out, FALSE);
 }
@@ -92,6 +93,8 @@ print_site (const EnlRun *run, const char *name, const EnlAnalysis *a, uint32_t 
   enl_output_number (run->out, e->low, 2);
   enl_output_number (run->out, e->high, 2);
   enl_output_text (run->out, enl_basis_text (e->basis));
+  enl_output_member (run->out, "remark", e->remark);
+  enl_output_member (run->out, "footing", e->footing);
   enl_output_text (run->out, rows);
   if (run->options->explain)
     print_why (run, a, a->rank[rank]);
@@ -130,12 +133,8 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
     print_reason (run, name, a->sites->no_enol);
   for (uint32_t i = 0; i < a->sites->n_sites; i++)
     print_site (run, name, a, i);
-  GString *remarks = g_string_new (NULL);
-  for (uint32_t i = 0; i < a->sites->n_sites; i++)
-    if (a->estimate[a->rank[i]].remark)
-      g_string_append_printf (remarks, "  site %u: %s\n", i + 1, a->estimate[a->rank[i]].remark);
-  enl_output_block (run->out, remarks->str);
-  g_string_free (remarks, TRUE);
+  g_autofree char *remarks = enl_cli_remarks (a);
+  enl_output_block (run->out, remarks);
   return ENL_OK;
 }
 

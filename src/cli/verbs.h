@@ -13,16 +13,33 @@ int enl_verb_validate (const EnlOptions *options);
 
 /* What several verbs need. */
 
-/* A verb at work: given to its visit function as data. */
+/* A verb at work: given to its visit function as data. A verb that needs more puts it behind. */
 typedef struct {
-  const EnlKnowledge *knowledge;
+  const EnlKnowledge *knowledge; /* with the own values that hold for the present input */
   const EnlOptions *options;
   EnlOutput *out;
+  /* the inside */
+  EnlKnowledge *base;         /* without own values */
+  EnlKnowledge *own, *of_set; /* with those of --lab; with those of the set being read as well */
+  EnlLab *lab;                /* of --lab */
+  GHashTable *told;           /* warnings that were printed */
 } EnlRun;
+
+/* Opens the knowledge and the files of --lab; false when one is at fault, which has been explained
+ * on standard error. Contradictory values are told there, too. */
+bool enl_cli_begin (EnlRun *run, const EnlOptions *options);
+/* Visits every input with `run` as data; own values of a set hold for its substrates. Returns how
+ * many inputs failed. */
+uint32_t enl_cli_visit (EnlRun *run, bool caret, EnlVisit visit);
+void enl_cli_end (EnlRun *run);
 
 /* Opens the knowledge, visits every input with an EnlRun whose output has these columns, and
  * returns the exit code. */
 int enl_cli_run (const EnlOptions *options, const char *const *column, EnlVisit visit);
+
+/* text: a line for every sentence among remarks and footings, with the sites it holds for; "" when
+ * there is none. New string (g_free). */
+char *enl_cli_remarks (const EnlAnalysis *analysis) ENL_MUST_USE;
 
 /* The knowledge inside the program; explains itself on standard error and returns NULL when a
  * table is damaged (a broken build). Caller: enl_knowledge_free. */

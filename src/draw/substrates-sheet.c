@@ -251,10 +251,9 @@ draw_foot (const Sheet *s, double y, double right)
   y += 0.8 * s->theme->small_size;
   if (s->has_axis) {
     double size = s->theme->small_size;
-    const char *footing = s->sheet->solvent == ENL_SOLVENT_THF ? " (DMSO-based footing)" : "";
     g_autofree char *words =
-        g_strdup_printf ("pKa in %s%s at 25\u00A0°C; bars show the 90\u00A0%% interval.",
-                         enl_solvent_label (s->sheet->solvent), footing);
+        g_strdup_printf ("pKa in %s at 25\u00A0°C; bars show the 90\u00A0%% interval.",
+                         enl_solvent_heading (s->sheet->solvent));
     enl_scene_text (s->scene, (EnlPoint){x, y}, words, size, false, 0, 0, ENL_TONE_MUTED);
     y += enl_text_line_height (s->theme->family, size);
     y = draw_legend (s, x, y + 0.3 * s->theme->small_size) + 0.3 * s->theme->small_size;

@@ -196,6 +196,80 @@ def check_failures():
         expect('a missing file', 'missing.smi' in err, err)
 
 
+LAB = '''structure\tatom\tsolvent\tpka\tsigma\tname\tnote
+O=C(CC(C)C)c1ccc(CCC)cc1\t3\tdmso\t30.0\t0.2\tblock K\trun 1
+CC(=O)c1ccccc1\t1\tdmso\t23.1\t0.2\t\t
+CCCC(=O)CC(=O)OC\t6\twater\t9.9\t0.1\tester\tmorning
+CCCC(=O)CC(=O)OC\t6\twater\t11.9\t0.2\tester\tevening
+'''
+
+
+def check_lab():
+    near, own = 'O=C(CC(C)CC)c1ccc(CC)cc1', 'O=C(CC(C)C)c1ccc(CCC)cc1'
+    with tempfile.TemporaryDirectory() as folder:
+        path = os.path.join(folder, 'own.tsv')
+        with open(path, 'w') as stream:
+            stream.write(LAB)
+        plain = run('sites', '--format', 'tsv', near, own)[0]
+        out, err = run('sites', '--lab', path, '--format', 'tsv', near, own)
+        names, rows = table(out)
+        expect('lab: the columns stay', names == table(plain)[0], names)
+        mine = [r for r in rows if r['substrate'] == own and '3' in r['atoms'].split(',')][0]
+        expect('lab: the own value stands', mine['basis'] == 'lab' and float(mine['pka']) == 30.0, mine)
+        expect('lab: it leads the precedents', mine['precedents'].startswith('lab: block K 30 in DMSO'), mine)
+        before = [r for r in table(plain)[1] if r['atoms'] == '3'][0]
+        after = [r for r in rows if r['atoms'] == '3'][0]
+        expect('lab: the neighbour moves', after['basis'] == 'estimated' and
+               float(after['pka']) > float(before['pka']) + 0.5, (before, after))
+        expect('lab: without it the old numbers', run('sites', '--format', 'tsv', near, own)[0] == plain)
+        expect('lab: contradictions are warned of', err.count('warning: ') == 2 and 'published 24.7' in err and
+               '9.9 (sigma 0.1, line 4, morning) and 11.9 (sigma 0.2, line 5, evening)' in err, err)
+        out, _ = run('sites', '--lab', path, '--solvent', 'water', '--format', 'json', 'CCCC(=O)CC(=O)OC')
+        found = [json.loads(line) for line in out.splitlines()]
+        expect('lab: json has the remark', found[0]['basis'] == 'lab' and found[0]['pka'] == 9.9 and
+               found[0]['low'] < 9.9 and found[0]['high'] > 11.9 and 'disagree' in found[0]['remark'], found)
+        out, _ = run('bases', '--lab', path, '--format', 'tsv', 'acetophenone')
+        dimsyl = [r for r in table(out)[1] if r['base'] == 'kotbu'][0]
+        expect('lab: bases are set against it', abs(float(dimsyl['gap']) - (float(dimsyl['pkah']) - 23.1)) < 1e-6,
+               dimsyl)
+        with open(path, 'a') as stream:
+            stream.write('C1CC\t\tdmso\t20\n')
+        out, err = run('sites', '--lab', path, 'acetone', code=1)
+        expect('lab: a fault has its place, and nothing is printed', 'own.tsv: line 6, column 2: ' in err and
+               out == '', (out, err))
+        _, err = run('sites', '--lab', os.path.join(folder, 'none.tsv'), 'acetone', code=1)
+        expect('lab: a missing file', 'none.tsv' in err, err)
+        path = os.path.join(folder, 'own.enolith')
+        values = [{'structure': 'CC(=O)c1ccccc1', 'atom': 1, 'solvent': 'dmso', 'pka': 24.6}]
+        with open(path, 'w') as stream:
+            json.dump({'format': 'enolith-set', 'version': 1, 'substrates': [{'structure': 'acetophenone'}],
+                       'lab': values}, stream)
+        _, rows = tsv('sites', path, 'acetophenone')
+        expect('lab: a set brings its own, for itself only', [r['basis'] for r in rows] == ['lab', 'measured'],
+               rows)
+        values.append({'structure': 'CC(=O)C', 'solvent': 'thf', 'pka': 26})
+        with open(path, 'w') as stream:
+            json.dump({'format': 'enolith-set', 'version': 1, 'substrates': [{'structure': 'acetophenone'}],
+                       'lab': values}, stream)
+        out, err = run('sites', '--format', 'tsv', path, code=1)
+        expect('lab: a bad value of a set is told, the rest is used', 'lab value 2: ' in err and 'THF' in err and
+               '\tlab\t' in out, (out, err))
+
+
+def check_footing():
+    out, _ = run('sites', '--solvent', 'thf', 'CC(=O)c1ccc(O)cc1', 'dimethyl sulfone')
+    expect('THF: the footing is named', out.count('DMSO-based footing') == 3, out)
+    expect('THF: a localised carbanion is told', 'localised carbanion' in out, out)
+    out, _ = run('sites', '--solvent', 'thf', '--format', 'json', 'acetophenone')
+    expect('THF: json, too', json.loads(out)['footing'].startswith('DMSO-based footing'), out)
+    out, _ = run('bases', '--solvent', 'thf', 'acetophenone')
+    expect('THF: bases, too', 'THF (DMSO-based footing)' in out, out)
+    out, _ = run('bases', '--solvent', 'thf', '--format', 'json', 'acetophenone')
+    expect('THF: bases in json, too', all('DMSO-based footing' in json.loads(line)['site_footing'] for line in out.splitlines()))
+    out, _ = run('sites', '--format', 'json', 'acetophenone')
+    expect('DMSO has no footing', json.loads(out)['footing'] is None, out)
+
+
 def check_usage():
     for arguments in ((), ('boil', 'CC'), ('sites',), ('sites', '--solvent', 'tar', 'CC'),
                       ('sites', '--colour', 'CC'), ('sites', '--format'), ('bases', '--equiv', '-1', 'CC=O'),
@@ -305,7 +379,7 @@ def check_plot(total):
 
 def main():
     for check in (check_sites, check_explain, check_forms, check_bases, check_molecule, check_formats,
-                  check_failures, check_usage, check_figures, check_validate):
+                  check_failures, check_lab, check_footing, check_usage, check_figures, check_validate):
         check()
     print('%d checks, %d failed' % (count, len(failures)))
     print('\n'.join(failures))

@@ -184,6 +184,24 @@ START_TEST (sheet_is_clear_in_every_theme)
 }
 END_TEST
 
+START_TEST (the_caption_names_the_footing)
+{
+  const EnlTheme *theme = enl_theme_get (ENL_THEME_PRINT);
+  Cards cards;
+
+  fill_cards (&cards);
+  EnlSubstratesSheet sheet = {.card = cards.card, .n_cards = 1, .solvent = ENL_SOLVENT_THF};
+  g_autoptr (EnlScene) thf = enl_substrates_sheet (&sheet, theme);
+  sheet.solvent = ENL_SOLVENT_DMSO;
+  g_autoptr (EnlScene) dmso = enl_substrates_sheet (&sheet, theme);
+  g_autofree char *thf_dump = enl_scene_dump (thf);
+  g_autofree char *dmso_dump = enl_scene_dump (dmso);
+  ck_assert_ptr_nonnull (strstr (thf_dump, "pKa in THF (DMSO-based footing)"));
+  ck_assert_ptr_null (strstr (dmso_dump, "footing"));
+  clear_cards (&cards);
+}
+END_TEST
+
 START_TEST (empty_and_bare_sheets_are_fine)
 {
   const EnlTheme *theme = enl_theme_get (ENL_THEME_LIGHT);
@@ -213,6 +231,7 @@ sheets_suite (void)
   tcase_add_loop_test (tc, values_have_one_decimal_and_a_real_minus, 0, (int)ENL_COUNT (pka));
   tcase_add_test (tc, measured_values_have_no_interval_text);
   tcase_add_loop_test (tc, sheet_is_clear_in_every_theme, 0, ENL_N_THEMES);
+  tcase_add_test (tc, the_caption_names_the_footing);
   tcase_add_test (tc, empty_and_bare_sheets_are_fine);
   suite_add_tcase (suite, tc);
   return suite;

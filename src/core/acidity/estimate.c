@@ -3,11 +3,11 @@
 #include <glib.h>
 
 static const struct {
-  const char *id, *label;
+  const char *id, *label, *heading;
 } solvent_word[ENL_N_SOLVENTS] = {
-    [ENL_SOLVENT_DMSO] = {"dmso", "DMSO"},
-    [ENL_SOLVENT_WATER] = {"water", "water"},
-    [ENL_SOLVENT_THF] = {"thf", "THF"},
+    [ENL_SOLVENT_DMSO] = {"dmso", "DMSO", "DMSO"},
+    [ENL_SOLVENT_WATER] = {"water", "water", "water"},
+    [ENL_SOLVENT_THF] = {"thf", "THF", "THF (DMSO-based footing)"},
 };
 
 const char *
@@ -22,6 +22,13 @@ enl_solvent_label (EnlSolvent solvent)
 {
   g_assert (solvent < ENL_N_SOLVENTS);
   return solvent_word[solvent].label;
+}
+
+const char *
+enl_solvent_heading (EnlSolvent solvent)
+{
+  g_assert (solvent < ENL_N_SOLVENTS);
+  return solvent_word[solvent].heading;
 }
 
 bool

@@ -10,6 +10,8 @@ typedef enum { ENL_SOLVENT_DMSO, ENL_SOLVENT_WATER, ENL_SOLVENT_THF, ENL_N_SOLVE
 const char *enl_solvent_id (EnlSolvent solvent);
 /* "DMSO", "water", "THF": the words of the screen. */
 const char *enl_solvent_label (EnlSolvent solvent);
+/* "DMSO", "water", "THF (DMSO-based footing)": where pKa values stand below or beside. */
+const char *enl_solvent_heading (EnlSolvent solvent);
 /* False for an unknown word; case does not matter. */
 bool enl_solvent_parse (const char *text, EnlSolvent *out);
 
@@ -37,10 +39,13 @@ typedef struct {
   double value, low, high, sigma;
   EnlSolvent solvent;
   EnlBasis basis;
-  int row;            /* of the reference table when measured, else -1 */
-  bool outside;       /* outside the experience of the model: see `remark` */
-  const char *remark; /* static sentence or NULL: footing, second deprotonation, outside ... */
-  EnlPrecedent precedent[ENL_MAX_PRECEDENTS]; /* largest weight first; for a measured value the
-                                                 first one is the row itself with weight 1 */
+  int row;             /* of the reference table when measured or the user's own, else -1 */
+  bool outside;        /* outside the experience of the model: see `remark` */
+  const char *remark;  /* sentence or NULL: second deprotonation, outside, contradictory own values;
+                          static, or owned by the estimator */
+  const char *footing; /* static sentence in THF: on what footing the value stands; else NULL */
+  EnlPrecedent precedent[ENL_MAX_PRECEDENTS]; /* largest weight first; for a measured or own
+                                                 value the first one is the row itself with
+                                                 weight 1 */
   uint32_t n_precedents;
 } EnlEstimate;

@@ -4,20 +4,19 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/acidity/footing.h"
 #include "core/acidity/part.h"
 #include "core/acidity/predict.h"
 
 /* Half width of the 90 % interval of a normal law in standard deviations. */
 #define NORMAL_WIDTH 1.645
 /* Extra standard deviations (pK units) for what the fit cannot see. */
-#define THF_SIGMA    1.5 /* spread between the footings used in THF and the scale in DMSO */
 #define SECOND_SIGMA 2.0 /* second deprotonations: few were measured */
 #define FAR_SIGMA    3.0 /* outside the experience of the model */
 /* No acid that this program is for lies beyond these. */
 #define LEAST_PKA -20.0
 #define MOST_PKA  65.0
 
-static const char remark_thf[] = "DMSO value; no single THF scale exists";
 static const char remark_second[] =
     "second deprotonation: another hydrogen goes first, and the number is that of its anion";
 static const char remark_second_neutral[] =
@@ -25,8 +24,12 @@ static const char remark_second_neutral[] =
     "the anion is much less acidic";
 
 struct EnlEstimator {
+  gatomicrefcount references;
+  EnlEstimator *base; /* held: what this one extends, or NULL */
   const EnlReference *ref;
+  EnlReference *owned_ref; /* the same where own values stand behind the published ones */
   EnlPredictor *predictor;
+  EnlLabJudgement *lab; /* NULL without own values */
 };
 
 EnlStatus
@@ -37,6 +40,7 @@ enl_estimator_open (const EnlReference *ref, const char *bytes, size_t size, Enl
   EnlStatus status = enl_predictor_open (ref, bytes, size, &estimator->predictor, err);
 
   *out = NULL;
+  g_atomic_ref_count_init (&estimator->references);
   if (status != ENL_OK)
     return status;
   estimator->ref = ref;
@@ -44,13 +48,35 @@ enl_estimator_open (const EnlReference *ref, const char *bytes, size_t size, Enl
   return ENL_OK;
 }
 
+EnlEstimator *
+enl_estimator_ref (EnlEstimator *estimator)
+{
+  g_atomic_ref_count_inc (&estimator->references);
+  return estimator;
+}
+
 void
 enl_estimator_free (EnlEstimator *estimator)
 {
-  if (!estimator)
+  if (!estimator || !g_atomic_ref_count_dec (&estimator->references))
     return;
   enl_predictor_free (estimator->predictor);
+  enl_lab_judgement_free (estimator->lab);
+  enl_reference_free (estimator->owned_ref);
+  enl_estimator_free (estimator->base);
   g_free (estimator);
+}
+
+const EnlReference *
+enl_estimator_reference (const EnlEstimator *estimator)
+{
+  return estimator->ref;
+}
+
+const EnlLabJudgement *
+enl_estimator_lab (const EnlEstimator *estimator)
+{
+  return estimator->lab;
 }
 
 /* ---- one run ---- */
@@ -102,19 +128,45 @@ take_prediction (const Run *run, const EnlPrediction *prediction, EnlEstimate *e
   }
 }
 
-/* Puts the published value in place of the estimate; the row leads its precedents. */
+static void
+take_published (const EnlReferenceRow *published, EnlEstimate *e)
+{
+  e->value = published->pka;
+  e->basis = ENL_BASIS_MEASURED;
+  e->remark = NULL;
+  set_interval (e, NORMAL_WIDTH * published->sigma);
+}
+
+/* `row` is one of the own values for the site, and becomes the one that is shown. */
+static void
+take_lab (const EnlEstimator *estimator, int *row, EnlEstimate *e)
+{
+  const EnlLabJudgement *lab = estimator->lab;
+  uint32_t first = enl_reference_rows (estimator->ref) - lab->n_rows;
+  const EnlLabSite *site = &lab->site[lab->site_of[(uint32_t)*row - first]];
+
+  e->value = site->value;
+  e->low = site->low;
+  e->high = site->high;
+  e->sigma = site->sigma;
+  e->basis = ENL_BASIS_LAB;
+  e->remark = site->remark;
+  *row = (int)(first + site->shown);
+}
+
+/* Puts an own or published value in place of the estimate; the row leads its precedents. */
 static void
 take_row (const Run *run, int row, EnlEstimate *e)
 {
-  const EnlReferenceRow *published = enl_reference_row (run->estimator->ref, (uint32_t)row);
+  const EnlReferenceRow *known = enl_reference_row (run->estimator->ref, (uint32_t)row);
   EnlEstimate old = *e;
 
-  e->value = published->pka;
-  e->basis = ENL_BASIS_MEASURED;
+  if (known->lab)
+    take_lab (run->estimator, &row, e);
+  else
+    take_published (known, e);
   e->row = row;
   e->outside = false;
-  e->remark = NULL;
-  set_interval (e, NORMAL_WIDTH * published->sigma);
   e->precedent[0] = (EnlPrecedent){(uint32_t)row, 1, 1};
   e->n_precedents = 1;
   for (uint32_t i = 0; i < old.n_precedents && e->n_precedents < ENL_MAX_PRECEDENTS; i++)
@@ -135,10 +187,12 @@ enl_estimator_atom (const EnlMolecule *mol, const EnlSite *site)
 static int
 row_of_site (const EnlSite *site, const int *row)
 {
+  int found = -1;
+
   for (uint32_t k = 0; k < site->n_atoms; k++)
-    if (row[site->atom[k]] >= 0)
-      return row[site->atom[k]];
-  return -1;
+    if (found < 0 || row[site->atom[k]] > found) /* own rows stand behind the published ones */
+      found = row[site->atom[k]];
+  return found;
 }
 
 /* Estimates the sites for which second == `second` on `mol` (the molecule, or its anion with the
@@ -233,7 +287,7 @@ fill_seconds (const Run *run)
     int published = row_of_site (site, row);
     if (published >= 0)
       take_row (run, published, e);
-    if (e->basis == ENL_BASIS_MEASURED)
+    if (e->basis != ENL_BASIS_ESTIMATED)
       continue;
     e->value = MAX (e->value, floor); /* a second loss is never easier than the first */
     e->outside = true;
@@ -244,17 +298,17 @@ fill_seconds (const Run *run)
 
 /* Values of the scale in DMSO, on the footing that THF lacks. */
 static void
-move_to_thf (const EnlSites *sites, EnlEstimate *out)
+move_to_thf (const EnlMolecule *mol, const EnlSites *sites, EnlEstimate *out)
 {
+  g_autoptr (EnlPi) pi = enl_pi_new (mol);
+
   for (uint32_t i = 0; i < sites->n_sites; i++) {
+    const EnlFooting *footing = enl_footing_in_thf (mol, pi, &sites->site[i]);
     out[i].solvent = ENL_SOLVENT_THF;
-    if (out[i].basis == ENL_BASIS_MEASURED) { /* in DMSO, so in THF it is an estimate */
-      out[i].basis = ENL_BASIS_ESTIMATED;
-      out[i].row = -1;
-    }
-    if (!out[i].remark)
-      out[i].remark = remark_thf;
-    widen (&out[i], THF_SIGMA);
+    out[i].basis = ENL_BASIS_ESTIMATED; /* also where it was measured in DMSO */
+    out[i].row = -1;
+    out[i].footing = footing->sentence;
+    widen (&out[i], footing->sigma);
   }
 }
 
@@ -307,7 +361,115 @@ enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const 
   run_fragments (estimator, mol, sites, solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
                  out);
   if (solvent == ENL_SOLVENT_THF)
-    move_to_thf (sites, out);
+    move_to_thf (mol, sites, out);
+  return ENL_OK;
+}
+
+/* ---- own values ---- */
+
+/* What was measured at a site that another hydrogen precedes is the anion: `row` gets that. Fills
+ * what the model makes of the site without own values. */
+static EnlStatus
+settle_species (const EnlEstimator *base, EnlReferenceRow *row, EnlMolecule **owned,
+                EnlLabExpectation *expectation, EnlError *err)
+{
+  g_autoptr (EnlSites) sites = NULL;
+  EnlStatus status = enl_sites_find (row->mol, &sites, err);
+
+  if (status != ENL_OK)
+    return status;
+  g_autofree EnlEstimate *out = g_new0 (EnlEstimate, sites->n_sites + 1);
+  const EnlSite *site = enl_sites_of_atom (sites, row->site);
+  g_assert (site); /* lab.c has looked */
+  row->site = enl_estimator_atom (row->mol, site);
+  run_fragment (base, row->mol, sites, row->solvent, out);
+  expectation->known = !out[site - sites->site].outside;
+  if (!site->second)
+    return ENL_OK;
+  *owned = enl_estimator_first_anion (row->mol, sites, out);
+  row->mol = *owned ? *owned : row->mol;
+  return ENL_OK;
+}
+
+static EnlReferenceRow
+row_of_entry (const EnlLabRow *row)
+{
+  const EnlLabEntry *e = row->entry;
+
+  return (EnlReferenceRow){
+      .name = e->name[0] ? e->name : e->structure,
+      .smiles = e->structure,
+      .source = e->source[0] ? e->source : "own value",
+      .note = e->note,
+      .pka = e->pka,
+      .sigma = e->sigma,
+      .solvent = e->solvent,
+      .mol = row->mol,
+      .site = row->site,
+  };
+}
+
+static EnlReference *
+extend_table (const EnlReference *published, const EnlLab *lab, EnlReferenceRow *extra)
+{
+  uint32_t n = enl_lab_size (lab);
+  g_autofree double *sigma = g_new (double, n + 1);
+  g_autoptr (EnlReference) as_typed = enl_reference_extend (published, extra, n);
+
+  enl_lab_sigmas (lab, as_typed, sigma);
+  for (uint32_t i = 0; i < n; i++)
+    extra[i].sigma = sigma[i];
+  return enl_reference_extend (published, extra, n);
+}
+
+static void
+judge_lab (EnlEstimator *estimator, const EnlLab *lab, EnlLabExpectation *expectation)
+{
+  uint32_t n = enl_lab_size (lab), first = enl_reference_rows (estimator->ref) - n;
+  g_autofree uint32_t *fold = g_new (uint32_t, n + 1);
+  g_autofree double *value = g_new (double, n + 1);
+  g_autofree double *half = g_new (double, n + 1);
+
+  for (uint32_t i = 0; i < n; i++)
+    fold[i] = enl_reference_first_alike (estimator->ref, first + i);
+  enl_predictor_left_out (estimator->predictor, fold, value, half);
+  for (uint32_t i = 0; i < n; i++) {
+    expectation[i].value = value[i];
+    expectation[i].half = half[i];
+  }
+  estimator->lab = enl_lab_judge (lab, estimator->ref, estimator->base->ref, expectation);
+}
+
+EnlStatus
+enl_estimator_with_lab (EnlEstimator *base, const EnlLab *lab, EnlEstimator **out, EnlError *err)
+{
+  uint32_t n = enl_lab_size (lab);
+  g_autofree EnlReferenceRow *extra = g_new0 (EnlReferenceRow, n + 1);
+  g_autofree EnlLabExpectation *expectation = g_new0 (EnlLabExpectation, n + 1);
+  g_autoptr (GPtrArray) anions = g_ptr_array_new_with_free_func ((GDestroyNotify)enl_molecule_free);
+
+  g_assert (!base->lab);
+  *out = n ? NULL : enl_estimator_ref (base);
+  if (n == 0)
+    return ENL_OK;
+  for (uint32_t i = 0; i < n; i++) {
+    EnlMolecule *anion = NULL;
+    extra[i] = row_of_entry (enl_lab_row (lab, i));
+    EnlStatus status = settle_species (base, &extra[i], &anion, &expectation[i], err);
+    if (status != ENL_OK)
+      return status;
+    g_ptr_array_add (anions, anion);
+  }
+  g_autoptr (EnlEstimator) estimator = g_new0 (EnlEstimator, 1);
+  g_atomic_ref_count_init (&estimator->references);
+  estimator->base = enl_estimator_ref (base);
+  estimator->ref = estimator->owned_ref = extend_table (base->ref, lab, extra);
+  EnlStatus status =
+      enl_predictor_extend (base->predictor, estimator->ref, &estimator->predictor, err);
+  if (status != ENL_OK)
+    return status;
+  judge_lab (estimator, lab, expectation);
+  *out = g_steal_pointer (&estimator);
   return ENL_OK;
 }
 
@@ -328,12 +490,6 @@ bool
 enl_estimator_is_held (const EnlEstimate *estimate)
 {
   return estimate->value == LEAST_PKA || estimate->value == MOST_PKA;
-}
-
-const EnlReference *
-enl_estimator_reference (const EnlEstimator *estimator)
-{
-  return estimator->ref;
 }
 
 /* ---- ranking ---- */

@@ -22,7 +22,13 @@ enl_gaussian_dot (const double *a, const double *b, size_t n)
 EnlStatus
 enl_gaussian_factor (double *matrix, uint32_t n, EnlError *err)
 {
-  for (uint32_t i = 0; i < n; i++) {
+  return enl_gaussian_factor_on (matrix, 0, n, err);
+}
+
+EnlStatus
+enl_gaussian_factor_on (double *matrix, uint32_t done, uint32_t n, EnlError *err)
+{
+  for (uint32_t i = done; i < n; i++) {
     double *row = matrix + ENL_PACKED (i, 0);
     for (uint32_t j = 0; j < i; j++) {
       const double *other = matrix + ENL_PACKED (j, 0);

@@ -16,6 +16,10 @@
 /* Cholesky factor of the symmetric positive definite packed matrix, in place; ENL_ERROR_NUMERIC
  * when it is not positive definite. */
 EnlStatus enl_gaussian_factor (double *matrix, uint32_t n, EnlError *err) ENL_MUST_USE;
+/* The same when the first `done` rows hold a factor already and only the rows behind them are new
+ * (bordering): the result is that of factoring the whole, bit by bit. */
+EnlStatus enl_gaussian_factor_on (double *matrix, uint32_t done, uint32_t n,
+                                  EnlError *err) ENL_MUST_USE;
 
 /* Solves L x = b in place for `m` right-hand sides of n numbers each, one after the other. */
 void enl_gaussian_forward (const double *factor, uint32_t n, double *b, uint32_t m);

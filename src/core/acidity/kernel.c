@@ -57,6 +57,28 @@ enl_site_set_link (EnlSiteSet *set)
   g_assert (at == set->marks->len);
 }
 
+static void
+copy_entries (EnlSiteSet *to, uint32_t at, const EnlSiteSet *from)
+{
+  memcpy (to->owned_z + (size_t)at * ENL_N_DESCRIPTORS, from->z,
+          (size_t)from->n * ENL_N_DESCRIPTORS * sizeof *from->z);
+  memcpy (to->shells + at, from->shells, from->n * sizeof *from->shells);
+  memcpy (to->element + at, from->element, from->n);
+  memcpy (to->solvent + at, from->solvent, from->n);
+  g_array_append_vals (to->marks, from->marks->data, from->marks->len);
+}
+
+EnlSiteSet *
+enl_site_set_join (const EnlSiteSet *a, const EnlSiteSet *b)
+{
+  EnlSiteSet *set = enl_site_set_new (a->n + b->n);
+
+  copy_entries (set, 0, a);
+  copy_entries (set, a->n, b);
+  enl_site_set_link (set);
+  return set;
+}
+
 void
 enl_site_set_standardise (EnlSiteSet *set, const double *centre, const double *scale)
 {

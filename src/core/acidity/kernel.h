@@ -42,6 +42,9 @@ void enl_site_set_describe (EnlSiteSet *set, uint32_t index, EnlSurvey *survey, 
                             uint32_t atom, EnlSolvent solvent);
 void enl_site_set_link (EnlSiteSet *set);
 
+/* The entries of `a`, then those of `b`, in a new set; both are linked. */
+EnlSiteSet *enl_site_set_join (const EnlSiteSet *a, const EnlSiteSet *b) ENL_MUST_USE;
+
 /* Standardises z in place: (z - centre) / scale, clipped; descriptors of scale 0 become 0. */
 void enl_site_set_standardise (EnlSiteSet *set, const double *centre, const double *scale);
 

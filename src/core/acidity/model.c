@@ -44,11 +44,12 @@ enl_acid_class_text (EnlAcidClass class_of)
   return text[class_of];
 }
 
-EnlStatus
-enl_model_describe (const EnlReference *ref, EnlSiteSet **out, EnlError *err)
+/* The rows from number `first` on. */
+static EnlStatus
+describe_from (const EnlReference *ref, uint32_t first, EnlSiteSet **out, EnlError *err)
 {
   g_autoptr (EnlConstants) constants = NULL;
-  uint32_t n = enl_reference_rows (ref);
+  uint32_t n = enl_reference_rows (ref) - first;
   g_autoptr (EnlSiteSet) set = enl_site_set_new (n);
   EnlStatus status = enl_constants_new (&constants, err);
 
@@ -56,7 +57,7 @@ enl_model_describe (const EnlReference *ref, EnlSiteSet **out, EnlError *err)
   if (status != ENL_OK)
     return status;
   for (uint32_t i = 0; i < n; i++) {
-    const EnlReferenceRow *row = enl_reference_row (ref, i);
+    const EnlReferenceRow *row = enl_reference_row (ref, first + i);
     g_autoptr (EnlSurvey) survey = enl_survey_new (row->mol, constants);
     g_autoptr (EnlPi) pi = enl_pi_new (row->mol);
     enl_site_set_describe (set, i, survey, pi, row->site, row->solvent);
@@ -64,6 +65,12 @@ enl_model_describe (const EnlReference *ref, EnlSiteSet **out, EnlError *err)
   enl_site_set_link (set);
   *out = g_steal_pointer (&set);
   return ENL_OK;
+}
+
+EnlStatus
+enl_model_describe (const EnlReference *ref, EnlSiteSet **out, EnlError *err)
+{
+  return describe_from (ref, 0, out, err);
 }
 
 void
@@ -98,28 +105,26 @@ enl_model_compound_folds (const EnlReference *ref, uint32_t *fold)
   }
 }
 
-/* Variance of a published value about the model. */
-static double
-row_noise (const EnlModel *model, const EnlReferenceRow *row)
+double
+enl_model_row_noise (const EnlModel *model, const EnlReferenceRow *row)
 {
   return model->hyper.value[ENL_H_noise] + row->sigma * row->sigma;
 }
 
-static double *
-covariance (const EnlModel *model, const EnlReference *ref)
+/* Fills the rows from number `first` on. */
+static void
+fill_covariance (const EnlModel *model, const EnlReference *ref, uint32_t first, double *matrix)
 {
   const EnlSiteSet *rows = model->rows;
-  double *matrix = g_new (double, ENL_PACKED (rows->n, 0) + 1);
   EnlKernelParts parts;
 
-  for (uint32_t i = 0; i < rows->n; i++) {
+  for (uint32_t i = first; i < rows->n; i++) {
     for (uint32_t j = 0; j <= i; j++) {
       enl_kernel_parts (&model->hyper, &model->relevance, rows, i, rows, j, &parts);
       matrix[ENL_PACKED (i, j)] = enl_kernel_value (&model->hyper, &parts);
     }
-    matrix[ENL_PACKED (i, i)] += row_noise (model, enl_reference_row (ref, i));
+    matrix[ENL_PACKED (i, i)] += enl_model_row_noise (model, enl_reference_row (ref, i));
   }
-  return matrix;
 }
 
 void
@@ -139,7 +144,7 @@ enl_model_fitted (const EnlModel *model, const EnlReference *ref, double *value)
 {
   for (uint32_t i = 0; i < model->rows->n; i++) {
     const EnlReferenceRow *row = enl_reference_row (ref, i);
-    value[i] = row->pka - row_noise (model, row) * model->alpha[i];
+    value[i] = row->pka - enl_model_row_noise (model, row) * model->alpha[i];
   }
 }
 
@@ -223,12 +228,39 @@ enl_model_build (const EnlReference *ref, const EnlHyper *hyper, EnlModel **out,
   enl_model_moments (model->rows, model->centre, model->scale);
   enl_site_set_standardise (model->rows, model->centre, model->scale);
   enl_relevance_init (&model->relevance, hyper);
-  model->owned_factor = covariance (model, ref);
+  model->owned_factor = g_new (double, ENL_PACKED (model->rows->n, 0) + 1);
+  fill_covariance (model, ref, 0, model->owned_factor);
   if ((status = enl_gaussian_factor (model->owned_factor, model->rows->n, err)) != ENL_OK)
     return status;
   model->factor = model->owned_factor;
   solve_alpha (model, ref);
   calibrate (model, ref);
+  *out = g_steal_pointer (&model);
+  return ENL_OK;
+}
+
+EnlStatus
+enl_model_extend (const EnlModel *base, const EnlReference *ref, EnlModel **out, EnlError *err)
+{
+  g_autoptr (EnlModel) model = g_memdup2 (base, sizeof *base);
+  g_autoptr (EnlSiteSet) extra = NULL;
+  uint32_t done = base->rows->n;
+  EnlStatus status;
+
+  *out = NULL;
+  model->rows = NULL;
+  model->owned_factor = model->owned_alpha = NULL;
+  if ((status = describe_from (ref, done, &extra, err)) != ENL_OK)
+    return status;
+  enl_site_set_standardise (extra, base->centre, base->scale);
+  model->rows = enl_site_set_join (base->rows, extra);
+  double *factor = model->owned_factor = g_new (double, ENL_PACKED (model->rows->n, 0) + 1);
+  memcpy (factor, base->factor, ENL_PACKED (done, 0) * sizeof *factor);
+  fill_covariance (model, ref, done, factor);
+  if ((status = enl_gaussian_factor_on (factor, done, model->rows->n, err)) != ENL_OK)
+    return status;
+  model->factor = factor;
+  solve_alpha (model, ref);
   *out = g_steal_pointer (&model);
   return ENL_OK;
 }

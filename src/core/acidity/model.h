@@ -46,6 +46,12 @@ typedef struct {
 /* Fits to the whole table; ENL_ERROR_NUMERIC when the covariance cannot be factored. */
 EnlStatus enl_model_build (const EnlReference *ref, const EnlHyper *hyper, EnlModel **out,
                            EnlError *err) ENL_MUST_USE;
+/* The model of `base` conditioned on further rows as well: `ref` is its table with rows of a user
+ * behind (enl_reference_extend). Hyperparameters, centre, scale and calibration stay, and the new
+ * rows enter with their own sigma as noise like all others, so the result is that of fitting the
+ * whole table on the same footing. Copies what it needs. */
+EnlStatus enl_model_extend (const EnlModel *base, const EnlReference *ref, EnlModel **out,
+                            EnlError *err) ENL_MUST_USE;
 void enl_model_free (EnlModel *model);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlModel, enl_model_free)
 
@@ -54,6 +60,9 @@ EnlStatus enl_model_describe (const EnlReference *ref, EnlSiteSet **out,
                               EnlError *err) ENL_MUST_USE;
 /* Mean and standard deviation of every raw descriptor (0 where it does not vary). */
 void enl_model_moments (const EnlSiteSet *raw, double *centre, double *scale);
+
+/* Variance of a published value about the model. */
+double enl_model_row_noise (const EnlModel *model, const EnlReferenceRow *row);
 
 /* Fills fold[row]: rows of one compound, in whatever solvent and for whatever site, share one. */
 void enl_model_compound_folds (const EnlReference *ref, uint32_t *fold);

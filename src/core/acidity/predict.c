@@ -24,7 +24,8 @@
 
 struct EnlPredictor {
   const EnlReference *ref;
-  EnlConstants *constants;
+  const EnlConstants *constants;
+  EnlConstants *owned_constants; /* NULL: those of the predictor that this one extends */
   EnlModel *model;
   bool site_seen[ENL_N_ELEMENTS]; /* elements of acidic atoms in the table */
   bool seen[ENL_N_ELEMENTS];      /* elements anywhere in its molecules */
@@ -46,6 +47,22 @@ note_experience (EnlPredictor *predictor, const EnlReferenceRow *row)
         true;
 }
 
+/* Notes compounds and experience of the rows from number `first` on. */
+static void
+note_rows (EnlPredictor *predictor, uint32_t first)
+{
+  uint32_t n = enl_reference_rows (predictor->ref);
+
+  predictor->compound = g_new (uint32_t, n + 1);
+  enl_model_compound_folds (predictor->ref, predictor->compound);
+  predictor->kin = g_renew (EnlKin, predictor->kin, n + 1);
+  for (uint32_t i = first; i < n; i++) {
+    const EnlReferenceRow *row = enl_reference_row (predictor->ref, i);
+    note_experience (predictor, row);
+    enl_kin_describe (row->mol, row->site, &predictor->kin[i]);
+  }
+}
+
 EnlStatus
 enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, EnlPredictor **out,
                     EnlError *err)
@@ -56,17 +73,31 @@ enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, Enl
   *out = NULL;
   predictor->ref = ref;
   if ((status = enl_model_open (ref, bytes, size, &predictor->model, err)) != ENL_OK ||
-      (status = enl_constants_new (&predictor->constants, err)) != ENL_OK)
+      (status = enl_constants_new (&predictor->owned_constants, err)) != ENL_OK)
     return status;
-  predictor->compound = g_new (uint32_t, enl_reference_rows (ref) + 1);
-  enl_model_compound_folds (ref, predictor->compound);
-  predictor->kin = g_new (EnlKin, enl_reference_rows (ref) + 1);
-  for (uint32_t i = 0; i < enl_reference_rows (ref); i++) {
-    const EnlReferenceRow *row = enl_reference_row (ref, i);
-    note_experience (predictor, row);
-    enl_kin_describe (row->mol, row->site, &predictor->kin[i]);
-  }
+  predictor->constants = predictor->owned_constants;
+  note_rows (predictor, 0);
   predictor->seen[1] = true;
+  *out = g_steal_pointer (&predictor);
+  return ENL_OK;
+}
+
+EnlStatus
+enl_predictor_extend (const EnlPredictor *base, const EnlReference *ref, EnlPredictor **out,
+                      EnlError *err)
+{
+  g_autoptr (EnlPredictor) predictor = g_memdup2 (base, sizeof *base);
+
+  *out = NULL;
+  predictor->ref = ref;
+  predictor->owned_constants = NULL;
+  predictor->compound = NULL;
+  predictor->kin = g_memdup2 (base->kin, base->model->rows->n * sizeof *base->kin);
+  predictor->model = NULL;
+  EnlStatus status = enl_model_extend (base->model, ref, &predictor->model, err);
+  if (status != ENL_OK)
+    return status;
+  note_rows (predictor, base->model->rows->n);
   *out = g_steal_pointer (&predictor);
   return ENL_OK;
 }
@@ -77,7 +108,7 @@ enl_predictor_free (EnlPredictor *predictor)
   if (!predictor)
     return;
   enl_model_free (predictor->model);
-  enl_constants_free (predictor->constants);
+  enl_constants_free (predictor->owned_constants);
   g_free (predictor->compound);
   g_free (predictor->kin);
   g_free (predictor);
@@ -246,6 +277,44 @@ strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, uint32_t
   return NULL;
 }
 
+/* Half width of the 90 % interval for a new measurement at `atom`, from the variance that is
+ * left in the model. */
+static double
+half_width (const EnlModel *model, const EnlMolecule *mol, uint32_t atom, EnlSolvent solvent,
+            double left)
+{
+  double variance =
+      MAX (left, 0) + model->hyper.value[ENL_H_noise] + PUBLISHED_SIGMA * PUBLISHED_SIGMA;
+
+  return sqrt (variance) * model->width[enl_acid_class (mol, atom)][solvent];
+}
+
+/* The block of the inverse covariance that belongs to the last rows is the inverse of the lower
+ * right block of the factor times its transpose: the closed form of leaving out needs no more. */
+void
+enl_predictor_left_out (const EnlPredictor *predictor, const uint32_t *fold, double *value,
+                        double *half)
+{
+  const EnlModel *model = predictor->model;
+  uint32_t n = model->rows->n, first = n;
+
+  while (first > 0 && enl_reference_row (predictor->ref, first - 1)->lab)
+    first--;
+  uint32_t m = n - first;
+  g_autofree double *block = g_new (double, ENL_PACKED (m, 0) + 1);
+  for (uint32_t i = 0; i < m; i++)
+    memcpy (block + ENL_PACKED (i, 0), model->factor + ENL_PACKED (first + i, first),
+            (i + 1) * sizeof *block);
+  g_autofree double *inverse = enl_gaussian_inverse (block, m);
+  enl_gaussian_left_out (inverse, model->alpha + first, m, fold, value, half);
+  for (uint32_t i = 0; i < m; i++) {
+    const EnlReferenceRow *row = enl_reference_row (predictor->ref, first + i);
+    double left = half[i] - enl_model_row_noise (model, row);
+    value[i] += row->pka;
+    half[i] = half_width (model, row->mol, row->site, row->solvent, left);
+  }
+}
+
 void
 enl_predictor_run (const EnlPredictor *predictor, const EnlMolecule *mol, const uint32_t *atom,
                    uint32_t n, EnlSolvent solvent, EnlPrediction *out)
@@ -267,11 +336,9 @@ enl_predictor_run (const EnlPredictor *predictor, const EnlMolecule *mol, const 
   for (uint32_t s = 0; s < n; s++) {
     double value =
         ENL_PRIOR_PKA + enl_gaussian_dot (batch.k + (size_t)s * batch.n, model->alpha, batch.n);
-    double variance = MAX (batch.variance[s], 0) + model->hyper.value[ENL_H_noise] +
-                      PUBLISHED_SIGMA * PUBLISHED_SIGMA;
     out[s] = (EnlPrediction){
         .value = value,
-        .half = sqrt (variance) * model->width[enl_acid_class (mol, atom[s])][solvent],
+        .half = half_width (model, mol, atom[s], solvent, batch.variance[s]),
         .outside = strangeness (&batch, mol, atom[s], s),
     };
     EnlKin kin;

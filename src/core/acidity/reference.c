@@ -17,13 +17,15 @@ typedef struct {
   char *key;      /* with stereo */
   char *flat;     /* without */
   uint32_t place; /* of the site among the atoms of `flat` as written */
+  uint32_t alike; /* of a user's row: own number of the first one for the same site */
   int next;       /* row with the same flat key, or -1 */
 } Entry;
 
 struct EnlReference {
-  EnlTable *table; /* owns the texts */
+  const EnlReference *base; /* NULL: the published table itself */
+  EnlTable *table;          /* owns the texts */
   Entry *entry;
-  uint32_t n;
+  uint32_t n;        /* own entries, numbered behind those of the base */
   GHashTable *first; /* flat key -> 1 + first row */
   uint64_t checksum;
 };
@@ -125,12 +127,89 @@ enl_reference_new (const char *text, size_t size, EnlReference **out, EnlError *
   return ENL_OK;
 }
 
+/* ---- a user's rows behind the published ones ---- */
+
+/* Place in the flat SMILES of the first atom that is equivalent to the site: the same for every
+ * spelling and for every equivalent atom. */
+static uint32_t
+class_place (const Entry *entry)
+{
+  g_autofree uint32_t *order = NULL;
+  g_autofree char *flat = flat_key (entry->mol, &order);
+  g_autofree uint32_t *class_of = g_new (uint32_t, enl_molecule_atoms (entry->mol) + 1);
+  uint32_t place = 0;
+
+  enl_symmetry_classes (entry->mol, false, class_of);
+  while (class_of[order[place]] != class_of[entry->row.site])
+    place++;
+  return place;
+}
+
+static uint32_t
+find_alike (const EnlReference *ref, uint32_t row, const uint32_t *place)
+{
+  const Entry *entry = &ref->entry[row];
+
+  for (uint32_t i = 0; i < row; i++)
+    if (place[i] == place[row] && ref->entry[i].row.solvent == entry->row.solvent &&
+        strcmp (ref->entry[i].key, entry->key) == 0)
+      return i;
+  return row;
+}
+
+EnlReference *
+enl_reference_extend (const EnlReference *base, const EnlReferenceRow *extra, uint32_t n)
+{
+  EnlReference *ref = g_new0 (EnlReference, 1);
+  g_autofree uint32_t *place = g_new (uint32_t, n + 1);
+
+  g_assert (!base->base);
+  ref->base = base;
+  ref->first = g_hash_table_new (g_str_hash, g_str_equal);
+  ref->n = n;
+  ref->entry = g_new0 (Entry, n + 1);
+  for (uint32_t i = 0; i < n; i++) {
+    EnlReferenceRow *row = &ref->entry[i].row;
+    *row = extra[i];
+    row->name = g_strdup (extra[i].name);
+    row->smiles = g_strdup (extra[i].smiles);
+    row->source = g_strdup (extra[i].source);
+    row->note = g_strdup (extra[i].note);
+    row->mol = ref->entry[i].mol = enl_molecule_copy (extra[i].mol);
+    row->lab = true;
+    index_entry (ref, i);
+    row->key = ref->entry[i].key;
+    place[i] = class_place (&ref->entry[i]);
+    ref->entry[i].alike = find_alike (ref, i, place);
+  }
+  return ref;
+}
+
+uint32_t
+enl_reference_first_alike (const EnlReference *ref, uint32_t row)
+{
+  g_assert (ref->base && row >= ref->base->n);
+  return ref->base->n + ref->entry[row - ref->base->n].alike;
+}
+
+/* The texts of a user's row are its own, those of a published one belong to the table. */
+static void
+free_texts (const EnlReferenceRow *row)
+{
+  g_free ((char *)row->name);
+  g_free ((char *)row->smiles);
+  g_free ((char *)row->source);
+  g_free ((char *)row->note);
+}
+
 void
 enl_reference_free (EnlReference *ref)
 {
   if (!ref)
     return;
   g_hash_table_unref (ref->first);
+  for (uint32_t i = 0; ref->base && i < ref->n; i++)
+    free_texts (&ref->entry[i].row);
   for (uint32_t i = 0; ref->entry && i < ref->n; i++) {
     enl_molecule_free (ref->entry[i].mol);
     g_free (ref->entry[i].key);
@@ -144,12 +223,15 @@ enl_reference_free (EnlReference *ref)
 uint32_t
 enl_reference_rows (const EnlReference *ref)
 {
-  return ref->n;
+  return ref->n + (ref->base ? ref->base->n : 0);
 }
 
 const EnlReferenceRow *
 enl_reference_row (const EnlReference *ref, uint32_t row)
 {
+  if (ref->base && row < ref->base->n)
+    return enl_reference_row (ref->base, row);
+  row -= ref->base ? ref->base->n : 0;
   g_assert (row < ref->n);
   return &ref->entry[row].row;
 }
@@ -157,7 +239,7 @@ enl_reference_row (const EnlReference *ref, uint32_t row)
 uint64_t
 enl_reference_checksum (const EnlReference *ref)
 {
-  return ref->checksum;
+  return ref->base ? ref->base->checksum : ref->checksum;
 }
 
 static bool
@@ -196,8 +278,11 @@ enl_reference_find_all (const EnlReference *ref, const EnlMolecule *mol, EnlSolv
   g_autofree uint32_t *order = NULL;
   g_autofree char *flat = flat_key (mol, &order);
   int first = GPOINTER_TO_INT (g_hash_table_lookup (ref->first, flat)) - 1;
+  int offset = ref->base ? (int)ref->base->n : 0;
 
-  for (uint32_t i = 0; i < n; i++)
+  if (ref->base)
+    enl_reference_find_all (ref->base, mol, solvent, row);
+  for (uint32_t i = 0; !ref->base && i < n; i++)
     row[i] = -1;
   if (first < 0)
     return;
@@ -213,7 +298,7 @@ enl_reference_find_all (const EnlReference *ref, const EnlMolecule *mol, EnlSolv
       continue;
     for (uint32_t a = 0; a < n; a++)
       if (class_of[a] == class_of[order[entry->place]] && fit >= best[a])
-        row[a] = i, best[a] = fit;
+        row[a] = offset + i, best[a] = fit;
   }
 }
 

@@ -101,14 +101,19 @@ add_chain (const Question *q, GArray *lines)
 }
 
 static const char *
-closing_words (const EnlEstimate *e)
+closing_words (const Question *q)
 {
+  const EnlReference *ref = enl_estimator_reference (q->estimator);
+  const EnlEstimate *e = &q->estimate[q->site];
+
   if (e->basis == ENL_BASIS_MEASURED)
     return "published value minus the model's";
   if (e->basis == ENL_BASIS_LAB)
     return "own value minus the model's";
   if (e->solvent == ENL_SOLVENT_THF && e->n_precedents && e->precedent[0].weight >= 1)
-    return "published DMSO value minus the model's";
+    return enl_reference_row (ref, e->precedent[0].row)->lab
+               ? "own DMSO value minus the model's"
+               : "published DMSO value minus the model's";
   if (enl_estimator_is_held (e))
     return "held at the end of the scale";
   return "held at the hydrogen that goes first";
@@ -131,7 +136,7 @@ add_closing (const Question *q, double value, GArray *lines)
     }
   }
   if (fabs (e->value - value) > NOTHING)
-    add_line (lines, g_strdup (closing_words (e)), e->value - value, true);
+    add_line (lines, g_strdup (closing_words (q)), e->value - value, true);
 }
 
 /* ---- six lines ---- */
@@ -233,6 +238,11 @@ width_words (const Question *q)
     g_string_append (out, "the uncertainty of the published value");
     return g_string_free (out, FALSE);
   }
+  if (e->basis == ENL_BASIS_LAB) {
+    g_string_append_printf (out, "the uncertainty of your own value%s%s", e->remark ? "; " : "",
+                            e->remark ? e->remark : "");
+    return g_string_free (out, FALSE);
+  }
   if (e->n_precedents == 0)
     g_string_append (out, "nothing like it was measured; ");
   else
@@ -242,6 +252,8 @@ width_words (const Question *q)
                           class_words (class), e->solvent == ENL_SOLVENT_WATER ? "water" : "DMSO");
   if (e->remark)
     g_string_append_printf (out, "; widened: %s", e->remark);
+  if (e->footing)
+    g_string_append_printf (out, "; widened: %s", e->footing);
   return g_string_free (out, FALSE);
 }
 

@@ -28,6 +28,7 @@ enl_analysis_new (const EnlKnowledge *knowledge, const EnlMolecule *mol, EnlSolv
   g_autoptr (EnlAnalysis) a = g_new0 (EnlAnalysis, 1);
 
   *out = NULL;
+  a->knowledge = enl_knowledge_ref (knowledge);
   a->mol = enl_molecule_copy (mol);
   a->solvent = solvent;
   EnlStatus status = run (knowledge, a, layout, err);
@@ -49,6 +50,7 @@ enl_analysis_free (EnlAnalysis *a)
   g_free (a->estimate);
   g_free (a->rank);
   g_free (a->smiles);
+  enl_knowledge_free (a->knowledge);
   g_free (a);
 }
 

@@ -5,7 +5,8 @@
 #include "core/workset/knowledge.h"
 
 typedef struct {
-  EnlMolecule *mol; /* a copy; with layout when it was asked for */
+  EnlKnowledge *knowledge; /* held: what the estimates rest on, with the own values of then */
+  EnlMolecule *mol;        /* a copy; with layout when it was asked for */
   EnlSites *sites;
   EnlEstimate *estimate; /* one a site */
   uint32_t *rank;        /* site indices, most acidic first */

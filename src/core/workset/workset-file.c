@@ -10,15 +10,9 @@
 
 /* ---- reading ---- */
 
-typedef struct {
-  const char *text;
-  size_t size;
-  EnlError *err;
-} Reading;
-
 /* A JSON value has no place of its own after parsing: point at its member name in the text. */
-static EnlStatus
-fault (const Reading *r, const char *member, const char *advice, const char *what)
+EnlStatus
+enl_reading_fault (const EnlReading *r, const char *member, const char *advice, const char *what)
 {
   g_autofree char *quoted = g_strdup_printf ("\"%s\"", member);
   const char *place = g_strstr_len (r->text, (gssize)r->size, quoted);
@@ -38,26 +32,26 @@ take_string (json_t *object, const char *member)
 }
 
 static EnlStatus
-take_number (const Reading *r, json_t *object, const char *member, double *value)
+take_number (const EnlReading *r, json_t *object, const char *member, double *value)
 {
   json_t *number = json_object_get (object, member);
 
   if (!number)
     return ENL_OK;
   if (!json_is_number (number))
-    return fault (r, member, "write a number without quotes", "is not a number");
+    return enl_reading_fault (r, member, "write a number without quotes", "is not a number");
   *value = json_number_value (number);
   return ENL_OK;
 }
 
 static EnlStatus
-read_conditions (const Reading *r, json_t *object, EnlWorkset *set)
+read_conditions (const EnlReading *r, json_t *object, EnlWorkset *set)
 {
   EnlConditions c = enl_conditions_default ();
   const char *solvent = take_string (object, "solvent");
 
   if (solvent[0] && !enl_solvent_parse (solvent, &c.solvent))
-    return fault (r, "solvent", "write dmso, water or thf", "names an unknown solvent");
+    return enl_reading_fault (r, "solvent", "write dmso, water or thf", "names an unknown solvent");
   EnlStatus status = take_number (r, object, "equivalents", &c.equivalents);
   if (status == ENL_OK)
     status = take_number (r, object, "concentration", &c.concentration);
@@ -91,9 +85,8 @@ read_selection (json_t *object, EnlWorkset *set)
                       take_string (object, "base"));
 }
 
-/* What is left of `object` once the known members are gone, to be written back later. */
-static json_t *
-keep_rest (json_t *object, const char *const *known)
+json_t *
+enl_json_rest (json_t *object, const char *const *known)
 {
   json_t *rest = json_deep_copy (object);
 
@@ -103,47 +96,52 @@ keep_rest (json_t *object, const char *const *known)
 }
 
 static EnlStatus
-read_substrates (const Reading *r, json_t *array, EnlWorkset *set)
+read_substrates (const EnlReading *r, json_t *array, EnlWorkset *set)
 {
   static const char *const known[] = {"name", "structure", "note", NULL};
   size_t index;
   json_t *item;
 
   if (!json_is_array (array))
-    return fault (r, "substrates", "write a list in square brackets", "is not a list");
+    return enl_reading_fault (r, "substrates", "write a list in square brackets", "is not a list");
   json_array_foreach (array, index, item)
   {
     if (!json_is_object (item))
-      return fault (r, "substrates", "write every substrate in braces", "holds something else");
+      return enl_reading_fault (r, "substrates", "write every substrate in braces",
+                                "holds something else");
     EnlStatus status = enl_workset_insert (set, (uint32_t)index, take_string (item, "name"),
                                            take_string (item, "structure"), r->err);
     if (status != ENL_OK)
       return status;
     enl_workset_set_note (set, (uint32_t)index, take_string (item, "note"));
     json_decref (set->kept->pdata[index]);
-    set->kept->pdata[index] = keep_rest (item, known);
+    set->kept->pdata[index] = enl_json_rest (item, known);
   }
   return ENL_OK;
 }
 
 static EnlStatus
-read_root (const Reading *r, json_t *root, EnlWorkset *set)
+read_root (const EnlReading *r, json_t *root, EnlWorkset *set)
 {
-  static const char *const known[] = {"format",     "version",   "conditions",
-                                      "substrates", "selection", NULL};
+  static const char *const known[] = {"format", "version",   "conditions", "substrates",
+                                      "lab",    "selection", NULL};
 
   if (!json_is_object (root) || strcmp (take_string (root, "format"), FORMAT) != 0)
-    return fault (r, "format", "open a file that Enolith has saved", "does not say enolith-set");
+    return enl_reading_fault (r, "format", "open a file that Enolith has saved",
+                              "does not say enolith-set");
   if (json_integer_value (json_object_get (root, "version")) > VERSION)
-    return fault (r, "version", "open it with a newer Enolith", "is newer than this program");
+    return enl_reading_fault (r, "version", "open it with a newer Enolith",
+                              "is newer than this program");
   EnlStatus status = read_substrates (r, json_object_get (root, "substrates"), set);
   if (status == ENL_OK)
     status = read_conditions (r, json_object_get (root, "conditions"), set);
+  if (status == ENL_OK)
+    status = enl_workset_read_lab (r, json_object_get (root, "lab"), set);
   if (status != ENL_OK)
     return status;
   read_selection (json_object_get (root, "selection"), set);
   json_decref (set->kept_top);
-  set->kept_top = keep_rest (root, known);
+  set->kept_top = enl_json_rest (root, known);
   return ENL_OK;
 }
 
@@ -151,7 +149,7 @@ EnlStatus
 enl_workset_parse (const char *text, size_t size, EnlWorkset **out, EnlError *err)
 {
   g_autoptr (EnlWorkset) set = enl_workset_new ();
-  Reading r = {text, size, err};
+  EnlReading r = {text, size, err};
   json_error_t where;
 
   *out = NULL;
@@ -223,6 +221,8 @@ enl_workset_write (const EnlWorkset *set)
     json_array_append_new (
         substrates, write_substrate (enl_workset_get (set, i), g_ptr_array_index (set->kept, i)));
   json_object_set_new (root, "substrates", substrates);
+  if (enl_workset_lab_size (set))
+    json_object_set_new (root, "lab", enl_workset_write_lab (set));
   json_object_set_new (root, "selection", write_selection (&set->selection));
   json_object_update_missing (root, set->kept_top);
   char *text = json_dumps (root, JSON_INDENT (2) | JSON_REAL_PRECISION (15));

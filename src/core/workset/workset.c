@@ -39,6 +39,8 @@ enl_workset_new (void)
 
   set->substrate = g_ptr_array_new_with_free_func (substrate_free);
   set->kept = g_ptr_array_new_with_free_func (unref_json);
+  set->lab = g_ptr_array_new_with_free_func ((GDestroyNotify)enl_lab_entry_free);
+  set->kept_lab = g_ptr_array_new_with_free_func (unref_json);
   set->kept_top = json_object ();
   set->conditions = enl_conditions_default ();
   set->selection = (EnlSelection){ENL_NONE, ENL_NONE, g_strdup ("")};
@@ -55,6 +57,10 @@ enl_workset_copy (const EnlWorkset *set)
     g_ptr_array_add (copy->substrate, substrate_new (s->name, s->text, s->note));
     g_ptr_array_add (copy->kept, json_deep_copy (g_ptr_array_index (set->kept, i)));
   }
+  for (uint32_t i = 0; i < set->lab->len; i++) {
+    g_ptr_array_add (copy->lab, enl_lab_entry_copy (enl_workset_lab (set, i)));
+    g_ptr_array_add (copy->kept_lab, json_deep_copy (g_ptr_array_index (set->kept_lab, i)));
+  }
   json_decref (copy->kept_top);
   copy->kept_top = json_deep_copy (set->kept_top);
   copy->conditions = set->conditions;
@@ -69,6 +75,8 @@ enl_workset_free (EnlWorkset *set)
     return;
   g_ptr_array_unref (set->substrate);
   g_ptr_array_unref (set->kept);
+  g_ptr_array_unref (set->lab);
+  g_ptr_array_unref (set->kept_lab);
   json_decref (set->kept_top);
   g_free (set->selection.base);
   g_free (set);

@@ -1,10 +1,11 @@
-/* The set: substrates in order, conditions, notes and the selection; its file form.
+/* The set: substrates in order, conditions, notes, own values and the selection; its file form.
  *
  * File: JSON, "format": "enolith-set", "version": 1. Members this version does not know are kept
  * when a set is read and written again.
  */
 #pragma once
 
+#include "core/acidity/lab.h"
 #include "core/bases/compare.h"
 
 #define ENL_MAX_SUBSTRATES 2000
@@ -41,6 +42,20 @@ void enl_workset_move (EnlWorkset *set, uint32_t from, uint32_t to);
 void enl_workset_set_name (EnlWorkset *set, uint32_t index, const char *name);
 void enl_workset_set_text (EnlWorkset *set, uint32_t index, const char *text);
 void enl_workset_set_note (EnlWorkset *set, uint32_t index, const char *note);
+
+/* Own values in order. They are kept as typed, right or wrong (enl_workset_lab_check); one index
+ * stands for the same value until one before it is removed. */
+uint32_t enl_workset_lab_size (const EnlWorkset *set);
+const EnlLabEntry *enl_workset_lab (const EnlWorkset *set, uint32_t index);
+/* Appends a copy. ENL_ERROR_LIMIT beyond ENL_MAX_LAB. */
+EnlStatus enl_workset_add_lab (EnlWorkset *set, const EnlLabEntry *entry, EnlError *err);
+void enl_workset_set_lab (EnlWorkset *set, uint32_t index, const EnlLabEntry *entry);
+void enl_workset_remove_lab (EnlWorkset *set, uint32_t index);
+bool enl_workset_same_lab (const EnlWorkset *a, const EnlWorkset *b);
+/* The values that can be used, their tags being their indices here. `fault` (NULL allowed) has a
+ * place for each value: code ENL_OK or why it is left out, with the position in its structure. */
+EnlLab *enl_workset_lab_check (const EnlWorkset *set, const EnlNames *names,
+                               EnlError *fault) ENL_MUST_USE;
 
 const EnlConditions *enl_workset_conditions (const EnlWorkset *set);
 void enl_workset_set_conditions (EnlWorkset *set, const EnlConditions *conditions);

@@ -199,8 +199,8 @@ START_TEST (thf_stands_on_dmso)
   ck_assert_int_eq (t->basis, ENL_BASIS_ESTIMATED);
   ck_assert_int_eq (t->solvent, ENL_SOLVENT_THF);
   ck_assert_double_ge (t->sigma, 1.5);
-  ck_assert_ptr_nonnull (t->remark);
-  ck_assert_ptr_nonnull (strstr (t->remark, "DMSO"));
+  ck_assert_ptr_nonnull (t->footing);
+  ck_assert_ptr_nonnull (strstr (t->footing, "DMSO"));
   clear (&thf);
   clear (&dmso);
 }

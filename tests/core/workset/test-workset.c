@@ -5,6 +5,19 @@
 
 #include "tests/runner.h"
 
+static void
+add_lab (EnlWorkset *set, const char *structure, double pka, const char *note)
+{
+  g_autoptr (EnlLabEntry) entry = enl_lab_entry_new ();
+
+  g_free (entry->structure);
+  entry->structure = g_strdup (structure);
+  g_free (entry->note);
+  entry->note = g_strdup (note);
+  entry->pka = pka;
+  ck_assert_int_eq (enl_workset_add_lab (set, entry, NULL), ENL_OK);
+}
+
 static EnlWorkset *
 sample (void)
 {
@@ -18,6 +31,8 @@ sample (void)
   enl_workset_set_note (set, 2, "from the shelf");
   enl_workset_set_conditions (set, &c);
   enl_workset_select (set, 2, 3, "lda");
+  add_lab (set, "CC(=O)[CH2:1]C(=O)OCC", 14.25, "second \"run\"");
+  add_lab (set, "acetophenone", 24.4, "");
   return set;
 }
 
@@ -38,13 +53,64 @@ START_TEST (written_set_reads_back_the_same)
   ck_assert_double_eq_tol (enl_workset_conditions (again)->temperature, -78.0, 1e-12);
   ck_assert_uint_eq (enl_workset_selection (again)->atom, 3);
   ck_assert_str_eq (enl_workset_selection (again)->base, "lda");
+  ck_assert (enl_workset_same_lab (set, again));
+  ck_assert_uint_eq (enl_workset_lab_size (again), 2);
+  ck_assert_str_eq (enl_workset_lab (again, 0)->note, "second \"run\"");
+  ck_assert_double_eq (enl_workset_lab (again, 0)->pka, 14.25);
+  ck_assert_double_eq (enl_workset_lab (again, 1)->sigma, ENL_LAB_USUAL_SIGMA);
+}
+END_TEST
+
+START_TEST (own_values_can_be_changed)
+{
+  g_autoptr (EnlWorkset) set = sample ();
+  g_autoptr (EnlWorkset) copy = enl_workset_copy (set);
+  g_autoptr (EnlLabEntry) entry = enl_lab_entry_copy (enl_workset_lab (set, 1));
+
+  ck_assert (enl_workset_same_lab (set, copy));
+  entry->pka = 24.6;
+  enl_workset_set_lab (set, 1, entry);
+  ck_assert (!enl_workset_same_lab (set, copy));
+  ck_assert_double_eq (enl_workset_lab (set, 1)->pka, 24.6);
+  ck_assert_double_eq (enl_workset_lab (copy, 1)->pka, 24.4);
+  enl_workset_remove_lab (set, 0);
+  ck_assert_uint_eq (enl_workset_lab_size (set), 1);
+  ck_assert_str_eq (enl_workset_lab (set, 0)->structure, "acetophenone");
+  enl_workset_remove_lab (set, 0);
+  g_autofree char *text = enl_workset_write (set);
+  ck_assert_ptr_null (strstr (text, "\"lab\""));
+  for (int i = 0; i < ENL_MAX_LAB; i++)
+    ck_assert_int_eq (enl_workset_add_lab (set, entry, NULL), ENL_OK);
+  ck_assert_int_eq (enl_workset_add_lab (set, entry, NULL), ENL_ERROR_LIMIT);
+}
+END_TEST
+
+/* A value that cannot be used stays in the set, says why, and does not take the others with it. */
+START_TEST (own_values_are_checked_one_by_one)
+{
+  g_autoptr (EnlWorkset) set = enl_workset_new ();
+  EnlError fault[4];
+
+  add_lab (set, "CC#N", 31.2, "");
+  add_lab (set, "C1CC", 31.2, "");
+  add_lab (set, "CC#N", 99, "");
+  add_lab (set, "CC(=O)[CH2:1]C(C)=O", 13.2, "");
+  g_autoptr (EnlLab) lab = enl_workset_lab_check (set, NULL, fault);
+  ck_assert_uint_eq (enl_lab_size (lab), 2);
+  ck_assert_uint_eq (enl_lab_row (lab, 1)->tag, 3);
+  ck_assert (fault[0].code == ENL_OK && fault[3].code == ENL_OK);
+  ck_assert (fault[1].code != ENL_OK && fault[1].column == 2 && fault[1].advice[0]);
+  ck_assert_int_eq (fault[2].code, ENL_ERROR_RANGE);
+  g_autofree char *text = enl_workset_write (set);
+  ck_assert_ptr_nonnull (strstr (text, "C1CC"));
 }
 END_TEST
 
 START_TEST (unknown_members_are_kept)
 {
   const char text[] = "{\"format\":\"enolith-set\",\"version\":1,\"colour of the flask\":[1,2],"
-                      "\"substrates\":[{\"structure\":\"CC=O\",\"batch\":\"K-17\"}]}";
+                      "\"substrates\":[{\"structure\":\"CC=O\",\"batch\":\"K-17\"}],"
+                      "\"lab\":[{\"structure\":\"CC#N\",\"pka\":31,\"cell\":\"quartz\"}]}";
   g_autoptr (EnlWorkset) set = NULL;
 
   ck_assert_int_eq (enl_workset_parse (text, strlen (text), &set, NULL), ENL_OK);
@@ -54,6 +120,7 @@ START_TEST (unknown_members_are_kept)
   g_autofree char *out = enl_workset_write (copy);
   const char *batch = strstr (out, "K-17"), *other = strstr (out, "CC#N");
   ck_assert_ptr_nonnull (strstr (out, "colour of the flask"));
+  ck_assert_ptr_nonnull (strstr (out, "\"cell\": \"quartz\""));
   ck_assert (batch && other && batch < other);
 }
 END_TEST
@@ -99,6 +166,16 @@ static const struct {
     {"words for a number",
      "{\"format\":\"enolith-set\",\"substrates\":[],\"conditions\":{\"equivalents\":\"one\"}}",
      "line 1, column 55: 'equivalents' is not a number; write a number without quotes"},
+    {"lab values in a row", "{\"format\":\"enolith-set\",\"substrates\":[],\"lab\":\"31\"}",
+     "line 1, column 41: 'lab' is not a list; write a list in square brackets"},
+    {"a bare lab value", "{\"format\":\"enolith-set\",\"substrates\":[],\"lab\":[31]}",
+     "line 1, column 41: 'lab' holds something else; write every value in braces"},
+    {"a quoted pKa", "{\"format\":\"enolith-set\",\"substrates\":[],\"lab\":[{\"pka\":\"31\"}]}",
+     "line 1, column 49: 'pka' is not a number; write a number without quotes"},
+    {"an atom before the first",
+     "{\"format\":\"enolith-set\",\"substrates\":[],\"lab\":[{\"pka\":3,\"atom\":0}]}",
+     "line 1, column 41: 'lab' holds an atom that is no position; write the position of the acidic "
+     "atom, from 1"},
 };
 
 START_TEST (bad_sets_are_explained)
@@ -172,6 +249,8 @@ workset_suite (void)
 
   tcase_add_test (tc, written_set_reads_back_the_same);
   tcase_add_test (tc, unknown_members_are_kept);
+  tcase_add_test (tc, own_values_can_be_changed);
+  tcase_add_test (tc, own_values_are_checked_one_by_one);
   tcase_add_test (tc, selection_follows_its_substrate);
   tcase_add_loop_test (tc, bad_sets_are_explained, 0, (int)ENL_COUNT (bad_case));
   tcase_add_test (tc, cut_and_nested_files_are_refused);
