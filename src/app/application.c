@@ -115,6 +115,8 @@ add_accelerators (GtkApplication *app)
       {"win.add", {"<Control>t", NULL}},
       {"win.new", {"<Control>n", NULL}},
       {"win.open", {"<Control>o", NULL}},
+      {"win.detail::forms", {"<Control>r", NULL}},
+      {"win.detail::why", {"<Control>e", NULL}},
       {"win.save", {"<Control>s", NULL}},
       {"win.save-as", {"<Control><Shift>s", NULL}},
       {"win.projector", {"F5", NULL}},

@@ -15,6 +15,7 @@ struct _EnlCanvas {
   GskRenderNode *node; /* the painted scene at the present size, NULL: paint anew */
   gboolean fit;
   double largest, smallest;
+  int width, height; /* asked for when above 0 */
 };
 
 static guint picked_signal;
@@ -86,6 +87,10 @@ enl_canvas_measure (GtkWidget *widget, GtkOrientation orientation, int for_size,
   (void)for_size;
   *minimum_baseline = *natural_baseline = -1;
   *minimum = 40;
+  if (self->width > 0) {
+    *minimum = *natural = orientation == GTK_ORIENTATION_HORIZONTAL ? self->width : self->height;
+    return;
+  }
   if (self->scene) {
     EnlRect frame = enl_scene_frame (self->scene);
     double size = orientation == GTK_ORIENTATION_HORIZONTAL ? frame.width : frame.height;
@@ -187,6 +192,14 @@ enl_canvas_set_fit (EnlCanvas *self, gboolean fit, double largest)
 {
   self->fit = fit;
   self->largest = largest;
+  gtk_widget_queue_resize (GTK_WIDGET (self));
+}
+
+void
+enl_canvas_set_size (EnlCanvas *self, int width, int height)
+{
+  self->width = width;
+  self->height = height;
   gtk_widget_queue_resize (GTK_WIDGET (self));
 }
 

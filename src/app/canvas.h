@@ -16,6 +16,8 @@ void enl_canvas_take_scene (EnlCanvas *canvas, EnlScene *scene);
 /* True: the scene is scaled to the widget, up to `largest` times its size. False: the widget asks
  * for the scene's own size, for use in a scrolled window. Default: fit, 1.4. */
 void enl_canvas_set_fit (EnlCanvas *canvas, gboolean fit, double largest);
+/* The widget asks for exactly this room, px; 0 ends that. */
+void enl_canvas_set_size (EnlCanvas *canvas, int width, int height);
 /* The widget never asks for less room than `smallest` times the scene (default 0: it does), so that
  * its text stays readable and a scrolled window scrolls instead. */
 void enl_canvas_set_smallest (EnlCanvas *canvas, double smallest);

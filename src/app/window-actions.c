@@ -167,6 +167,19 @@ change_look (GSimpleAction *action, GVariant *value, gpointer data)
     enl_look_set (self->look, (EnlThemeName)theme);
 }
 
+/* What stands beside the bases: the anion's forms, or why the value is what it is. */
+static void
+change_detail (GSimpleAction *action, GVariant *value, gpointer data)
+{
+  EnlWindow *self = data;
+  const char *page = g_variant_get_string (value, NULL);
+
+  (void)action;
+  if (gtk_stack_get_child_by_name (self->details, page))
+    gtk_stack_set_visible_child_name (self->details, page);
+  enl_window_sync_actions (self);
+}
+
 static void
 act_projector (GSimpleAction *action, GVariant *parameter, gpointer data)
 {
@@ -203,6 +216,7 @@ static const GActionEntry entry[] = {
     {"projector", act_projector, NULL, NULL, NULL, {0}},
     {"solvent", NULL, "s", "'dmso'", change_solvent, {0}},
     {"look", NULL, "s", "'light'", change_look, {0}},
+    {"detail", NULL, "s", "'forms'", change_detail, {0}},
     {"state", NULL, NULL, "''", NULL, {0}},
 };
 
@@ -257,5 +271,6 @@ enl_window_sync_actions (EnlWindow *self)
   set_enabled (self, "redo", enl_session_can_redo (self->session));
   set_state (self, "solvent", enl_solvent_id (c->solvent));
   set_state (self, "look", enl_theme_id (enl_look_get (self->look)));
+  set_state (self, "detail", gtk_stack_get_visible_child_name (self->details));
   set_state (self, "state", state);
 }

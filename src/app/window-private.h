@@ -3,6 +3,7 @@
 
 #include "app/bases-panel.h"
 #include "app/forms-panel.h"
+#include "app/why-panel.h"
 #include "app/window.h"
 
 struct _EnlWindow {
@@ -20,6 +21,8 @@ struct _EnlWindow {
   GtkLabel *hint;
   EnlFormsPanel *forms;
   EnlBasesPanel *bases;
+  EnlWhyPanel *why;
+  GtkStack *details; /* pages "forms" and "why" */
   GtkPaned *panes, *lower;
 };
 

@@ -39,6 +39,29 @@ substrate_state (EnlWindow *self, uint32_t index)
   return object;
 }
 
+/* The explanation on show, or null. */
+static json_t *
+why_state (EnlWindow *self)
+{
+  const EnlWhyResult *result = enl_why_panel_result (self->why);
+  json_t *lines = json_array (), *precedents = json_array ();
+  double value[ENL_WHY_LINES];
+
+  if (!result) {
+    json_decref (lines);
+    json_decref (precedents);
+    return json_null ();
+  }
+  enl_why_round (result->why, 1, value);
+  for (uint32_t i = 0; i < result->why->n_lines; i++)
+    json_array_append_new (
+        lines, json_pack ("{s:s, s:f}", "words", result->why->line[i].words, "value", value[i]));
+  for (uint32_t i = 0; i < result->n_pictures; i++)
+    json_array_append_new (precedents, json_string (result->picture[i].row->name));
+  return json_pack ("{s:o, s:f, s:s, s:o}", "lines", lines, "pka", result->why->value, "width",
+                    result->why->width, "precedents", precedents);
+}
+
 char *
 enl_window_state (EnlWindow *self)
 {
@@ -59,6 +82,9 @@ enl_window_state (EnlWindow *self)
       json_integer (selection->substrate == ENL_NONE ? -1 : (int)selection->substrate));
   json_object_set_new (root, "site", json_integer (site == ENL_NONE ? -1 : (int)site));
   json_object_set_new (root, "base", json_string (selection->base));
+  json_object_set_new (root, "detail",
+                       json_string (gtk_stack_get_visible_child_name (self->details)));
+  json_object_set_new (root, "why", why_state (self));
   json_object_set_new (root, "busy", json_boolean (enl_session_busy (self->session)));
   json_object_set_new (root, "unsaved", json_boolean (enl_session_unsaved (self->session)));
   char *text = json_dumps (root, JSON_COMPACT);

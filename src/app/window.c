@@ -217,6 +217,7 @@ enl_window_class_init (EnlWindowClass *klass)
   G_OBJECT_CLASS (klass)->dispose = enl_window_dispose;
   g_type_ensure (ENL_TYPE_FORMS_PANEL);
   g_type_ensure (ENL_TYPE_BASES_PANEL);
+  g_type_ensure (ENL_TYPE_WHY_PANEL);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/window.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, title);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, subtitle);
@@ -227,6 +228,8 @@ enl_window_class_init (EnlWindowClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, hint);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, forms);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, bases);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, why);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, details);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, panes);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, lower);
   gtk_widget_class_bind_template_callback (widget_class, on_bar_response);
@@ -261,6 +264,9 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
   g_signal_connect_object (self->look, "changed", G_CALLBACK (on_look_changed), self, 0);
   enl_forms_panel_follow (self->forms, self->session, self->look);
   enl_bases_panel_follow (self->bases, self->session, self->look);
+  enl_why_panel_follow (self->why, self->session, self->look);
+  g_signal_connect_object (self->why, "changed", G_CALLBACK (enl_window_sync_actions), self,
+                           G_CONNECT_SWAPPED);
   refresh_title (self);
   enl_window_sync_actions (self);
   return self;

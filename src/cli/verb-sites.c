@@ -53,10 +53,10 @@ short_precedents (const EnlReference *reference, const EnlEstimate *e)
 static void
 print_why (const EnlRun *run, const EnlAnalysis *a, uint32_t site)
 {
-  const EnlReference *reference = run->knowledge->reference;
+  const EnlReference *reference = a->knowledge->reference;
   const EnlEstimate *e = &a->estimate[site];
   g_autoptr (EnlWhy) why =
-      enl_why_new (run->knowledge->estimator, a->mol, a->sites, a->estimate, site);
+      enl_why_new (a->knowledge->estimator, a->mol, a->sites, a->estimate, site);
 
   if (run->options->format == ENL_FORMAT_JSON) {
     g_autofree char *json = enl_explain_json (reference, why, e);

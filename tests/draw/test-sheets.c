@@ -4,6 +4,7 @@
 #include <string.h>
 
 #include "draw/badge.h"
+#include "draw/effect-bar.h"
 #include "draw/whisker.h"
 #include "tests/draw/sample.h"
 #include "tests/runner.h"
@@ -54,6 +55,51 @@ START_TEST (mark_and_bar_stand_at_their_values)
   ck_assert_double_gt (mark->width, 0); /* estimated: an outline */
   g_autofree char *faults = enl_scene_faults (scene);
   ck_assert_msg (!faults, "%s", faults);
+}
+END_TEST
+
+/* ---- effects ---- */
+
+/* Where the shapes of the bar's tone reach, and how many there are. */
+static uint32_t
+reach_of_effect (double effect, double most, double *left, double *right)
+{
+  const EnlTheme *theme = enl_theme_get (ENL_THEME_LIGHT);
+  g_autoptr (EnlScene) scene = enl_effect_bar_scene (effect, most, 100, 14, theme);
+  g_autofree char *faults = enl_scene_faults (scene);
+  uint32_t n = 0;
+
+  ck_assert_msg (!faults, "%s", faults);
+  *left = 100, *right = 0;
+  for (uint32_t i = 0; i < enl_scene_shapes (scene); i++) {
+    const EnlShape *shape = enl_scene_shape (scene, i);
+    if (shape->tone != ENL_TONE_SITE)
+      continue;
+    *left = fmin (*left, shape->box.x);
+    *right = fmax (*right, shape->box.x + shape->box.width);
+    n++;
+  }
+  return n;
+}
+
+START_TEST (effects_point_to_their_side)
+{
+  double left, right, small;
+
+  ck_assert_uint_eq (reach_of_effect (-7.3, 12.6, &left, &right), 2); /* shaft and head */
+  ck_assert_double_lt (left, 50 - 0.5 * 50 * 7.3 / 12.6);
+  ck_assert_double_le (right, 50 + 1e-9);
+  small = left;
+  reach_of_effect (-12.6, 12.6, &left, &right);
+  ck_assert_double_lt (left, small);
+  ck_assert_double_ge (left, 0);
+  reach_of_effect (7.3, 12.6, &left, &right);
+  ck_assert_double_ge (left, 50 - 1e-9);
+  ck_assert_double_eq_tol (right, 100 - small, 1e-6);
+  reach_of_effect (99, 12.6, &left, &right); /* never beyond the picture */
+  ck_assert_double_le (right, 100);
+  ck_assert_uint_eq (reach_of_effect (0.01, 12.6, &left, &right), 1); /* a dot in the middle */
+  ck_assert_double_eq_tol (left + right, 100, 1e-6);
 }
 END_TEST
 
@@ -227,6 +273,7 @@ sheets_suite (void)
   tcase_add_test (tc, axis_holds_values_in_whole_fives);
   tcase_add_test (tc, mark_and_bar_stand_at_their_values);
   tcase_add_test (tc, a_bar_that_goes_on_has_a_head);
+  tcase_add_test (tc, effects_point_to_their_side);
   tcase_add_test (tc, shapes_tell_the_basis);
   tcase_add_loop_test (tc, values_have_one_decimal_and_a_real_minus, 0, (int)ENL_COUNT (pka));
   tcase_add_test (tc, measured_values_have_no_interval_text);

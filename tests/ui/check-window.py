@@ -133,6 +133,35 @@ def check_typing(folder):
     expect('it says why it cannot enolise', 'reason' in now['substrates'][1])
 
 
+def check_why(folder):
+    """Contributions of the first set's substrates: they add up to the value that is shown."""
+    activate('step', '[<int32 -9>]')
+    now = wait('the anion forms stand beside the bases', lambda s: s['substrate'] == 0 and s['detail'] == 'forms')
+    expect('nothing is explained before it is asked for', now['why'] is None)
+    key('ctrl+e')
+    now = wait('Ctrl+E asks why', lambda s: s['detail'] == 'why' and s['why'])
+    why = now['why']
+    words = [line['words'] for line in why['lines']]
+    expect('a parent, then the second acyl group', words[0] == 'parent: acetone' and
+           words[1] == 'second acyl group (ester)' and len(words) <= 6)
+    expect('the lines add up to 14.2', abs(sum(line['value'] for line in why['lines']) - 14.2) < 1e-6)
+    expect('the published compound leads the precedents', why['precedents'][0] == 'ethyl acetoacetate')
+    plain = Picture(folder, 'why', lambda p: p.colours() > 200)
+    expect('there is a picture of it', plain.good)
+    activate('step', '[<int32 1>]')
+    now = wait('the explanation follows the selection', lambda s: s['substrate'] == 1 and s['why'] and
+               abs(s['why']['pka'] - top_site(s, 1)['pka']) < 1e-6 and s['why']['pka'] != why['pka'])
+    expect('it says how near the nearest compound is', 'alike' in now['why']['width'])
+    for look in ('dark', 'projector', 'light'):
+        activate('look', "[<'%s'>]" % look)
+        Picture(folder, 'why-' + look)
+    now = wait('the looks leave it as it is', lambda s: s['why'] and s['detail'] == 'why')
+    key('ctrl+r')
+    wait('Ctrl+R goes back to the forms', lambda s: s['detail'] == 'forms')
+    activate('step', '[<int32 -9>]')
+    wait('the first substrate is selected again', lambda s: s['substrate'] == 0)
+
+
 def check_history():
     last = 'O=C(c1ccccc1)c1ccccc1'
     activate('undo')
@@ -193,6 +222,7 @@ def drive(folder):
     window_id()
     time.sleep(0.4)
     check_first_start(folder)
+    check_why(folder)
     check_typing(folder)
     check_history()
     check_solvent()

@@ -9,10 +9,9 @@ enum { SATURATED, DOUBLE, TRIPLE, AROMATIC };
 #define PI_COUNTS       0.7 /* aryl, C=C, C≡C */
 #define OTHER_COUNTS    0.3
 #define RELATIVES       0.5
-/* Shells that are compared: the neighbours and two bonds beyond; the site itself is in the groups.
- */
-#define FIRST_SHELL 1
-#define LAST_SHELL  3
+/* Weights of the shells that are compared: from the neighbours out to the substituent on the far
+ * side of a benzene ring; the site itself is in the groups. */
+static const double shell_counts[ENL_N_SHELLS] = {0, 1, 1, 1, 0.5, 0.5, 0};
 /* Equal groups in surroundings that have nothing in common keep this share. */
 #define GROUPS_ALONE 0.4
 
@@ -132,13 +131,14 @@ double
 enl_kin_likeness (const EnlKin *a, const EnlShells *a_shells, const EnlKin *b,
                   const EnlShells *b_shells)
 {
-  double likeness[ENL_N_SHELLS], sum = 0, overlap = enl_kin_overlap (a, b);
+  double likeness[ENL_N_SHELLS], sum = 0, whole = 0, overlap = enl_kin_overlap (a, b);
 
   if (overlap == 0)
     return 0;
   enl_shells_compare (a_shells, b_shells, likeness);
-  for (int d = FIRST_SHELL; d <= LAST_SHELL; d++)
-    sum += likeness[d];
-  double around = sum / (LAST_SHELL - FIRST_SHELL + 1);
-  return sqrt (overlap * (GROUPS_ALONE + (1 - GROUPS_ALONE) * around));
+  for (int d = 0; d < ENL_N_SHELLS; d++) {
+    sum += shell_counts[d] * likeness[d];
+    whole += shell_counts[d];
+  }
+  return sqrt (overlap * (GROUPS_ALONE + (1 - GROUPS_ALONE) * sum / whole));
 }

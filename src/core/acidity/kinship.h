@@ -20,7 +20,7 @@ void enl_kin_describe (const EnlMolecule *mol, uint32_t atom, EnlKin *out);
  * ester, sulfone and sulfoxide) half: 0..1. 0 for different elements, bonding or charge. */
 double enl_kin_overlap (const EnlKin *a, const EnlKin *b);
 
-/* The overlap of the groups times that of the surroundings up to three bonds away: 0..1, 1 for the
+/* The overlap of the groups times that of the surroundings up to five bonds away: 0..1, 1 for the
  * same site. */
 double enl_kin_likeness (const EnlKin *a, const EnlShells *a_shells, const EnlKin *b,
                          const EnlShells *b_shells);

@@ -9,7 +9,7 @@ enum { CARBON = 6 };
 #define NEAR 2
 #define FAR  4
 
-static const char longer_alkyl[] = "longer or branched alkyl groups";
+static const char longer_alkyl[] = "larger alkyl groups";
 static const char rest[] = "rest of the molecule";
 
 static EnlWhyBranch

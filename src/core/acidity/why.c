@@ -107,13 +107,12 @@ closing_words (const Question *q)
   const EnlEstimate *e = &q->estimate[q->site];
 
   if (e->basis == ENL_BASIS_MEASURED)
-    return "published value minus the model's";
+    return "measured minus model";
   if (e->basis == ENL_BASIS_LAB)
-    return "own value minus the model's";
+    return "own value minus model";
   if (e->solvent == ENL_SOLVENT_THF && e->n_precedents && e->precedent[0].weight >= 1)
-    return enl_reference_row (ref, e->precedent[0].row)->lab
-               ? "own DMSO value minus the model's"
-               : "published DMSO value minus the model's";
+    return enl_reference_row (ref, e->precedent[0].row)->lab ? "own DMSO value minus model"
+                                                             : "measured in DMSO minus model";
   if (enl_estimator_is_held (e))
     return "held at the end of the scale";
   return "held at the hydrogen that goes first";
