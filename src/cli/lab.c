@@ -1,4 +1,4 @@
-/* Own values at the terminal: --lab and those of sets. */
+/* Own values at the terminal: --lab and those of sets; the bases of sets. */
 #include <stdio.h>
 
 #include "cli/verbs.h"
@@ -77,6 +77,7 @@ enl_cli_end (EnlRun *run)
   enl_knowledge_free (run->own);
   enl_knowledge_free (run->base);
   enl_lab_free (run->lab);
+  enl_base_table_free (run->bases);
   g_hash_table_unref (run->told);
 }
 
@@ -124,13 +125,26 @@ enter_set (EnlRun *run, const char *path, const EnlWorkset *set)
   return failed;
 }
 
+/* So do its bases. */
+static uint32_t
+take_bases (EnlRun *run, const char *path, const EnlWorkset *set)
+{
+  EnlError err;
+
+  if (enl_workset_base_table (set, run->base->bases, &run->bases, &err) == ENL_OK)
+    return 0;
+  enl_input_explain (path, &err);
+  return 1;
+}
+
 static uint32_t
 visit_set (const char *path, const EnlWorkset *set, void *data)
 {
   EnlRun *run = data;
 
+  g_clear_pointer (&run->bases, enl_base_table_free);
   if (set)
-    return enter_set (run, path, set);
+    return take_bases (run, path, set) + enter_set (run, path, set);
   run->knowledge = run->own ? run->own : run->base;
   g_clear_pointer (&run->of_set, enl_knowledge_free);
   return 0;

@@ -142,6 +142,8 @@ visit (const char *name, const EnlMolecule *mol, void *data, EnlError *err)
   if (status != ENL_OK)
     return status;
   EnlQuestion question = enl_analysis_question (a, run->knowledge, site, &run->options->conditions);
+  if (run->bases)
+    question.bases = run->bases;
   status = enl_bases_compare (&question, &comparison, err);
   uint32_t position = enl_molecule_atom (a->mol, a->sites->site[site].atom[0])->input;
   for (uint32_t i = 0; status == ENL_OK && i < comparison->n_candidates; i++)

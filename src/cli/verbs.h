@@ -23,6 +23,7 @@ typedef struct {
   EnlKnowledge *own, *of_set; /* with those of --lab; with those of the set being read as well */
   EnlLab *lab;                /* of --lab */
   GHashTable *told;           /* warnings that were printed */
+  EnlBaseTable *bases;        /* with those of the set being read; NULL outside a set */
 } EnlRun;
 
 /* Opens the knowledge and the files of --lab; false when one is at fault, which has been explained

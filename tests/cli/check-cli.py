@@ -140,6 +140,46 @@ def check_bases():
     expect('LDA in THF: complete', lda['verdict'] == 'complete' and float(lda['gap']) > 8, lda)
     out, _ = run('bases', 'ethyl acetoacetate')
     expect('the deferral stands below', 'qualified person' in out)
+    expect('so do the equivalents', '  0.95: ' in out and '  2.10: ' in out, out[-900:])
+
+
+def check_practice():
+    """Textbook pairs, common practice."""
+    def base(name, *arguments):
+        _, rows = tsv('bases', *arguments)
+        return [r for r in rows if r['base'] == name][0]
+    row = base('naoet', '--solvent', 'water', 'ethyl acetoacetate')
+    expect('acetoacetate with ethoxide in ethanol: full', row['verdict'] == 'complete', row)
+    expect('the medium is named', 'in its own alcohol' in row['cautions'], row)
+    row = base('naoet', '--solvent', 'water', 'acetone')
+    expect('acetone with ethoxide: partial, aldol', row['verdict'].startswith('partial') and
+           'self-aldol' in row['cautions'] and float(row['low']) < float(row['conversion']) < float(row['high']), row)
+    row = base('naoet', 'COC(=O)Cc1ccccc1')
+    expect('ester exchange', '[R10]' in row['cautions'] and row['verdict'] == 'complete, with a caution', row)
+    row = base('naome', 'O=C1CCCCC1Cl')
+    expect('Favorskii', row['verdict'] == 'reacts otherwise' and row['conversion'] == '' and
+           row['cautions'].startswith('Favorskii'), row)
+    out, _ = run('bases', '--solvent', 'thf', '--temperature', '-78', '--atom', '4', '--format', 'json',
+                 'CC(=O)Cc1ccc(O)cc1')
+    objects = [json.loads(line) for line in out.splitlines()]
+    lda = [o for o in objects if o['base'] == 'lda'][0]
+    expect('phenol takes the first equivalent', lda['needed'] == 2 and abs(lda['recommended'] - 2.1) < 1e-9 and
+           lda['competing'] == 'phenol O-H takes the first equivalent', lda)
+    expect('at 1.05 and 2.1 equivalents', lda['at_1.05'] < 0.2 and lda['at_2.10'] > 0.99, lda)
+    expect('hazard and deferral in json', 'moisture-sensitive' in lda['hazard'] and
+           'qualified person' in lda['deferral'] and lda['footing'] and lda['grade'] == 'partial', lda)
+    with tempfile.TemporaryDirectory() as folder:
+        path = os.path.join(folder, 'own.enolith')
+        with open(path, 'w', encoding='utf-8') as file:
+            json.dump({'format': 'enolith-set', 'version': 1, 'substrates': [{'structure': 'acetophenone'}],
+                       'bases': [{'name': 'ours', 'class': 'amidine', 'pKaH': {'dmso': 24.7},
+                                  'sigma': {'dmso': 0.3}}]}, file)
+        _, rows = tsv('bases', '--equiv', '1', path)
+        own = [r for r in rows if r['base'] == 'ours'][0]
+        expect('a base of the set: gap 0 gives one half', len(rows) == 81 and
+               abs(float(own['conversion']) - 0.5) < 1e-6, own)
+        _, rows = tsv('bases', path, 'acetone')
+        expect('it stays with its set', len(rows) == 81 + 80, len(rows))
 
 
 def check_molecule():
@@ -378,7 +418,7 @@ def check_plot(total):
 
 
 def main():
-    for check in (check_sites, check_explain, check_forms, check_bases, check_molecule, check_formats,
+    for check in (check_sites, check_explain, check_forms, check_bases, check_practice, check_molecule, check_formats,
                   check_failures, check_lab, check_footing, check_usage, check_figures, check_validate):
         check()
     print('%d checks, %d failed' % (count, len(failures)))

@@ -4,9 +4,11 @@
 #include <string.h>
 
 #include "core/base/table.h"
+#include "core/bases/base-private.h"
 
 struct EnlBaseTable {
-  EnlTable *text; /* owns every string of the bases */
+  EnlTable *text;     /* owns the strings of the bases it was read from, NULL: borrowed */
+  GStringChunk *kept; /* other strings, NULL: none */
   EnlBase *base;
   uint32_t n;
 };
@@ -158,6 +160,8 @@ enl_base_table_free (EnlBaseTable *table)
   if (!table)
     return;
   enl_table_free (table->text);
+  if (table->kept)
+    g_string_chunk_free (table->kept);
   g_free (table->base);
   g_free (table);
 }
@@ -183,4 +187,31 @@ enl_base_table_find (const EnlBaseTable *table, const char *text)
                               g_ascii_strcasecmp (table->base[i].name, text) == 0))
       return (int)i;
   return -1;
+}
+
+/* ---- for the files that make a table ---- */
+
+EnlBaseTable *
+enl_base_table_allocate (uint32_t n)
+{
+  EnlBaseTable *table = g_new0 (EnlBaseTable, 1);
+
+  table->base = g_new0 (EnlBase, n);
+  table->n = n;
+  return table;
+}
+
+EnlBase *
+enl_base_table_edit (EnlBaseTable *table, uint32_t index)
+{
+  g_assert (index < table->n);
+  return &table->base[index];
+}
+
+const char *
+enl_base_table_keep (EnlBaseTable *table, const char *text)
+{
+  if (!table->kept)
+    table->kept = g_string_chunk_new (256);
+  return g_string_chunk_insert (table->kept, text);
 }

@@ -120,11 +120,34 @@ read_substrates (const EnlReading *r, json_t *array, EnlWorkset *set)
   return ENL_OK;
 }
 
+/* Points at the text `quote` of a base in the file. */
+static EnlStatus
+read_bases (const EnlReading *r, json_t *array, EnlWorkset *set)
+{
+  size_t index;
+  json_t *item;
+
+  if (array && !json_is_array (array))
+    return enl_reading_fault (r, "bases", "write a list in square brackets", "is not a list");
+  json_array_foreach (array, index, item)
+  {
+    EnlError inner;
+    const char *quote = enl_workset_read_base (set, item, &inner);
+    if (!quote)
+      continue;
+    enl_reading_fault (r, quote, inner.advice, "");
+    if (r->err)
+      g_strlcpy (r->err->text, inner.text, sizeof r->err->text);
+    return ENL_ERROR_FORMAT;
+  }
+  return ENL_OK;
+}
+
 static EnlStatus
 read_root (const EnlReading *r, json_t *root, EnlWorkset *set)
 {
   static const char *const known[] = {"format", "version",   "conditions", "substrates",
-                                      "lab",    "selection", NULL};
+                                      "lab",    "selection", "bases",      NULL};
 
   if (!json_is_object (root) || strcmp (take_string (root, "format"), FORMAT) != 0)
     return enl_reading_fault (r, "format", "open a file that Enolith has saved",
@@ -137,6 +160,8 @@ read_root (const EnlReading *r, json_t *root, EnlWorkset *set)
     status = read_conditions (r, json_object_get (root, "conditions"), set);
   if (status == ENL_OK)
     status = enl_workset_read_lab (r, json_object_get (root, "lab"), set);
+  if (status == ENL_OK)
+    status = read_bases (r, json_object_get (root, "bases"), set);
   if (status != ENL_OK)
     return status;
   read_selection (json_object_get (root, "selection"), set);
@@ -223,6 +248,8 @@ enl_workset_write (const EnlWorkset *set)
   json_object_set_new (root, "substrates", substrates);
   if (enl_workset_lab_size (set))
     json_object_set_new (root, "lab", enl_workset_write_lab (set));
+  if (enl_workset_bases (set))
+    json_object_set_new (root, "bases", enl_workset_write_bases (set));
   json_object_set_new (root, "selection", write_selection (&set->selection));
   json_object_update_missing (root, set->kept_top);
   char *text = json_dumps (root, JSON_INDENT (2) | JSON_REAL_PRECISION (15));

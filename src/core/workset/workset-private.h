@@ -31,4 +31,10 @@ struct EnlWorkset {
   json_t *kept_top;     /* the same for the set itself */
   EnlConditions conditions;
   EnlSelection selection;
+  GPtrArray *base; /* EnlOwnBase */
 };
+
+/* Adds the base of a JSON object. NULL when all is well; else `err` is filled and the text at fault
+ * is returned (borrowed from the object), for a position in the file. */
+const char *enl_workset_read_base (EnlWorkset *set, json_t *object, EnlError *err);
+json_t *enl_workset_write_bases (const EnlWorkset *set);

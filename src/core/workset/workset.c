@@ -27,6 +27,12 @@ substrate_free (gpointer data)
 }
 
 static void
+free_base (gpointer data)
+{
+  enl_own_base_free (data);
+}
+
+static void
 unref_json (gpointer data)
 {
   json_decref (data);
@@ -41,6 +47,7 @@ enl_workset_new (void)
   set->kept = g_ptr_array_new_with_free_func (unref_json);
   set->lab = g_ptr_array_new_with_free_func ((GDestroyNotify)enl_lab_entry_free);
   set->kept_lab = g_ptr_array_new_with_free_func (unref_json);
+  set->base = g_ptr_array_new_with_free_func (free_base);
   set->kept_top = json_object ();
   set->conditions = enl_conditions_default ();
   set->selection = (EnlSelection){ENL_NONE, ENL_NONE, g_strdup ("")};
@@ -61,6 +68,8 @@ enl_workset_copy (const EnlWorkset *set)
     g_ptr_array_add (copy->lab, enl_lab_entry_copy (enl_workset_lab (set, i)));
     g_ptr_array_add (copy->kept_lab, json_deep_copy (g_ptr_array_index (set->kept_lab, i)));
   }
+  for (uint32_t i = 0; i < set->base->len; i++)
+    g_ptr_array_add (copy->base, enl_own_base_copy (enl_workset_base (set, i)));
   json_decref (copy->kept_top);
   copy->kept_top = json_deep_copy (set->kept_top);
   copy->conditions = set->conditions;
@@ -77,6 +86,7 @@ enl_workset_free (EnlWorkset *set)
   g_ptr_array_unref (set->kept);
   g_ptr_array_unref (set->lab);
   g_ptr_array_unref (set->kept_lab);
+  g_ptr_array_unref (set->base);
   json_decref (set->kept_top);
   g_free (set->selection.base);
   g_free (set);

@@ -7,6 +7,7 @@
 
 #include "core/acidity/lab.h"
 #include "core/bases/compare.h"
+#include "core/bases/own-base.h"
 
 #define ENL_MAX_SUBSTRATES 2000
 #define ENL_WORKSET_SUFFIX ".enolith"
@@ -62,6 +63,21 @@ void enl_workset_set_conditions (EnlWorkset *set, const EnlConditions *condition
 const EnlSelection *enl_workset_selection (const EnlWorkset *set);
 /* `base` NULL leaves the selected base as it is. */
 void enl_workset_select (EnlWorkset *set, uint32_t substrate, uint32_t atom, const char *base);
+
+/* ---- bases that the set brings along ---- */
+
+uint32_t enl_workset_bases (const EnlWorkset *set);
+const EnlOwnBase *enl_workset_base (const EnlWorkset *set, uint32_t index);
+/* Copies `base`. Errors of enl_own_base_check without a table; ENL_ERROR_UNKNOWN for a name that
+ * the set has already, ENL_ERROR_LIMIT beyond ENL_MAX_OWN_BASES. */
+EnlStatus enl_workset_add_base (EnlWorkset *set, const EnlOwnBase *base, EnlError *err);
+void enl_workset_remove_base (EnlWorkset *set, uint32_t index);
+/* `table` with the bases of the set behind its own rows (enl_base_table_extend); an error of
+ * enl_own_base_check when one of them does not fit. Caller: enl_base_table_free. */
+EnlStatus enl_workset_base_table (const EnlWorkset *set, const EnlBaseTable *table,
+                                  EnlBaseTable **out, EnlError *err) ENL_MUST_USE;
+
+/* ---- file ---- */
 
 /* Reads the text of a set file; errors have line and column. */
 EnlStatus enl_workset_parse (const char *text, size_t size, EnlWorkset **out,
