@@ -1,6 +1,7 @@
 #include "app/base-item.h"
 
 #include <math.h>
+#include <string.h>
 
 struct _EnlBaseItem {
   GObject parent;
@@ -70,19 +71,30 @@ conversion_text (const EnlCandidate *c)
   return g_strdup_printf ("%s (%.0f–%.0f)", value, 100 * c->low, 100 * c->high);
 }
 
+/* What speaks against it or can hurt someone is marked; remarks are not. */
+static const char *
+mark_of (EnlEffect effect)
+{
+  return effect == ENL_EFFECT_NOTE ? "·" : "⚠";
+}
+
 static char *
 details_text (const EnlBase *base, const EnlCandidate *c)
 {
   GString *out = g_string_new (NULL);
 
-  for (uint32_t i = 0; i < c->n_cautions; i++)
-    g_string_append_printf (out, "%s⚠ %s", out->len ? "\n" : "", c->caution[i].text);
+  for (uint32_t i = 0; i < c->n_cautions; i++) /* the reason has told one of them already */
+    if (!strstr (c->reason, c->caution[i].clause))
+      g_string_append_printf (out, "%s%s %s", out->len ? "\n" : "",
+                              mark_of (c->caution[i].rule->effect), c->caution[i].text);
   if (base->nucleophilicity[0])
     g_string_append_printf (out, "%sNucleophilicity: %s", out->len ? "\n" : "",
                             base->nucleophilicity);
   if (base->typical_solvents[0])
     g_string_append_printf (out, "%sUsual solvents: %s; %s °C", out->len ? "\n" : "",
                             base->typical_solvents, base->typical_temperature);
+  if (base->form[0])
+    g_string_append_printf (out, "%sSold as: %s", out->len ? "\n" : "", base->form);
   if (base->incompatible[0])
     g_string_append_printf (out, "%sKeep away from: %s", out->len ? "\n" : "", base->incompatible);
   if (base->note[0])

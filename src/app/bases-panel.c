@@ -3,6 +3,8 @@
 #include <math.h>
 
 #include "app/base-item.h"
+#include "app/own-base-form.h"
+#include "core/bases/equivalents.h"
 
 struct _EnlBasesPanel {
   GtkWidget parent;
@@ -10,13 +12,16 @@ struct _EnlBasesPanel {
   GListStore *items;
   GtkSingleSelection *selection;
   gboolean filling;
-  guint pending; /* timeout that fills the list, 0: none */
-  guint reveal;  /* tick that scrolls to the selected row, 0: none */
-  guint frames;  /* since the list was filled */
+  guint pending;             /* timeout that fills the list, 0: none */
+  guint reveal;              /* tick that scrolls to the selected row, 0: none */
+  guint frames;              /* since the list was filled */
+  EnlBaseTable *bases;       /* owned: the known ones and those of the set */
+  EnlComparison *comparison; /* owned: what the list shows, in its order; NULL: nothing */
 
-  GtkWidget *box, *conditions, *details_scroller;
+  GtkWidget *box, *conditions, *details_scroller, *remove_base, *form;
+  GtkMenuButton *add_base;
   GtkLabel *heading, *details, *deferral;
-  GtkSpinButton *equivalents, *concentration;
+  GtkSpinButton *equivalents, *concentration, *temperature;
   GtkColumnView *view;
 };
 
@@ -37,7 +42,7 @@ on_setup (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
   if (cell == ENL_CELL_NAME)
     gtk_label_set_width_chars (GTK_LABEL (label), 18);
   if (cell == ENL_CELL_VERDICT)
-    gtk_label_set_width_chars (GTK_LABEL (label), 19);
+    gtk_label_set_width_chars (GTK_LABEL (label), 22);
   if (cell == ENL_CELL_REASON)
     gtk_label_set_width_chars (GTK_LABEL (label), 24);
   if (number)
@@ -72,18 +77,59 @@ add_column (EnlBasesPanel *self, const char *title, EnlBaseCell cell, gboolean e
 
 /* ---- filling ---- */
 
+/* The question that the list answers, as things stand now. False when there is none. */
+static gboolean
+take_question (EnlBasesPanel *self, EnlConditions *conditions, EnlQuestion *out)
+{
+  const EnlWorkset *set = enl_session_set (self->session);
+  uint32_t site = enl_session_site (self->session);
+
+  if (site == ENL_NONE || !self->bases)
+    return FALSE;
+  uint32_t substrate = enl_workset_selection (set)->substrate;
+  const EnlAnalysis *a = enl_session_outcome (self->session, substrate).analysis;
+  *conditions = *enl_workset_conditions (set);
+  conditions->solvent = a->solvent; /* until a new analysis arrives the old one stays consistent */
+  *out = enl_analysis_question (a, enl_session_knowledge (self->session), site, conditions);
+  out->bases = self->bases;
+  return TRUE;
+}
+
+/* Equivalents of the base in row `row`, and the footing; "" when there is nothing to say. */
+static char *
+advice_text (EnlBasesPanel *self, guint row)
+{
+  g_autoptr (EnlEquivalents) e = NULL;
+  EnlConditions conditions;
+  EnlQuestion question;
+
+  if (!self->comparison || row >= self->comparison->n_candidates ||
+      !take_question (self, &conditions, &question))
+    return g_strdup ("");
+  const EnlCandidate *c = &self->comparison->candidate[row];
+  if (enl_equivalents_new (&question, c, &e, NULL) != ENL_OK)
+    return g_strdup ("");
+  g_autofree char *text = enl_equivalents_text (e, enl_base_table_get (self->bases, c->base)->name);
+  return g_strdup_printf ("\n%s%s", text, enl_footing_text (conditions.solvent));
+}
+
 static void
 show_details (EnlBasesPanel *self)
 {
   EnlBaseItem *item = gtk_single_selection_get_selected_item (self->selection);
+  guint row = gtk_single_selection_get_selected (self->selection);
+  int base = item && self->bases ? enl_base_table_find (self->bases, enl_base_item_id (item)) : -1;
 
+  gtk_widget_set_visible (self->remove_base,
+                          base >= 0 && enl_base_table_get (self->bases, (uint32_t)base)->own);
   if (!item) {
     gtk_label_set_text (self->details, "");
     return;
   }
-  g_autofree char *text =
-      g_strdup_printf ("%s: %s\n%s", enl_base_item_cell (item, ENL_CELL_NAME),
-                       enl_base_item_cell (item, ENL_CELL_REASON), enl_base_item_details (item));
+  g_autofree char *advice = advice_text (self, row);
+  g_autofree char *text = g_strdup_printf ("%s: %s\n%s%s", enl_base_item_cell (item, ENL_CELL_NAME),
+                                           enl_base_item_cell (item, ENL_CELL_REASON),
+                                           enl_base_item_details (item), advice);
   gtk_label_set_text (self->details, text);
 }
 
@@ -136,32 +182,66 @@ select_wanted (EnlBasesPanel *self)
 }
 
 static void
+forget (EnlBasesPanel *self)
+{
+  g_clear_pointer (&self->comparison, enl_comparison_free);
+  g_clear_pointer (&self->bases, enl_base_table_free);
+}
+
+/* Asks anew; false with the error when there is nothing to show. */
+static EnlStatus
+compare (EnlBasesPanel *self, EnlError *err)
+{
+  EnlConditions conditions;
+  EnlQuestion question;
+
+  forget (self);
+  EnlStatus status =
+      enl_workset_base_table (enl_session_set (self->session),
+                              enl_session_knowledge (self->session)->bases, &self->bases, err);
+  if (status == ENL_OK && take_question (self, &conditions, &question))
+    status = enl_bases_compare (&question, &self->comparison, err);
+  return status;
+}
+
+static char *
+heading_text (const EnlAnalysis *a, uint32_t site)
+{
+  return g_strdup_printf ("Bases for site %u, %s, in %s%s", enl_analysis_rank (a, site),
+                          a->sites->site[site].position, enl_solvent_heading (a->solvent),
+                          a->solvent == ENL_SOLVENT_WATER ? "; alkoxides in their own alcohol"
+                                                          : "");
+}
+
+static void
 fill (EnlBasesPanel *self, const EnlAnalysis *a, uint32_t site)
 {
-  const EnlKnowledge *k = enl_session_knowledge (self->session);
-  g_autoptr (EnlComparison) comparison = NULL;
   g_autoptr (GPtrArray) items = g_ptr_array_new_with_free_func (g_object_unref);
-  EnlConditions conditions = *enl_workset_conditions (enl_session_set (self->session));
   EnlError err;
 
-  conditions.solvent = a->solvent; /* until a new analysis arrives the old one stays consistent */
-  EnlQuestion question = enl_analysis_question (a, k, site, &conditions);
-  if (enl_bases_compare (&question, &comparison, &err) != ENL_OK) {
+  if (compare (self, &err) != ENL_OK) {
     g_autofree char *message = enl_error_message (&err);
     gtk_label_set_text (self->heading, message);
     g_list_store_remove_all (self->items);
     return;
   }
-  for (uint32_t i = 0; i < comparison->n_candidates; i++) {
-    const EnlCandidate *c = &comparison->candidate[i];
-    g_ptr_array_add (items, enl_base_item_new (enl_base_table_get (k->bases, c->base), c));
+  for (uint32_t i = 0; i < self->comparison->n_candidates; i++) {
+    const EnlCandidate *c = &self->comparison->candidate[i];
+    g_ptr_array_add (items, enl_base_item_new (enl_base_table_get (self->bases, c->base), c));
   }
   g_list_store_splice (self->items, 0, g_list_model_get_n_items (G_LIST_MODEL (self->items)),
                        items->pdata, items->len);
-  g_autofree char *text =
-      g_strdup_printf ("Bases for site %u, %s, in %s", enl_analysis_rank (a, site),
-                       a->sites->site[site].position, enl_solvent_heading (a->solvent));
+  g_autofree char *text = heading_text (a, site);
   gtk_label_set_text (self->heading, text);
+  gtk_widget_set_tooltip_text (GTK_WIDGET (self->heading), enl_footing_text (a->solvent));
+}
+
+/* Values set from here do not come back as changes: `filling` is on. */
+static void
+show_number (GtkSpinButton *button, double value)
+{
+  if (fabs (gtk_spin_button_get_value (button) - value) > 1e-9)
+    gtk_spin_button_set_value (button, value);
 }
 
 static void
@@ -172,11 +252,11 @@ refresh (EnlBasesPanel *self)
   uint32_t site = enl_session_site (self->session);
 
   self->filling = TRUE;
-  if (fabs (gtk_spin_button_get_value (self->equivalents) - conditions->equivalents) > 1e-9)
-    gtk_spin_button_set_value (self->equivalents, conditions->equivalents);
-  if (fabs (gtk_spin_button_get_value (self->concentration) - conditions->concentration) > 1e-9)
-    gtk_spin_button_set_value (self->concentration, conditions->concentration);
+  show_number (self->equivalents, conditions->equivalents);
+  show_number (self->concentration, conditions->concentration);
+  show_number (self->temperature, conditions->temperature);
   if (site == ENL_NONE) {
+    forget (self);
     g_list_store_remove_all (self->items);
     gtk_label_set_text (self->heading, "Bases: select an acidic hydrogen");
   } else {
@@ -243,7 +323,26 @@ on_conditions (GtkSpinButton *button, EnlBasesPanel *self)
     return;
   c.equivalents = gtk_spin_button_get_value (self->equivalents);
   c.concentration = gtk_spin_button_get_value (self->concentration);
+  c.temperature = gtk_spin_button_get_value (self->temperature);
   enl_session_set_conditions (self->session, &c, NULL);
+}
+
+static void
+on_remove_base (GtkButton *button, EnlBasesPanel *self)
+{
+  EnlBaseItem *item = gtk_single_selection_get_selected_item (self->selection);
+  g_autofree char *id = item ? g_strdup (enl_base_item_id (item)) : NULL;
+
+  (void)button;
+  if (id)
+    enl_session_remove_base (self->session, id);
+}
+
+static void
+on_form_shown (GtkPopover *popover, EnlBasesPanel *self)
+{
+  (void)popover;
+  enl_own_base_form_present (ENL_OWN_BASE_FORM (self->form));
 }
 
 static void
@@ -278,6 +377,7 @@ enl_bases_panel_dispose (GObject *object)
     stop_revealing (self);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   self->view = NULL;
+  forget (self);
   g_clear_object (&self->session);
   g_clear_object (&self->selection);
   G_OBJECT_CLASS (enl_bases_panel_parent_class)->dispose (object);
@@ -300,8 +400,12 @@ enl_bases_panel_class_init (EnlBasesPanelClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, deferral);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, equivalents);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, concentration);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, temperature);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, add_base);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, remove_base);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, view);
   gtk_widget_class_bind_template_callback (widget_class, on_conditions);
+  gtk_widget_class_bind_template_callback (widget_class, on_remove_base);
 }
 
 static void
@@ -320,11 +424,23 @@ enl_bases_panel_init (EnlBasesPanel *self)
   g_signal_connect (self->selection, "notify::selected-item", G_CALLBACK (on_selected), self);
 }
 
+static void
+add_form (EnlBasesPanel *self)
+{
+  GtkWidget *popover = gtk_popover_new ();
+
+  self->form = enl_own_base_form_new (self->session);
+  gtk_popover_set_child (GTK_POPOVER (popover), self->form);
+  g_signal_connect (popover, "show", G_CALLBACK (on_form_shown), self);
+  gtk_menu_button_set_popover (self->add_base, popover);
+}
+
 void
 enl_bases_panel_follow (EnlBasesPanel *self, EnlSession *session, EnlLook *look)
 {
   g_assert (!self->session);
   self->session = g_object_ref (session);
+  add_form (self);
   gtk_label_set_text (self->deferral,
                       enl_rule_table_deferral (enl_session_knowledge (session)->rules));
   g_signal_connect_object (session, "selection-changed", G_CALLBACK (on_selection_changed), self,

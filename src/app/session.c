@@ -307,6 +307,44 @@ enl_session_set_conditions (EnlSession *self, const EnlConditions *conditions, E
   return ENL_OK;
 }
 
+static void
+announce_bases (EnlSession *self)
+{
+  g_signal_emit (self, signal_id[CONDITIONS_CHANGED], 0);
+  g_signal_emit (self, signal_id[STATE_CHANGED], 0);
+}
+
+EnlStatus
+enl_session_add_base (EnlSession *self, const EnlOwnBase *base, EnlError *err)
+{
+  const EnlSelection *now = enl_workset_selection (self->set);
+  EnlStatus status = enl_own_base_check (base, self->knowledge->bases, err);
+
+  if (status != ENL_OK)
+    return status;
+  remember (self, NULL);
+  status = enl_workset_add_base (self->set, base, err);
+  if (status != ENL_OK) {
+    enl_history_drop (self->history);
+    return status;
+  }
+  enl_workset_select (self->set, now->substrate, now->atom, base->name);
+  announce_bases (self);
+  return ENL_OK;
+}
+
+void
+enl_session_remove_base (EnlSession *self, const char *id)
+{
+  for (uint32_t i = 0; i < enl_workset_bases (self->set); i++)
+    if (strcmp (enl_workset_base (self->set, i)->name, id) == 0) {
+      remember (self, NULL);
+      enl_workset_remove_base (self->set, i);
+      announce_bases (self);
+      return;
+    }
+}
+
 bool
 enl_session_can_undo (EnlSession *self)
 {

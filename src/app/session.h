@@ -47,6 +47,10 @@ void enl_session_remove (EnlSession *session, uint32_t substrate);
 void enl_session_move (EnlSession *session, uint32_t from, uint32_t to);
 EnlStatus enl_session_set_conditions (EnlSession *session, const EnlConditions *conditions,
                                       EnlError *err);
+/* A base of the set's own; it becomes the selected one. */
+EnlStatus enl_session_add_base (EnlSession *session, const EnlOwnBase *base, EnlError *err);
+/* Nothing happens when the set has no base of this id. */
+void enl_session_remove_base (EnlSession *session, const char *id);
 bool enl_session_can_undo (EnlSession *session);
 bool enl_session_can_redo (EnlSession *session);
 void enl_session_undo (EnlSession *session);

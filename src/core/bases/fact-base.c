@@ -93,7 +93,7 @@ find_usual_solvent (const EnlFactView *v, EnlFactValue *out)
 {
   EnlSolvent solvent = v->question->conditions->solvent;
 
-  out->flag = v->candidate->own_alcohol ||
+  out->flag = v->candidate->own_alcohol || !v->base->typical_solvents[0] ||
               strstr (v->base->typical_solvents, enl_solvent_label (solvent)) != NULL;
 }
 

@@ -214,7 +214,8 @@ tail_of_partial (const EnlJudge *j, const EnlBase *base, const EnlCandidate *out
 {
   if (out->verdict == ENL_VERDICT_SHARED)
     return ", the rest is the anion of other sites; none stays neutral";
-  if (out->selectivity < 0.5 && j->question->target != j->ions->most_acidic)
+  if (out->selectivity < 0.5 && j->question->target != j->ions->most_acidic &&
+      j->ions->n_competing == 0) /* competing acids are told by their rule */
     return "; another hydrogen takes the base first";
   if (base->irreversible && out->conversion < COMPLETE_FROM)
     return "; add more base";
