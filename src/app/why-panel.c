@@ -6,6 +6,8 @@
 
 /* Effects up to this share the scale of the bars, so that small ones do not look large. */
 #define LEAST_SCALE 5.0
+/* Of an explanation that a new one is about to replace. */
+#define OLD_OPACITY 0.45
 
 struct _EnlWhyPanel {
   GtkWidget parent;
@@ -58,6 +60,7 @@ fill (EnlWhyPanel *self)
   clear_list (self->lines);
   clear_list (self->precedents);
   gtk_widget_set_visible (self->content, self->result != NULL);
+  gtk_widget_set_opacity (self->content, self->running ? OLD_OPACITY : 1);
   if (!self->result)
     return;
   fill_lines (self);
@@ -129,6 +132,7 @@ refresh (EnlWhyPanel *self)
   g_autofree char *heading = g_strdup_printf (
       "Why this value: site %u, %s", enl_analysis_rank (a, site), a->sites->site[site].position);
   set_heading (self, heading);
+  gtk_widget_set_opacity (self->content, OLD_OPACITY);
   self->running = g_cancellable_new ();
   enl_why_job_start (a, site, self->running, on_done, g_object_ref (self));
 }

@@ -104,6 +104,15 @@ def check_explain():
     expect('text: a block under its site', abs(sum(numbers) - 13.3) < 1e-6 and
            'second acyl group (acetyl)' in out, out)
     expect('text: precedents with weight and source', 'weight 1.00' in out and 'Olmstead' in out, out)
+    with tempfile.TemporaryDirectory() as folder:
+        path = os.path.join(folder, 'own.tsv')
+        with open(path, 'w') as stream:
+            stream.write('structure\tatom\tsolvent\tpka\tsigma\nO=C1Cc2ccccc2C1\t3\tdmso\t16.4\t0.3\n')
+        out, _ = run('sites', '--explain', '--lab', path, '--format', 'json', 'O=C1Cc2ccccc2C1')
+        own = json.loads(out.splitlines()[0])
+        lines = own['why']['lines']
+        expect('an own value closes the sum', own['pka'] == 16.4 and lines[-1]['words'] == 'own value minus model' and
+               abs(sum(line['value'] for line in lines) - 16.4) < 1e-6, own)
     run('sites', '--explain=2', 'acetone', code=2)
     run('forms', '--explain', 'acetone', code=2)
 

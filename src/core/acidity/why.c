@@ -225,23 +225,13 @@ nearest (const EnlEstimate *e)
   return best;
 }
 
-static char *
-width_words (const Question *q)
+/* Where the width of an estimate comes from. */
+static void
+add_estimate_width (const Question *q, GString *out)
 {
   const EnlEstimate *e = &q->estimate[q->site];
   EnlAcidClass class = enl_acid_class (q->mol, q->sites->site[q->site].atom[0]);
-  GString *out = g_string_new (NULL);
 
-  g_string_append_printf (out, "±%.1f (90 %%): ", (e->high - e->low) / 2);
-  if (e->basis == ENL_BASIS_MEASURED) {
-    g_string_append (out, "the uncertainty of the published value");
-    return g_string_free (out, FALSE);
-  }
-  if (e->basis == ENL_BASIS_LAB) {
-    g_string_append_printf (out, "the uncertainty of your own value%s%s", e->remark ? "; " : "",
-                            e->remark ? e->remark : "");
-    return g_string_free (out, FALSE);
-  }
   if (e->n_precedents == 0)
     g_string_append (out, "nothing like it was measured; ");
   else
@@ -249,8 +239,27 @@ width_words (const Question *q)
                             100 * nearest (e));
   g_string_append_printf (out, "nine in ten %s in %s lay inside such intervals when left out",
                           class_words (class), e->solvent == ENL_SOLVENT_WATER ? "water" : "DMSO");
+}
+
+static char *
+width_words (const Question *q)
+{
+  const EnlEstimate *e = &q->estimate[q->site];
+  bool known = e->n_precedents && e->precedent[0].weight >= 1;
+  GString *out = g_string_new (NULL);
+
+  g_string_append_printf (out, "±%.1f (90 %%): ", (e->high - e->low) / 2);
+  if (e->basis == ENL_BASIS_MEASURED)
+    g_string_append (out, "the uncertainty of the published value");
+  else if (e->basis == ENL_BASIS_LAB)
+    g_string_append (out, "the uncertainty of your own value");
+  else if (known)
+    g_string_append (out, "the uncertainty of the value in DMSO");
+  else
+    add_estimate_width (q, out);
   if (e->remark)
-    g_string_append_printf (out, "; widened: %s", e->remark);
+    g_string_append_printf (out, "; %s%s", e->basis == ENL_BASIS_ESTIMATED ? "widened: " : "",
+                            e->remark);
   if (e->footing)
     g_string_append_printf (out, "; widened: %s", e->footing);
   return g_string_free (out, FALSE);

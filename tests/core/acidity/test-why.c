@@ -245,6 +245,34 @@ START_TEST (effects_are_those_of_the_table)
 }
 END_TEST
 
+START_TEST (widths_have_a_reason)
+{
+  static const struct {
+    const char *smiles;
+    EnlSolvent solvent;
+    const char *words;
+  } width_case[] = {
+      {"CC(=O)[CH2:1]C(C)=O", ENL_SOLVENT_DMSO, "the uncertainty of the published value"},
+      {"CC(=O)[CH2:1]C(C)=O", ENL_SOLVENT_THF, "the uncertainty of the value in DMSO; widened"},
+      {"O=C1[CH2:1]c2ccccc2C1", ENL_SOLVENT_DMSO, "nine in ten alpha C-H acids in DMSO"},
+      {"O=C1[CH2:1]c2ccccc2C1", ENL_SOLVENT_WATER, "% alike"},
+      {"CC(=O)C=C[CH3:1]", ENL_SOLVENT_DMSO, "nothing like it was measured"},
+      {"[CH3:1]C(=O)O", ENL_SOLVENT_DMSO, "widened: second deprotonation"},
+  };
+
+  for (size_t k = 0; k < ENL_COUNT (width_case); k++) {
+    g_autoptr (EnlMolecule) mol = read_smiles (width_case[k].smiles);
+    Result r = analyse (mol, width_case[k].solvent);
+    const EnlSite *site = enl_sites_of_atom (r.sites, mapped_atom (mol));
+    g_autoptr (EnlWhy) why =
+        enl_why_new (estimator, mol, r.sites, r.estimate, (uint32_t)(site - r.sites->site));
+    ck_assert_msg (strstr (why->width, width_case[k].words), "%s: %s", width_case[k].smiles,
+                   why->width);
+    clear (&r);
+  }
+}
+END_TEST
+
 /* ---- laws ---- */
 
 START_TEST (lines_add_up_on_every_published_acid)
@@ -504,6 +532,7 @@ why_suite (void)
   tcase_set_timeout (tc, 120);
   tcase_add_loop_test (tc, words_of_lines, 0, ENL_COUNT (word_case));
   tcase_add_test (tc, effects_are_those_of_the_table);
+  tcase_add_test (tc, widths_have_a_reason);
   tcase_add_test (tc, lines_add_up_on_every_published_acid);
   tcase_add_test (tc, links_are_molecules);
   tcase_add_test (tc, order_of_atoms_does_not_matter);
