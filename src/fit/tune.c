@@ -8,32 +8,15 @@
 /* Choices of the fit, judged by leaving out fifths of the compounds (see DEVELOPERS.md). */
 #define STUDENT_FREEDOM 4.0
 #define PULL            0.002 /* on the plain hyperparameters */
-#define RELEVANCE_PULL  0.002 /* on the relevance of each descriptor */
+#define RELEVANCE_PULL  0.001 /* on the relevance of each descriptor */
 #define HOPELESS        1e6   /* loss where there is no factor */
-#define LEAST_DISTANCE  1e-9
 
 struct EnlTuner {
   EnlSiteSet *rows; /* standardised */
   uint32_t *fold;
   double *y, *noise; /* pKa - prior, published variance */
-  float *likeness;   /* of every pair, shell by shell: they do not change */
   double start[ENL_N_HYPER];
 };
-
-static void
-fill_likeness (EnlTuner *tuner)
-{
-  const EnlSiteSet *rows = tuner->rows;
-  double likeness[ENL_N_SHELLS];
-
-  tuner->likeness = g_new (float, ENL_PACKED (rows->n, 0) * ENL_N_SHELLS + 1);
-  for (uint32_t i = 0; i < rows->n; i++)
-    for (uint32_t j = 0; j <= i; j++) {
-      enl_shells_compare (&rows->shells[i], &rows->shells[j], likeness);
-      for (int d = 0; d < ENL_N_SHELLS; d++)
-        tuner->likeness[ENL_PACKED (i, j) * ENL_N_SHELLS + d] = (float)likeness[d];
-    }
-}
 
 EnlStatus
 enl_tuner_new (const EnlReference *ref, EnlTuner **out, EnlError *err)
@@ -58,7 +41,6 @@ enl_tuner_new (const EnlReference *ref, EnlTuner **out, EnlError *err)
     tuner->y[i] = row->pka - ENL_PRIOR_PKA;
     tuner->noise[i] = row->sigma * row->sigma;
   }
-  fill_likeness (tuner);
   enl_hyper_init (&hyper);
   for (int k = 0; k < ENL_N_HYPER; k++)
     tuner->start[k] = log (hyper.value[k]);
@@ -75,7 +57,6 @@ enl_tuner_free (EnlTuner *tuner)
   g_free (tuner->fold);
   g_free (tuner->y);
   g_free (tuner->noise);
-  g_free (tuner->likeness);
   g_free (tuner);
 }
 
@@ -114,11 +95,7 @@ fill_covariance (Work *work)
   for (uint32_t i = 0; i < work->n; i++) {
     for (uint32_t j = 0; j <= i; j++) {
       size_t at = ENL_PACKED (i, j);
-      double likeness[ENL_N_SHELLS];
-      for (int d = 0; d < ENL_N_SHELLS; d++)
-        likeness[d] = tuner->likeness[at * ENL_N_SHELLS + d];
       enl_kernel_pair (&work->relevance, tuner->rows, i, tuner->rows, j, &work->parts[at]);
-      work->parts[at].likeness = enl_kernel_likeness (&work->hyper, likeness);
       matrix[at] = enl_kernel_value (&work->hyper, &work->parts[at]);
     }
     matrix[ENL_PACKED (i, i)] += work->hyper.value[ENL_H_noise] + tuner->noise[i];
@@ -257,32 +234,26 @@ fill_adjoint (const Work *work)
 
 /* Adds `push` times the derivatives of one pair's covariance by the plain hyperparameters. */
 static void
-add_plain (const Work *work, size_t at, double push, double *gradient)
+add_plain (const Work *work, const EnlKernelParts *p, double push, double *gradient)
 {
   const double *h = work->hyper.value;
-  const EnlKernelParts *p = &work->parts[at];
-  const float *shell = work->tuner->likeness + at * ENL_N_SHELLS;
-  double same = p->same_element, both = p->same_element && p->same_solvent, weight = 0;
-  double smooth = push * enl_kernel_smooth (&work->hyper, p);
-  double environment = push * enl_kernel_environment (&work->hyper, p);
+  double linear = push * p->linear, smooth = push * enl_kernel_smooth (&work->hyper, p);
+  double share = enl_kernel_smooth_share (&work->hyper, p);
+  double solvent = p->same_solvent ? h[ENL_H_smooth_solvent] : 0;
+  double shape = h[ENL_H_smooth_shape], length = h[ENL_H_smooth_length];
+  double v = p->square / (2 * shape * length * length), u = 1 + v;
 
-  gradient[ENL_H_linear_common] += push * p->linear * h[ENL_H_linear_common];
-  gradient[ENL_H_linear_element] += push * p->linear * h[ENL_H_linear_element] * same;
-  gradient[ENL_H_linear_solvent] += push * p->linear * h[ENL_H_linear_solvent] * both;
-  gradient[ENL_H_smooth] += smooth;
-  gradient[ENL_H_smooth_length] += smooth * p->distance / h[ENL_H_smooth_length];
-  gradient[ENL_H_environment] += environment;
-  gradient[ENL_H_environment_decay] -= environment * (1 - p->likeness) * h[ENL_H_environment_decay];
-  if (p->same_solvent) {
-    double s = h[ENL_H_smooth_solvent], e = h[ENL_H_environment_solvent];
-    gradient[ENL_H_smooth_solvent] += smooth * s / (1 + s);
-    gradient[ENL_H_environment_solvent] += environment * e / (1 + e);
-  }
-  for (int d = 0; d < ENL_N_SHELLS; d++)
-    weight += h[ENL_H_shell + d];
-  for (int d = 0; d < ENL_N_SHELLS; d++)
-    gradient[ENL_H_shell + d] += environment * h[ENL_H_environment_decay] * h[ENL_H_shell + d] /
-                                 weight * ((double)shell[d] - p->likeness);
+  gradient[ENL_H_linear_common] += linear * h[ENL_H_linear_common];
+  if (p->same_element)
+    gradient[ENL_H_linear_element] += linear * h[ENL_H_linear_element];
+  if (p->same_element && p->same_solvent)
+    gradient[ENL_H_linear_solvent] += linear * h[ENL_H_linear_solvent];
+  gradient[ENL_H_smooth_common] += smooth * h[ENL_H_smooth_common] * (1 + solvent) / share;
+  if (p->same_element)
+    gradient[ENL_H_smooth_element] += smooth * h[ENL_H_smooth_element] * (1 + solvent) / share;
+  gradient[ENL_H_smooth_solvent] += smooth * solvent / (1 + solvent);
+  gradient[ENL_H_smooth_length] += smooth * 2 * shape * v / u;
+  gradient[ENL_H_smooth_shape] += smooth * shape * (v / u - log (u));
 }
 
 /* The same by the relevances. */
@@ -294,17 +265,13 @@ add_relevance (const Work *work, uint32_t i, uint32_t j, double push, double *gr
   const EnlKernelParts *p = &work->parts[ENL_PACKED (i, j)];
   const float *a = rows->z + (size_t)i * ENL_N_DESCRIPTORS;
   const float *b = rows->z + (size_t)j * ENL_N_DESCRIPTORS;
-  double linear = push * (h[ENL_H_linear_common] + h[ENL_H_linear_element] * p->same_element +
-                          h[ENL_H_linear_solvent] * (p->same_element && p->same_solvent));
-  double smooth = 0;
+  double length = h[ENL_H_smooth_length];
+  double u = 1 + p->square / (2 * h[ENL_H_smooth_shape] * length * length);
+  double slope = -push * enl_kernel_smooth (&work->hyper, p) / (2 * u * length * length);
 
-  if (p->distance > LEAST_DISTANCE)
-    smooth =
-        -push * enl_kernel_smooth (&work->hyper, p) / (2 * p->distance * h[ENL_H_smooth_length]);
   for (int k = 0; k < ENL_N_DESCRIPTORS; k++) {
     double gap = (double)(a[k] - b[k]);
-    gradient[ENL_H_linear_weight + k] += linear * (double)(work->relevance.linear[k] * a[k] * b[k]);
-    gradient[ENL_H_smooth_weight + k] += smooth * (double)work->relevance.smooth[k] * gap * gap;
+    gradient[ENL_H_relevance + k] += slope * (double)work->relevance.smooth[k] * gap * gap;
   }
 }
 
@@ -316,7 +283,7 @@ fill_gradient (const Work *work, double *gradient)
   for (uint32_t i = 0; i < work->n; i++) {
     for (uint32_t j = 0; j <= i; j++) {
       size_t at = ENL_PACKED (i, j);
-      add_plain (work, at, adjoint[at], gradient);
+      add_plain (work, &work->parts[at], adjoint[at], gradient);
       add_relevance (work, i, j, adjoint[at], gradient);
     }
     gradient[ENL_H_noise] += adjoint[ENL_PACKED (i, i)] * work->hyper.value[ENL_H_noise];
@@ -338,7 +305,7 @@ enl_tuner_loss (EnlTuner *tuner, const double *theta, double *gradient)
     if (gradient)
       fill_gradient (&work, gradient);
     for (int k = 0; k < ENL_N_HYPER; k++) {
-      double pull = k < ENL_H_linear_weight ? PULL : RELEVANCE_PULL;
+      double pull = k < ENL_H_relevance ? PULL : RELEVANCE_PULL;
       double gap = theta[k] - tuner->start[k];
       loss += pull * gap * gap;
       if (gradient)

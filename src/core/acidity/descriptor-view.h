@@ -24,6 +24,8 @@ void enl_view_fill_atom (EnlSiteView *view);
 void enl_view_fill_pi (EnlSiteView *view);
 void enl_view_fill_groups (EnlSiteView *view);
 void enl_view_fill_rings (EnlSiteView *view);
+void enl_view_fill_shape (EnlSiteView *view);
+void enl_view_fill_polar (EnlSiteView *view);
 void enl_view_fill_ring_sums (EnlSiteView *view);
 
 /* Number of neighbours of the site of a kind, once enl_view_fill_groups has run. */

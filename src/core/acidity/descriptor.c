@@ -76,6 +76,8 @@ enl_descriptors_fill (EnlSurvey *survey, const EnlPi *pi, uint32_t atom, double 
   enl_view_fill_atom (&view);
   enl_view_fill_pi (&view);
   enl_view_fill_rings (&view);
+  enl_view_fill_shape (&view);
+  enl_view_fill_polar (&view);
   enl_view_fill_ring_sums (&view);
   for (int i = 0; i < ENL_N_DESCRIPTORS; i++)
     if (!isfinite (value[i]))

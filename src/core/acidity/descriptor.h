@@ -159,7 +159,24 @@
   X (donor5)                                                                                       \
   X (donor6)                                                                                       \
   X (acceptor5)                                                                                    \
-  X (acceptor6)
+  X (acceptor6)                                                                                    \
+  /* aromaticity, planarity and strain of the anion */                                             \
+  X (ring_gain_even)                                                                               \
+  X (ring_gain_odd)                                                                                \
+  X (strain13)                                                                                     \
+  X (strain_ortho)                                                                                 \
+  X (strain_ring3)                                                                                 \
+  X (strain_ring4)                                                                                 \
+  X (drained)                                                                                      \
+  X (imide_side)                                                                                   \
+  /* substituent constants along the sigma skeleton */                                             \
+  X (polar_next)                                                                                   \
+  X (polar_beta)                                                                                   \
+  X (polar_gamma)                                                                                  \
+  X (mesomeric)                                                                                    \
+  X (mesomeric_squared)                                                                            \
+  X (donor_next)                                                                                   \
+  X (donor_acceptors)
 
 /* Hammett sums over aromatic rings at 0..3 bonds from the acidic atom; for 1 and 2 bonds a second
  * set that counts for heteroatom sites only. */

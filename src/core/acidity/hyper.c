@@ -8,38 +8,33 @@
 static const struct {
   const char *name;
   double start;
-} plain[ENL_H_shell] = {
+} plain[ENL_H_relevance] = {
     [ENL_H_noise] = {"noise", 0.05},
-    [ENL_H_linear_element] = {"linear_element", 10},
     [ENL_H_linear_common] = {"linear_common", 10},
+    [ENL_H_linear_element] = {"linear_element", 10},
     [ENL_H_linear_solvent] = {"linear_solvent", 0.3},
-    [ENL_H_smooth] = {"smooth", 10},
+    [ENL_H_smooth_common] = {"smooth_common", 3},
+    [ENL_H_smooth_element] = {"smooth_element", 8},
     [ENL_H_smooth_solvent] = {"smooth_solvent", 0.3},
-    [ENL_H_smooth_length] = {"smooth_length", 8},
-    [ENL_H_environment] = {"environment", 20},
-    [ENL_H_environment_solvent] = {"environment_solvent", 0.3},
-    [ENL_H_environment_decay] = {"environment_decay", 5},
+    [ENL_H_smooth_length] = {"smooth_length", 10},
+    [ENL_H_smooth_shape] = {"smooth_shape", 2},
 };
 
 void
 enl_hyper_init (EnlHyper *hyper)
 {
   for (int i = 0; i < ENL_N_HYPER; i++)
-    hyper->value[i] = i < ENL_H_shell ? plain[i].start : 1;
+    hyper->value[i] = i < ENL_H_relevance ? plain[i].start : 1;
 }
 
 char *
 enl_hyper_name (uint32_t index)
 {
   g_assert (index < ENL_N_HYPER);
-  if (index < ENL_H_shell)
+  if (index < ENL_H_relevance)
     return g_strdup (plain[index].name);
-  if (index < ENL_H_linear_weight)
-    return g_strdup_printf ("shell_%u", index - ENL_H_shell);
-  bool linear = index < ENL_H_smooth_weight;
-  g_autofree char *descriptor =
-      enl_descriptor_name (index - (linear ? ENL_H_linear_weight : ENL_H_smooth_weight));
-  return g_strdup_printf ("%s.%s", linear ? "linear" : "smooth", descriptor);
+  g_autofree char *descriptor = enl_descriptor_name (index - ENL_H_relevance);
+  return g_strdup_printf ("relevance.%s", descriptor);
 }
 
 EnlStatus

@@ -2,24 +2,20 @@
 #pragma once
 
 #include "core/acidity/descriptor.h"
-#include "core/acidity/shells.h"
 
 /* All are positive. Variances in pK units squared; see kernel.h for what they scale. */
 enum {
   ENL_H_noise,
-  ENL_H_linear_element,
   ENL_H_linear_common,
+  ENL_H_linear_element,
   ENL_H_linear_solvent,
-  ENL_H_smooth,
+  ENL_H_smooth_common,
+  ENL_H_smooth_element,
   ENL_H_smooth_solvent, /* solvent-specific share, relative to the common one */
   ENL_H_smooth_length,
-  ENL_H_environment,
-  ENL_H_environment_solvent, /* as smooth_solvent */
-  ENL_H_environment_decay,
-  ENL_H_shell,                                      /* relative weight of every shell */
-  ENL_H_linear_weight = ENL_H_shell + ENL_N_SHELLS, /* relevance of every descriptor, linear part */
-  ENL_H_smooth_weight = ENL_H_linear_weight + ENL_N_DESCRIPTORS, /* and in the smooth part */
-  ENL_N_HYPER = ENL_H_smooth_weight + ENL_N_DESCRIPTORS
+  ENL_H_smooth_shape,
+  ENL_H_relevance, /* of every descriptor in the smooth part */
+  ENL_N_HYPER = ENL_H_relevance + ENL_N_DESCRIPTORS
 };
 
 typedef struct {
@@ -29,7 +25,7 @@ typedef struct {
 /* The values that tuning starts from and is drawn towards. */
 void enl_hyper_init (EnlHyper *hyper);
 
-/* "noise", "shell_2", "linear.gain", "smooth.gain" ...; new string (g_free). */
+/* "noise", "smooth_length", "relevance.gain" ...; new string (g_free). */
 char *enl_hyper_name (uint32_t index) ENL_MUST_USE;
 
 /* Reads rows `name value`; a name that is not listed keeps its starting value, an unknown name or a

@@ -93,48 +93,33 @@ enl_site_set_standardise (EnlSiteSet *set, const double *centre, const double *s
 void
 enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper)
 {
-  for (int k = 0; k < ENL_N_DESCRIPTORS; k++) {
-    relevance->linear[k] = (float)(hyper->value[ENL_H_linear_weight + k] / ENL_N_DESCRIPTORS);
-    relevance->smooth[k] = (float)hyper->value[ENL_H_smooth_weight + k];
-  }
+  for (int k = 0; k < ENL_N_DESCRIPTORS; k++)
+    relevance->smooth[k] = (float)hyper->value[ENL_H_relevance + k];
 }
 
-/* Weighted product and squared distance. The descriptors are single numbers, but the sums go in
- * double ones: so the model does not depend on how a machine or compiler orders them. Four strands
- * of each: the compiler may not reorder a floating sum by itself. */
+/* Product and weighted squared distance. Sums are double, so that both ends of a pair and every
+ * machine agree; four strands of each: the compiler may not reorder a floating sum by itself. */
 static void
 products (const EnlRelevance *relevance, const float *a, const float *b, double *dot,
           double *square)
 {
-  const float *linear = relevance->linear, *smooth = relevance->smooth;
+  const float *smooth = relevance->smooth;
   double p[4] = {0}, q[4] = {0};
   int k = 0;
 
   for (; k + 4 <= ENL_N_DESCRIPTORS; k += 4)
     for (int j = 0; j < 4; j++) {
-      double x = (double)a[k + j], y = (double)b[k + j], gap = x - y;
-      p[j] += (double)linear[k + j] * (x * y);
-      q[j] += (double)smooth[k + j] * (gap * gap);
+      double x = a[k + j], y = b[k + j], gap = x - y;
+      p[j] += x * y;
+      q[j] += smooth[k + j] * gap * gap;
     }
   for (; k < ENL_N_DESCRIPTORS; k++) {
-    double x = (double)a[k], y = (double)b[k], gap = x - y;
-    p[0] += (double)linear[k] * (x * y);
-    q[0] += (double)smooth[k] * (gap * gap);
+    double x = a[k], y = b[k], gap = x - y;
+    p[0] += x * y;
+    q[0] += smooth[k] * gap * gap;
   }
   *dot = (p[0] + p[1]) + (p[2] + p[3]);
   *square = (q[0] + q[1]) + (q[2] + q[3]);
-}
-
-double
-enl_kernel_likeness (const EnlHyper *hyper, const double likeness[ENL_N_SHELLS])
-{
-  double sum = 0, weight = 0;
-
-  for (int d = 0; d < ENL_N_SHELLS; d++) {
-    sum += hyper->value[ENL_H_shell + d] * likeness[d];
-    weight += hyper->value[ENL_H_shell + d];
-  }
-  return sum / weight;
 }
 
 void
@@ -142,56 +127,55 @@ enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
                  const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
 {
   size_t at = (size_t)i * ENL_N_DESCRIPTORS, bt = (size_t)j * ENL_N_DESCRIPTORS;
-  double square;
 
-  products (relevance, a->z + at, b->z + bt, &parts->linear, &square);
-  parts->distance = sqrt (square);
+  products (relevance, a->z + at, b->z + bt, &parts->linear, &parts->square);
+  parts->linear /= ENL_N_DESCRIPTORS;
   parts->likeness = 0;
   parts->same_element = a->element[i] == b->element[j];
   parts->same_solvent = a->solvent[i] == b->solvent[j];
 }
 
 void
-enl_kernel_parts (const EnlHyper *hyper, const EnlRelevance *relevance, const EnlSiteSet *a,
-                  uint32_t i, const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
+enl_kernel_parts (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
+                  const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
 {
-  double likeness[ENL_N_SHELLS];
-
   enl_kernel_pair (relevance, a, i, b, j, parts);
-  if (!parts->same_element)
-    return;
-  enl_shells_compare (&a->shells[i], &b->shells[j], likeness);
-  parts->likeness = enl_kernel_likeness (hyper, likeness);
+  if (parts->same_element)
+    parts->likeness = enl_shells_likeness (&a->shells[i], &b->shells[j]);
+}
+
+double
+enl_kernel_linear_share (const EnlHyper *hyper, const EnlKernelParts *parts)
+{
+  const double *h = hyper->value;
+
+  return h[ENL_H_linear_common] + (parts->same_element ? h[ENL_H_linear_element] : 0) +
+         (parts->same_element && parts->same_solvent ? h[ENL_H_linear_solvent] : 0);
+}
+
+double
+enl_kernel_smooth_share (const EnlHyper *hyper, const EnlKernelParts *parts)
+{
+  const double *h = hyper->value;
+
+  return (h[ENL_H_smooth_common] + (parts->same_element ? h[ENL_H_smooth_element] : 0)) *
+         (1 + (parts->same_solvent ? h[ENL_H_smooth_solvent] : 0));
 }
 
 double
 enl_kernel_smooth (const EnlHyper *hyper, const EnlKernelParts *parts)
 {
-  const double *h = hyper->value;
-  double share = 1 + (parts->same_solvent ? h[ENL_H_smooth_solvent] : 0);
+  double length = hyper->value[ENL_H_smooth_length], shape = hyper->value[ENL_H_smooth_shape];
+  double u = 1 + parts->square / (2 * shape * length * length);
 
-  return h[ENL_H_smooth] * share * exp (-parts->distance / h[ENL_H_smooth_length]);
-}
-
-double
-enl_kernel_environment (const EnlHyper *hyper, const EnlKernelParts *parts)
-{
-  const double *h = hyper->value;
-  double share = 1 + (parts->same_solvent ? h[ENL_H_environment_solvent] : 0);
-
-  if (!parts->same_element)
-    return 0;
-  return h[ENL_H_environment] * share * exp (-(1 - parts->likeness) * h[ENL_H_environment_decay]);
+  return enl_kernel_smooth_share (hyper, parts) * exp (-shape * log (u));
 }
 
 double
 enl_kernel_value (const EnlHyper *hyper, const EnlKernelParts *parts)
 {
-  const double *h = hyper->value;
   double same = parts->same_element, both = parts->same_element && parts->same_solvent;
-  double linear =
-      h[ENL_H_linear_common] + h[ENL_H_linear_element] * same + h[ENL_H_linear_solvent] * both;
 
-  return ENL_OFFSET_VARIANCE * (1 + same + both) + parts->linear * linear +
-         enl_kernel_smooth (hyper, parts) + enl_kernel_environment (hyper, parts);
+  return ENL_OFFSET_VARIANCE * (1 + same + both) +
+         parts->linear * enl_kernel_linear_share (hyper, parts) + enl_kernel_smooth (hyper, parts);
 }

@@ -1,25 +1,28 @@
 /* The covariance of two sites.
  *
- *   k = offset + linear + smooth + environment
+ *   k = offset + linear + smooth
  *
- * offset       a constant for all, for the element, for the element in its solvent
- * linear       products of the (standardised) descriptors, weighted by their relevance
- * smooth       exp (-distance / length) of the same descriptors
- * environment  exp (-(1 - likeness) * decay) of the atom shells, within one element
+ * offset  a constant for all, for the element, for the element in its solvent
+ * linear  products of the (standardised) descriptors: effects that add up
+ * smooth  (1 + r^2 / (2 shape length^2))^-shape of the same descriptors, each with a relevance of
+ *         its own: how effects change with what they act on. The rational quadratic kernel, a
+ *         mixture of Gaussian ones of all lengths
  *
- * Every part has a share that all solvents have in common and one of its own for each solvent: the
- * simplest case of a coregionalised process (Rasmussen and Williams, Gaussian Processes for
- * Machine Learning, 2006, ch. 4 for the kernels, ch. 9.1 for several outputs).
+ * Every part has a share that all elements and solvents have in common and one of its own for each:
+ * the simplest case of a coregionalised process (Rasmussen and Williams, Gaussian Processes for
+ * Machine Learning, 2006, ch. 4.2 for the kernels, ch. 5.1 for the relevances, ch. 9.1 for several
+ * outputs).
  */
 #pragma once
 
 #include "core/acidity/estimate.h"
 #include "core/acidity/hyper.h"
+#include "core/acidity/shells.h"
 
 /* Prior variance of each of the constants: wide enough to be free, (20 pK units)^2. */
 #define ENL_OFFSET_VARIANCE 400.0
 /* Standardised descriptors are held within this many standard deviations. */
-#define ENL_DESCRIPTOR_CLIP 4.0
+#define ENL_DESCRIPTOR_CLIP 10.0
 
 /* Many sites with what the kernel needs of them. Owned arrays unless said otherwise. */
 typedef struct {
@@ -50,26 +53,29 @@ void enl_site_set_standardise (EnlSiteSet *set, const double *centre, const doub
 
 /* The relevances as the kernel uses them. */
 typedef struct {
-  float linear[ENL_N_DESCRIPTORS], smooth[ENL_N_DESCRIPTORS];
+  float smooth[ENL_N_DESCRIPTORS];
 } EnlRelevance;
 
 void enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper);
 
-/* What the covariance of one pair is made of. */
+/* What the covariance of one pair is made of. `likeness` is that of the surroundings, 0 between
+ * elements; it is no part of the covariance. */
 typedef struct {
-  double linear, distance, likeness;
+  double linear, square; /* mean product and weighted squared distance of the descriptors */
+  double likeness;
   bool same_element, same_solvent;
 } EnlKernelParts;
 
 /* Fills all but the likeness; both sets must be standardised. */
 void enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
                       const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
-/* The shells' likeness by their weights. */
-double enl_kernel_likeness (const EnlHyper *hyper, const double likeness[ENL_N_SHELLS]);
-/* Both of them. */
-void enl_kernel_parts (const EnlHyper *hyper, const EnlRelevance *relevance, const EnlSiteSet *a,
-                       uint32_t i, const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
+/* The same, and the likeness. */
+void enl_kernel_parts (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
+                       const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
+/* The shares of the linear and of the smooth part that a pair has in common. */
+double enl_kernel_linear_share (const EnlHyper *hyper, const EnlKernelParts *parts);
+double enl_kernel_smooth_share (const EnlHyper *hyper, const EnlKernelParts *parts);
+/* The smooth part alone. */
 double enl_kernel_smooth (const EnlHyper *hyper, const EnlKernelParts *parts);
-double enl_kernel_environment (const EnlHyper *hyper, const EnlKernelParts *parts);
 /* The whole covariance, without noise. */
 double enl_kernel_value (const EnlHyper *hyper, const EnlKernelParts *parts);

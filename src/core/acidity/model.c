@@ -120,7 +120,7 @@ fill_covariance (const EnlModel *model, const EnlReference *ref, uint32_t first,
 
   for (uint32_t i = first; i < rows->n; i++) {
     for (uint32_t j = 0; j <= i; j++) {
-      enl_kernel_parts (&model->hyper, &model->relevance, rows, i, rows, j, &parts);
+      enl_kernel_pair (&model->relevance, rows, i, rows, j, &parts);
       matrix[ENL_PACKED (i, j)] = enl_kernel_value (&model->hyper, &parts);
     }
     matrix[ENL_PACKED (i, i)] += enl_model_row_noise (model, enl_reference_row (ref, i));

@@ -4,6 +4,7 @@
 #include <stdlib.h>
 #include <string.h>
 
+#include "core/acidity/pi-ring.h"
 #include "core/acidity/pi-solve.h"
 
 typedef struct {
@@ -303,6 +304,10 @@ enl_pi_deprotonate (const EnlPi *pi, uint32_t atom, EnlPiChange *out)
     out->excess[atom] = out->shift[atom] = 1.0;
   else
     compare_systems (out, pi, &basis, atom);
+  out->even_ring_gain = enl_pi_ring_energy (&basis, pi->mol, atom, false) -
+                        enl_pi_ring_energy (&pi->basis, pi->mol, atom, false);
+  out->odd_ring_gain = enl_pi_ring_energy (&basis, pi->mol, atom, true) -
+                       enl_pi_ring_energy (&pi->basis, pi->mol, atom, true);
   out->participation = participation_of (out->shift, n);
   enl_pi_basis_clear (&basis);
 }

@@ -14,14 +14,16 @@ typedef struct EnlPi EnlPi;
 
 /* What the loss of one proton does to the pi system that the site belongs to afterwards. */
 typedef struct {
-  double energy_gain;   /* Delta-E(pi): delocalisation of the new lone pair, less that of the pair
-                           or pi electron which a heteroatom site already shared in the acid */
-  uint32_t n_atoms;     /* of the molecule: length of the arrays */
-  double *excess;       /* electrons on each atom beyond the uncharged one, in the pi system of the
-                           site; 0 elsewhere. Adds up to 1 for an otherwise uncharged system */
-  double *shift;        /* electrons gained on deprotonation: adds up to 1 */
-  double participation; /* number of atoms over which `shift` spreads: (sum s)^2 / sum s^2 over
-                           the atoms that gain, 1 for a localised anion */
+  double energy_gain; /* Delta-E(pi): delocalisation of the new lone pair, less that of the pair
+                         or pi electron which a heteroatom site already shared in the acid */
+  uint32_t n_atoms;   /* of the molecule: length of the arrays */
+  double *excess;     /* electrons on each atom beyond the uncharged one, in the pi system of the
+                         site; 0 elsewhere. Adds up to 1 for an otherwise uncharged system */
+  double *shift;      /* electrons gained on deprotonation: adds up to 1 */
+  double even_ring_gain, odd_ring_gain; /* what cyclic conjugation of the rings at the site gains,
+                                           by their number of members: pi-ring.h */
+  double participation;   /* number of atoms over which `shift` spreads: (sum s)^2 / sum s^2 over
+                             the atoms that gain, 1 for a localised anion */
   double highest, lowest; /* energies of the highest occupied and lowest empty orbital of the
                              anion's pi system; NAN where there is none */
   uint32_t n_orbitals;    /* of that pi system; 0 when the lone pair is not part of one */

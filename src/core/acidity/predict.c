@@ -22,6 +22,11 @@
  * by 5.8, and from 0.70 on by 2.7 and less: from here on one tells about the other. */
 #define LEAST_LIKENESS 0.65
 
+/* Published values of the acids of one element in one solvent, from lowest to highest. */
+typedef struct {
+  double lowest, highest;
+} Span;
+
 struct EnlPredictor {
   const EnlReference *ref;
   const EnlConstants *constants;
@@ -31,8 +36,27 @@ struct EnlPredictor {
   bool seen[ENL_N_ELEMENTS];      /* elements anywhere in its molecules */
   bool beside[ENL_N_GROUPS];      /* groups next to an acidic carbon of the table */
   uint32_t *compound;             /* first row of the compound of every row */
-  EnlKin *kin;                    /* of every row */
+  Span span[ENL_N_CLASSES][ENL_MODEL_SOLVENTS];
+  EnlKin *kin; /* of every row */
 };
+
+/* C-H acids share one span. */
+static EnlAcidClass
+class_of_span (const EnlMolecule *mol, uint32_t atom)
+{
+  EnlAcidClass class_of = enl_acid_class (mol, atom);
+
+  return class_of == ENL_CLASS_ALPHA ? ENL_CLASS_CARBON : class_of;
+}
+
+static void
+note_span (EnlPredictor *predictor, const EnlReferenceRow *row)
+{
+  Span *span = &predictor->span[class_of_span (row->mol, row->site)][row->solvent];
+
+  span->lowest = MIN (span->lowest, row->pka);
+  span->highest = MAX (span->highest, row->pka);
+}
 
 static void
 note_experience (EnlPredictor *predictor, const EnlReferenceRow *row)
@@ -59,6 +83,7 @@ note_rows (EnlPredictor *predictor, uint32_t first)
   for (uint32_t i = first; i < n; i++) {
     const EnlReferenceRow *row = enl_reference_row (predictor->ref, i);
     note_experience (predictor, row);
+    note_span (predictor, row);
     enl_kin_describe (row->mol, row->site, &predictor->kin[i]);
   }
 }
@@ -76,6 +101,8 @@ enl_predictor_open (const EnlReference *ref, const char *bytes, size_t size, Enl
       (status = enl_constants_new (&predictor->owned_constants, err)) != ENL_OK)
     return status;
   predictor->constants = predictor->owned_constants;
+  for (int i = 0; i < ENL_N_CLASSES * ENL_MODEL_SOLVENTS; i++)
+    predictor->span[i / ENL_MODEL_SOLVENTS][i % ENL_MODEL_SOLVENTS] = (Span){HUGE_VAL, -HUGE_VAL};
   note_rows (predictor, 0);
   predictor->seen[1] = true;
   *out = g_steal_pointer (&predictor);
@@ -161,17 +188,14 @@ fill_covariance (Batch *batch)
   EnlKernelParts parts;
 
   for (uint32_t s = 0; s < batch->m; s++) {
-    enl_kernel_parts (&model->hyper, &model->relevance, batch->sites, s, batch->sites, s, &parts);
+    enl_kernel_pair (&model->relevance, batch->sites, s, batch->sites, s, &parts);
     batch->prior[s] = enl_kernel_value (&model->hyper, &parts);
-    batch->smooth[s] =
-        enl_kernel_smooth (&model->hyper, &parts) + enl_kernel_environment (&model->hyper, &parts);
+    batch->smooth[s] = enl_kernel_smooth (&model->hyper, &parts);
     for (uint32_t i = 0; i < batch->n; i++) {
       size_t at = (size_t)s * batch->n + i;
-      enl_kernel_parts (&model->hyper, &model->relevance, batch->sites, s, model->rows, i, &parts);
+      enl_kernel_pair (&model->relevance, batch->sites, s, model->rows, i, &parts);
       batch->k[at] = enl_kernel_value (&model->hyper, &parts);
-      batch->alike[at] = (enl_kernel_smooth (&model->hyper, &parts) +
-                          enl_kernel_environment (&model->hyper, &parts)) /
-                         batch->smooth[s];
+      batch->alike[at] = enl_kernel_smooth (&model->hyper, &parts) / batch->smooth[s];
     }
   }
 }
@@ -252,9 +276,11 @@ pick_precedents (const Batch *batch, uint32_t s, const EnlKin *kin, EnlPredictio
 /* ---- experience ---- */
 
 static const char *
-strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, uint32_t s)
+strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, EnlSolvent solvent,
+             uint32_t s, double value)
 {
   const EnlPredictor *predictor = batch->predictor;
+  const Span *span = &predictor->span[class_of_span (mol, atom)][solvent];
   double left = batch->variance[s] / batch->smooth[s];
 
   for (uint32_t i = 0; i < enl_molecule_atoms (mol); i++) {
@@ -274,6 +300,10 @@ strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, uint32_t
   }
   if (left > NOVEL_SHARE)
     return "outside its experience: nothing alike was measured";
+  if (value > span->highest)
+    return "outside its experience: weaker than every acid of this kind that was measured";
+  if (value < span->lowest)
+    return "outside its experience: stronger than every acid of this kind that was measured";
   return NULL;
 }
 
@@ -339,7 +369,7 @@ enl_predictor_run (const EnlPredictor *predictor, const EnlMolecule *mol, const 
     out[s] = (EnlPrediction){
         .value = value,
         .half = half_width (model, mol, atom[s], solvent, batch.variance[s]),
-        .outside = strangeness (&batch, mol, atom[s], s),
+        .outside = strangeness (&batch, mol, atom[s], solvent, s, value),
     };
     EnlKin kin;
     enl_kin_describe (mol, atom[s], &kin);

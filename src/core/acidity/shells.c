@@ -185,3 +185,16 @@ enl_shells_compare (const EnlShells *a, const EnlShells *b, double likeness[ENL_
     likeness[d] = large > 0 ? small / large : 1;
   }
 }
+
+double
+enl_shells_likeness (const EnlShells *a, const EnlShells *b)
+{
+  double likeness[ENL_N_SHELLS], sum = 0, weight = 1, weights = 0;
+
+  enl_shells_compare (a, b, likeness);
+  for (int d = 0; d < ENL_N_SHELLS; d++, weight /= 2) {
+    sum += weight * likeness[d];
+    weights += weight;
+  }
+  return sum / weights;
+}

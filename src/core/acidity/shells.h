@@ -28,5 +28,8 @@ typedef struct {
  * stays NULL: set it once `store` has stopped growing; `start` counts from its first new mark. */
 void enl_shells_collect (EnlSurvey *survey, uint32_t atom, GArray *store, EnlShells *out);
 
+/* Likeness of two surroundings, 0 to 1: the mean over the shells, each weighing half of the one
+ * before. */
+double enl_shells_likeness (const EnlShells *a, const EnlShells *b);
 /* Likeness of shell d for every d; empty against empty is 1. */
 void enl_shells_compare (const EnlShells *a, const EnlShells *b, double likeness[ENL_N_SHELLS]);

@@ -8,7 +8,7 @@
 /* Rows of a class below which its interval is calibrated with all rows of the solvent. */
 #define OWN_WIDTH_FROM 20
 /* Two rows belong to one family when their surroundings are at least this alike. */
-#define FAMILY_LIKENESS 0.55
+#define FAMILY_LIKENESS 0.70
 
 /* Families: a row joins the first earlier row that leads a family and is alike enough, or leads
  * one of its own. Compounds stay together by joining the family of their first row. */
@@ -26,8 +26,7 @@ cluster_folds (const EnlModel *model, const uint32_t *compound, uint32_t *fold)
     }
     for (guint k = 0; k < leader->len && fold[i] == ENL_NONE; k++) {
       uint32_t lead = g_array_index (leader, uint32_t, k);
-      enl_kernel_parts (&model->hyper, &model->relevance, model->rows, i, model->rows, lead,
-                        &parts);
+      enl_kernel_parts (&model->relevance, model->rows, i, model->rows, lead, &parts);
       if (parts.likeness >= FAMILY_LIKENESS)
         fold[i] = lead;
     }
