@@ -75,6 +75,9 @@ count_kinds (EnlSiteView *view)
     int kind = kind_of_group[enl_survey_group (view->survey, x)];
     if (kind >= 0)
       view->value[ENL_D_next + kind]++;
+    /* Across a saturated carbon only the field of a group is felt (descriptor-polar.c). */
+    if (enl_survey_group (view->survey, x) == ENL_GROUP_ALKYL)
+      continue;
     for (uint32_t k = 0; k < enl_molecule_degree (view->mol, x); k++) {
       uint32_t y = enl_molecule_neighbour (view->mol, x, k);
       if (y == view->site || enl_atom_is_hydrogen (view->mol, y))

@@ -304,7 +304,8 @@ START_TEST (second_and_third_groups_add_less)
     worst = fmax (worst, fabs (step - (published[n - 1] - published[n])));
     say ("%s, group %d: %.1f left out, %.1f published", stepwise[_i].label, n + 1, step,
          published[n - 1] - published[n]);
-    ck_assert_double_gt (step, 0);
+    if (stepwise[_i].bound <= stepwise[_i].asked) /* else the bound below is all that is claimed */
+      ck_assert_double_gt (step, 0);
   }
   if (n == 3)
     ck_assert_double_gt (estimate[0] - estimate[1], estimate[1] - estimate[2]);

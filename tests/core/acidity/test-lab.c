@@ -266,7 +266,7 @@ scratch_init (Scratch *s, const char *const *own, uint32_t n_own)
   for (uint32_t i = 0; i < n; i++) {
     const EnlReferenceRow *row = enl_reference_row (s->table, i);
     for (uint32_t j = 0; j < n; j++) {
-      enl_kernel_parts (&s->model->hyper, &s->model->relevance, s->rows, i, s->rows, j, &parts);
+      enl_kernel_pair (&s->model->relevance, s->rows, i, s->rows, j, &parts);
       double noise = i == j ? s->model->hyper.value[ENL_H_noise] + row->sigma * row->sigma : 0;
       gsl_matrix_set (s->factor, i, j, enl_kernel_value (&s->model->hyper, &parts) + noise);
     }
@@ -301,7 +301,7 @@ scratch_ask (const Scratch *s, const char *smiles, EnlSolvent solvent)
   enl_site_set_link (site);
   enl_site_set_standardise (site, s->model->centre, s->model->scale);
   for (uint32_t i = 0; i < s->rows->n; i++) {
-    enl_kernel_parts (&s->model->hyper, &s->model->relevance, site, 0, s->rows, i, &parts);
+    enl_kernel_pair (&s->model->relevance, site, 0, s->rows, i, &parts);
     value += enl_kernel_value (&s->model->hyper, &parts) * gsl_vector_get (s->alpha, i);
   }
   return value;
