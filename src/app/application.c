@@ -121,6 +121,7 @@ add_accelerators (GtkApplication *app)
       {"win.save-as", {"<Control><Shift>s", NULL}},
       {"win.projector", {"F5", NULL}},
       {"win.structure-line", {"<Control>l", NULL}},
+      {"win.lab-values", {"<Control>m", NULL}},
       {"app.quit", {"<Control>q", NULL}},
       {"win.solvent::dmso", {"<Control>1", NULL}},
       {"win.solvent::water", {"<Control>2", NULL}},

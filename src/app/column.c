@@ -19,7 +19,7 @@ struct _EnlColumn {
   GtkWidget *box;
   GtkEntry *name, *line;
   GtkButton *left, *right, *remove;
-  GtkLabel *fault, *identity;
+  GtkLabel *fault, *identity, *footing;
   GtkSpinner *spinner;
   EnlCanvas *canvas;
   GtkListBox *sites;
@@ -179,6 +179,8 @@ refresh_sites (EnlColumn *self)
   if (focused) /* the row with the keyboard goes away */
     enl_column_focus_picture (self);
   clear_list (self->sites);
+  gtk_widget_set_visible (GTK_WIDGET (self->footing),
+                          a && a->solvent == ENL_SOLVENT_THF && a->sites->n_sites);
   if (!a)
     return;
   enl_session_range (self->session, &self->low, &self->high);
@@ -415,6 +417,7 @@ bind_children (GtkWidgetClass *klass)
   gtk_widget_class_bind_template_child (klass, EnlColumn, remove);
   gtk_widget_class_bind_template_child (klass, EnlColumn, fault);
   gtk_widget_class_bind_template_child (klass, EnlColumn, identity);
+  gtk_widget_class_bind_template_child (klass, EnlColumn, footing);
   gtk_widget_class_bind_template_child (klass, EnlColumn, spinner);
   gtk_widget_class_bind_template_child (klass, EnlColumn, canvas);
   gtk_widget_class_bind_template_child (klass, EnlColumn, sites);

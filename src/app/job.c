@@ -5,7 +5,7 @@
 #include "core/notation/read.h"
 
 typedef struct {
-  const EnlKnowledge *knowledge;
+  EnlKnowledge *knowledge; /* held */
   char *text;
   EnlSolvent solvent;
 } Order;
@@ -15,6 +15,7 @@ order_free (gpointer data)
 {
   Order *order = data;
 
+  enl_knowledge_free (order->knowledge);
   g_free (order->text);
   g_free (order);
 }
@@ -57,7 +58,7 @@ enl_job_start (const EnlKnowledge *knowledge, const char *text, EnlSolvent solve
   g_autoptr (GTask) task = g_task_new (NULL, cancellable, done, data);
   Order *order = g_new0 (Order, 1);
 
-  order->knowledge = knowledge;
+  order->knowledge = enl_knowledge_ref (knowledge);
   order->text = g_strdup (text);
   order->solvent = solvent;
   g_task_set_task_data (task, order, order_free);

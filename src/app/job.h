@@ -13,7 +13,7 @@ typedef struct {
 void enl_job_result_free (EnlJobResult *result);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlJobResult, enl_job_result_free)
 
-/* Starts a worker on a copy of `text`. `knowledge` is only read and must outlive the job.
+/* Starts a worker on a copy of `text`. `knowledge` is only read, and held.
  * A cancelled job still calls back, and its finish returns NULL. */
 void enl_job_start (const EnlKnowledge *knowledge, const char *text, EnlSolvent solvent,
                     GCancellable *cancellable, GAsyncReadyCallback done, gpointer data);

@@ -5,6 +5,7 @@
 
 #include "app/history.h"
 #include "app/job.h"
+#include "app/lab-job.h"
 #include "draw/whisker.h"
 
 /* What the session holds beside each substrate of the set, in the same order. */
@@ -17,7 +18,10 @@ typedef struct {
 
 struct _EnlSession {
   GObject parent;
-  const EnlKnowledge *knowledge;
+  const EnlKnowledge *knowledge; /* without own values */
+  EnlKnowledge *now;             /* held: with those of the set */
+  EnlLabResult *lab;             /* what `now` was made of; NULL without own values */
+  GCancellable *lab_cancellable; /* of the worker that makes the next one: analyses wait for it */
   EnlWorkset *set;
   GPtrArray *slot; /* Slot */
   EnlHistory *history;
@@ -25,7 +29,15 @@ struct _EnlSession {
   char *saved; /* text of the set as it was last saved or opened */
 };
 
-enum { SET_CHANGED, SUBSTRATE_CHANGED, SELECTION_CHANGED, CONDITIONS_CHANGED, STATE_CHANGED, N };
+enum {
+  SET_CHANGED,
+  SUBSTRATE_CHANGED,
+  SELECTION_CHANGED,
+  CONDITIONS_CHANGED,
+  LAB_CHANGED,
+  STATE_CHANGED,
+  N
+};
 
 static guint signal_id[N];
 
@@ -104,13 +116,15 @@ slot_start (EnlSession *self, uint32_t substrate)
     slot->has_error = false;
     return;
   }
+  if (self->lab_cancellable)
+    return; /* on_lab_done starts it */
   slot->cancellable = g_cancellable_new ();
   Errand *errand = g_new0 (Errand, 1);
   errand->session = g_object_ref (self);
   errand->slot = slot;
   errand->cancellable = g_object_ref (slot->cancellable);
-  enl_job_start (self->knowledge, text, enl_workset_conditions (self->set)->solvent,
-                 slot->cancellable, job_done, errand);
+  enl_job_start (self->now, text, enl_workset_conditions (self->set)->solvent, slot->cancellable,
+                 job_done, errand);
 }
 
 static void
@@ -118,6 +132,58 @@ restart_all (EnlSession *self)
 {
   for (uint32_t i = 0; i < self->slot->len; i++)
     slot_start (self, i);
+}
+
+/* ---- own values ---- */
+
+typedef struct {
+  EnlSession *session;
+  GCancellable *cancellable;
+} LabErrand;
+
+static void
+take_lab (EnlSession *self, EnlLabResult *result)
+{
+  enl_knowledge_free (self->now);
+  self->now = enl_knowledge_ref (result && result->knowledge ? result->knowledge : self->knowledge);
+  g_clear_pointer (&self->lab, enl_lab_result_free);
+  self->lab = result;
+}
+
+static void
+on_lab_done (GObject *source, GAsyncResult *result, gpointer data)
+{
+  g_autofree LabErrand *errand = data;
+  g_autoptr (EnlSession) self = errand->session;
+  g_autoptr (GCancellable) mine = errand->cancellable;
+  g_autoptr (EnlLabResult) done = enl_lab_job_finish (result);
+
+  (void)source;
+  if (!done || self->lab_cancellable != mine)
+    return; /* newer values are already on their way */
+  g_clear_object (&self->lab_cancellable);
+  take_lab (self, g_steal_pointer (&done));
+  restart_all (self);
+  g_signal_emit (self, signal_id[LAB_CHANGED], 0);
+}
+
+/* Makes the knowledge anew after the own values of the set have changed. Without any it is there at
+ * once, else analyses wait for a worker. */
+static void
+refresh_lab (EnlSession *self)
+{
+  if (self->lab_cancellable)
+    g_cancellable_cancel (self->lab_cancellable);
+  g_clear_object (&self->lab_cancellable);
+  if (enl_workset_lab_size (self->set) == 0) {
+    take_lab (self, NULL);
+    return;
+  }
+  self->lab_cancellable = g_cancellable_new ();
+  LabErrand *errand = g_new0 (LabErrand, 1);
+  errand->session = g_object_ref (self);
+  errand->cancellable = g_object_ref (self->lab_cancellable);
+  enl_lab_job_start (self->knowledge, self->set, self->lab_cancellable, on_lab_done, errand);
 }
 
 /* Brings the slots in line with a set that was replaced: a substrate whose text is unchanged keeps
@@ -163,8 +229,69 @@ enl_session_outcome (EnlSession *self, uint32_t substrate)
 {
   const Slot *slot = slot_at (self, substrate);
 
-  return (EnlOutcome){slot->analysis, slot->current, slot->cancellable != NULL,
+  bool waits = self->lab_cancellable && !slot->current;
+
+  return (EnlOutcome){slot->analysis, slot->current, slot->cancellable || waits,
                       slot->has_error ? &slot->error : NULL};
+}
+
+/* Row of the lab that own value `index` became; ENL_NONE when it could not be used or is not known
+ * yet. */
+static uint32_t
+lab_row (EnlSession *self, uint32_t index)
+{
+  for (uint32_t i = 0; self->lab && i < enl_lab_size (self->lab->lab); i++)
+    if (enl_lab_row (self->lab->lab, i)->tag == index)
+      return i;
+  return ENL_NONE;
+}
+
+EnlLabOutcome
+enl_session_lab_outcome (EnlSession *self, uint32_t index)
+{
+  const EnlLabJudgement *judgement = enl_estimator_lab (self->now->estimator);
+  EnlLabOutcome outcome = {0};
+
+  if (self->lab_cancellable || !self->lab || index >= self->lab->n)
+    return outcome;
+  uint32_t row = lab_row (self, index);
+  if (self->lab->fault[index].code != ENL_OK)
+    outcome.fault = &self->lab->fault[index];
+  if (judgement && row < judgement->n_rows) {
+    outcome.remark = judgement->site[judgement->site_of[row]].remark;
+    outcome.contradicts = judgement->site[judgement->site_of[row]].contradicts;
+  }
+  return outcome;
+}
+
+/* Row of the lab that a site shows; ENL_NONE for none, or when the analysis is an older one. */
+static uint32_t
+shown_row (EnlSession *self, const EnlAnalysis *a, uint32_t site)
+{
+  const EnlLabJudgement *judgement = enl_estimator_lab (self->now->estimator);
+  const EnlEstimate *e = &a->estimate[site];
+
+  if (self->lab_cancellable || !judgement || a->knowledge != self->now || e->basis != ENL_BASIS_LAB)
+    return ENL_NONE;
+  return (uint32_t)e->row - (enl_reference_rows (self->now->reference) - judgement->n_rows);
+}
+
+uint32_t
+enl_session_lab_shown (EnlSession *self, const EnlAnalysis *a, uint32_t site)
+{
+  uint32_t row = shown_row (self, a, site);
+
+  return row == ENL_NONE ? ENL_NONE : enl_lab_row (self->lab->lab, row)->tag;
+}
+
+bool
+enl_session_lab_belongs (EnlSession *self, uint32_t index, const EnlAnalysis *a, uint32_t site)
+{
+  const EnlLabJudgement *judgement = enl_estimator_lab (self->now->estimator);
+  uint32_t shown = shown_row (self, a, site), row = lab_row (self, index);
+
+  return shown != ENL_NONE && row != ENL_NONE &&
+         judgement->site_of[shown] == judgement->site_of[row];
 }
 
 bool
@@ -173,7 +300,7 @@ enl_session_busy (EnlSession *self)
   for (uint32_t i = 0; i < self->slot->len; i++)
     if (slot_at (self, i)->cancellable)
       return true;
-  return false;
+  return self->lab_cancellable != NULL;
 }
 
 void
@@ -345,6 +472,68 @@ enl_session_remove_base (EnlSession *self, const char *id)
     }
 }
 
+/* After a change of the own values. */
+static void
+announce_lab (EnlSession *self)
+{
+  refresh_lab (self);
+  restart_all (self);
+  g_signal_emit (self, signal_id[LAB_CHANGED], 0);
+  g_signal_emit (self, signal_id[STATE_CHANGED], 0);
+}
+
+static bool
+holds_lab (const EnlWorkset *set, uint32_t n, const EnlLabEntry *entry)
+{
+  for (uint32_t i = 0; i < n; i++)
+    if (enl_lab_entry_equal (enl_workset_lab (set, i), entry))
+      return true;
+  return false;
+}
+
+EnlStatus
+enl_session_add_lab (EnlSession *self, EnlLabEntry *const *entry, uint32_t n, uint32_t *added,
+                     EnlError *err)
+{
+  g_autoptr (EnlWorkset) next = enl_workset_copy (self->set);
+  uint32_t before = enl_workset_lab_size (next);
+
+  for (uint32_t i = 0; i < n; i++) {
+    if (holds_lab (next, before, entry[i]))
+      continue;
+    EnlStatus status = enl_workset_add_lab (next, entry[i], err);
+    if (status != ENL_OK)
+      return status;
+  }
+  if (added)
+    *added = enl_workset_lab_size (next) - before;
+  if (enl_workset_lab_size (next) == before)
+    return ENL_OK;
+  remember (self, NULL);
+  enl_workset_free (self->set);
+  self->set = g_steal_pointer (&next);
+  announce_lab (self);
+  return ENL_OK;
+}
+
+void
+enl_session_set_lab (EnlSession *self, uint32_t index, const EnlLabEntry *entry)
+{
+  if (enl_lab_entry_equal (enl_workset_lab (self->set, index), entry))
+    return;
+  remember (self, NULL);
+  enl_workset_set_lab (self->set, index, entry);
+  announce_lab (self);
+}
+
+void
+enl_session_remove_lab (EnlSession *self, uint32_t index)
+{
+  remember (self, NULL);
+  enl_workset_remove_lab (self->set, index);
+  announce_lab (self);
+}
+
 bool
 enl_session_can_undo (EnlSession *self)
 {
@@ -363,11 +552,16 @@ step (EnlSession *self, EnlWorkset *to)
   g_autoptr (EnlWorkset) before = self->set;
   bool solvent = enl_workset_conditions (before)->solvent != enl_workset_conditions (to)->solvent;
 
+  bool lab = !enl_workset_same_lab (before, to);
+
   self->set = to;
+  if (lab)
+    refresh_lab (self);
   rebuild_slots (self, before);
-  if (solvent)
+  if (solvent || lab)
     restart_all (self);
   g_signal_emit (self, signal_id[CONDITIONS_CHANGED], 0);
+  g_signal_emit (self, signal_id[LAB_CHANGED], 0);
   announce_set (self);
 }
 
@@ -440,8 +634,10 @@ enl_session_replace (EnlSession *self, EnlWorkset *set, const char *path)
   enl_history_clear (self->history);
   if (enl_workset_selection (set)->substrate == ENL_NONE && enl_workset_size (set))
     enl_workset_select (set, 0, ENL_NONE, NULL);
+  refresh_lab (self);
   rebuild_slots (self, NULL);
   g_signal_emit (self, signal_id[CONDITIONS_CHANGED], 0);
+  g_signal_emit (self, signal_id[LAB_CHANGED], 0);
   announce_set (self);
 }
 
@@ -482,6 +678,9 @@ enl_session_dispose (GObject *object)
 
   for (uint32_t i = 0; i < self->slot->len; i++)
     slot_stop (slot_at (self, i));
+  if (self->lab_cancellable)
+    g_cancellable_cancel (self->lab_cancellable);
+  g_clear_object (&self->lab_cancellable);
   G_OBJECT_CLASS (enl_session_parent_class)->dispose (object);
 }
 
@@ -493,6 +692,8 @@ enl_session_finalize (GObject *object)
   g_ptr_array_unref (self->slot);
   enl_workset_free (self->set);
   enl_history_free (self->history);
+  enl_lab_result_free (self->lab);
+  enl_knowledge_free (self->now);
   g_free (self->path);
   g_free (self->saved);
   G_OBJECT_CLASS (enl_session_parent_class)->finalize (object);
@@ -514,6 +715,8 @@ enl_session_class_init (EnlSessionClass *klass)
                                                NULL, NULL, NULL, G_TYPE_NONE, 0);
   signal_id[CONDITIONS_CHANGED] = g_signal_new ("conditions-changed", type, G_SIGNAL_RUN_LAST, 0,
                                                 NULL, NULL, NULL, G_TYPE_NONE, 0);
+  signal_id[LAB_CHANGED] =
+      g_signal_new ("lab-changed", type, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 0);
   signal_id[STATE_CHANGED] =
       g_signal_new ("state-changed", type, G_SIGNAL_RUN_LAST, 0, NULL, NULL, NULL, G_TYPE_NONE, 0);
 }
@@ -533,5 +736,6 @@ enl_session_new (const EnlKnowledge *knowledge)
   EnlSession *self = g_object_new (ENL_TYPE_SESSION, NULL);
 
   self->knowledge = knowledge;
+  self->now = enl_knowledge_ref (knowledge);
   return self;
 }

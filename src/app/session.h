@@ -6,6 +6,7 @@
  *   "substrate-changed" (guint)  name, text or analysis of one substrate is new
  *   "selection-changed"          substrate, site or base
  *   "conditions-changed"         solvent, equivalents, concentration (analyses follow)
+ *   "lab-changed"                own values, or what is known about them (analyses follow)
  *   "state-changed"              title, unsaved changes, undo and redo
  */
 #pragma once
@@ -32,6 +33,20 @@ EnlSession *enl_session_new (const EnlKnowledge *knowledge);
 const EnlKnowledge *enl_session_knowledge (EnlSession *session);
 const EnlWorkset *enl_session_set (EnlSession *session);
 EnlOutcome enl_session_outcome (EnlSession *session, uint32_t substrate);
+/* What is known about one own value of the set. Borrowed until the next signal. */
+typedef struct {
+  const EnlError *fault; /* why it cannot be used, NULL: it can */
+  const char *remark;    /* what there is to say about its site, or NULL */
+  bool contradicts;      /* another own value or the published one */
+} EnlLabOutcome;
+
+EnlLabOutcome enl_session_lab_outcome (EnlSession *session, uint32_t index);
+/* Index of the own value that an estimate of a current analysis shows; ENL_NONE: none. */
+uint32_t enl_session_lab_shown (EnlSession *session, const EnlAnalysis *analysis, uint32_t site);
+/* True when own value `index` is one of those for this site. */
+bool enl_session_lab_belongs (EnlSession *session, uint32_t index, const EnlAnalysis *analysis,
+                              uint32_t site);
+
 /* True while any worker runs. */
 bool enl_session_busy (EnlSession *session);
 /* Smallest and largest pKa bound over all substrates, for a common axis. */
@@ -51,6 +66,11 @@ EnlStatus enl_session_set_conditions (EnlSession *session, const EnlConditions *
 EnlStatus enl_session_add_base (EnlSession *session, const EnlOwnBase *base, EnlError *err);
 /* Nothing happens when the set has no base of this id. */
 void enl_session_remove_base (EnlSession *session, const char *id);
+/* Own values; analyses follow, and `added` (NULL allowed) says how many were not there before. */
+EnlStatus enl_session_add_lab (EnlSession *session, EnlLabEntry *const *entry, uint32_t n,
+                               uint32_t *added, EnlError *err);
+void enl_session_set_lab (EnlSession *session, uint32_t index, const EnlLabEntry *entry);
+void enl_session_remove_lab (EnlSession *session, uint32_t index);
 bool enl_session_can_undo (EnlSession *session);
 bool enl_session_can_redo (EnlSession *session);
 void enl_session_undo (EnlSession *session);

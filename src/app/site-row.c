@@ -1,5 +1,7 @@
 #include "app/site-row.h"
 
+#include <math.h>
+
 #include "app/whisker.h"
 
 #define SITE_KEY "enl-site"
@@ -30,13 +32,33 @@ position_new (const EnlSite *site)
   return label;
 }
 
-/* "14.2", or "24.1 ± 1.6" with half the 90 % interval where the value is estimated. */
+/* "14.2", or "24.1 ± 1.6" with half the 90 % interval (the larger half) where the value was not
+ * published. */
 static char *
 value_text (const EnlEstimate *e)
 {
-  if (e->basis != ENL_BASIS_ESTIMATED)
+  if (e->basis == ENL_BASIS_MEASURED)
     return g_strdup_printf ("%.1f", e->value);
-  return g_strdup_printf ("%.1f ± %.1f", e->value, (e->high - e->low) / 2);
+  return g_strdup_printf ("%.1f ± %.1f", e->value, fmax (e->high - e->value, e->value - e->low));
+}
+
+/* "lab", with a sign where there is something to say about it. */
+static char *
+basis_text (const EnlEstimate *e)
+{
+  const char *sign = e->basis == ENL_BASIS_LAB && e->remark ? "\u26A0 " : "";
+
+  return g_strconcat (sign, enl_basis_text (e->basis), NULL);
+}
+
+/* Remark and footing, a line each; NULL when there is neither. */
+static char *
+details_text (const EnlEstimate *e)
+{
+  if (!e->remark && !e->footing)
+    return NULL;
+  return g_strconcat (e->remark ? e->remark : "", e->remark && e->footing ? "\n" : "",
+                      e->footing ? e->footing : "", NULL);
 }
 
 static GtkWidget *
@@ -60,10 +82,11 @@ enl_site_row_new (const EnlAnalysis *a, uint32_t place, double low, double high,
   g_autofree char *value = value_text (e);
   GtkWidget *badge = label_new (rank, "badge", 0.5f);
   GtkWidget *number = label_new (value, "site-value", 1.0f);
-  GtkWidget *basis = label_new (enl_basis_text (e->basis), "site-basis", 1.0f);
+  g_autofree char *origin = basis_text (e);
+  GtkWidget *basis = label_new (origin, "site-basis", 1.0f);
   GtkWidget *stack = gtk_box_new (GTK_ORIENTATION_VERTICAL, 0);
 
-  gtk_widget_add_css_class (badge, e->basis == ENL_BASIS_ESTIMATED ? "estimated" : "measured");
+  gtk_widget_add_css_class (badge, enl_basis_text (e->basis));
   gtk_widget_set_valign (badge, GTK_ALIGN_CENTER);
   gtk_widget_set_valign (stack, GTK_ALIGN_CENTER);
   gtk_box_append (GTK_BOX (stack), number);
@@ -73,11 +96,13 @@ enl_site_row_new (const EnlAnalysis *a, uint32_t place, double low, double high,
   gtk_box_append (GTK_BOX (box), enl_whisker_new (e, low, high, theme));
   gtk_box_append (GTK_BOX (box), stack);
   GtkWidget *row = row_new (box, a->rank[place]);
-  g_autofree char *spoken = g_strdup_printf ("rank %s, %s, %u H, pKa %s, %s", rank, site->position,
-                                             site->hydrogens, value, enl_basis_text (e->basis));
+  g_autofree char *details = details_text (e);
+  g_autofree char *spoken = g_strdup_printf (
+      "rank %s, %s, %u H, pKa %s, %s%s%s", rank, site->position, site->hydrogens, value,
+      enl_basis_text (e->basis), details ? ", " : "", details ? details : "");
   gtk_accessible_update_property (GTK_ACCESSIBLE (row), GTK_ACCESSIBLE_PROPERTY_LABEL, spoken, -1);
-  if (e->remark)
-    gtk_widget_set_tooltip_text (row, e->remark);
+  if (details)
+    gtk_widget_set_tooltip_text (row, details);
   return row;
 }
 

@@ -199,6 +199,21 @@ act_line (GSimpleAction *action, GVariant *parameter, gpointer data)
   enl_window_focus_line (data);
 }
 
+/* The panel of own values comes with the keyboard in it, and gives it back. */
+static void
+change_lab (GSimpleAction *action, GVariant *value, gpointer data)
+{
+  EnlWindow *self = data;
+  gboolean shown = g_variant_get_boolean (value);
+
+  if (!shown && (gtk_widget_get_state_flags (GTK_WIDGET (self->lab)) & GTK_STATE_FLAG_FOCUS_WITHIN))
+    enl_window_focus_picture (self);
+  gtk_widget_set_visible (GTK_WIDGET (self->lab), shown);
+  if (shown)
+    enl_lab_panel_focus (self->lab);
+  g_simple_action_set_state (action, value);
+}
+
 static const GActionEntry entry[] = {
     {"add", act_add, NULL, NULL, NULL, {0}},
     {"new", act_new, NULL, NULL, NULL, {0}},
@@ -217,6 +232,7 @@ static const GActionEntry entry[] = {
     {"solvent", NULL, "s", "'dmso'", change_solvent, {0}},
     {"look", NULL, "s", "'light'", change_look, {0}},
     {"detail", NULL, "s", "'forms'", change_detail, {0}},
+    {"lab-values", NULL, NULL, "false", change_lab, {0}},
     {"state", NULL, NULL, "''", NULL, {0}},
 };
 

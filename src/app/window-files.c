@@ -87,12 +87,67 @@ open_structures (EnlWindow *self, const char *path)
   }
 }
 
+/* ---- own values ---- */
+
+/* Values of a table that was read without fault join the set: one step of undo. */
+static void
+join_lab (EnlWindow *self, const char *path, const EnlLab *lab)
+{
+  uint32_t n = enl_lab_size (lab), added = 0;
+  g_autoptr (GPtrArray) entry = g_ptr_array_new_with_free_func ((GDestroyNotify)enl_lab_entry_free);
+  g_autofree char *name = g_path_get_basename (path);
+  EnlError err = {0};
+
+  for (uint32_t i = 0; i < n; i++) {
+    EnlLabEntry *copy = enl_lab_entry_copy (enl_lab_row (lab, i)->entry);
+    copy->line = 0; /* of a file that may change */
+    if (!copy->source[0]) {
+      g_free (copy->source);
+      copy->source = g_strdup (name);
+    }
+    g_ptr_array_add (entry, copy);
+  }
+  if (enl_session_add_lab (self->session, (EnlLabEntry *const *)entry->pdata, n, &added, &err) !=
+      ENL_OK) {
+    tell_error (self, path, &err);
+    return;
+  }
+  g_autofree char *text =
+      added == 0 ? g_strdup_printf ("%s: its lab values are in the set already", name)
+                 : g_strdup_printf ("%s: %u lab value%s joined the set%s", name, added,
+                                    added == 1 ? "" : "s",
+                                    added < n ? "; the others were there already" : "");
+  enl_window_tell (self, text);
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "lab-values",
+                                      g_variant_new_boolean (TRUE));
+}
+
+static void
+open_lab (EnlWindow *self, const char *path)
+{
+  const EnlNames *names = enl_session_knowledge (self->session)->names;
+  g_autofree char *text = NULL;
+  g_autoptr (GError) error = NULL;
+  g_autoptr (EnlLab) lab = NULL;
+  size_t size = 0;
+  EnlError err = {0};
+
+  if (!g_file_get_contents (path, &text, &size, &error))
+    enl_window_tell (self, error->message);
+  else if (enl_lab_parse (names, text, size, &lab, &err) != ENL_OK)
+    tell_error (self, path, &err);
+  else
+    join_lab (self, path, lab);
+}
+
 void
 enl_window_open (EnlWindow *self, const char *path)
 {
   EnlError err = {0};
 
-  if (!g_str_has_suffix (path, ENL_WORKSET_SUFFIX))
+  if (g_str_has_suffix (path, ".tsv"))
+    open_lab (self, path);
+  else if (!g_str_has_suffix (path, ENL_WORKSET_SUFFIX))
     open_structures (self, path);
   else if (enl_session_open (self->session, path, &err) != ENL_OK)
     tell_error (self, path, &err);
@@ -127,12 +182,14 @@ void
 enl_window_choose_open (EnlWindow *self)
 {
   static const char *const sets[] = {"*" ENL_WORKSET_SUFFIX, NULL};
+  static const char *const lab[] = {"*.tsv", NULL};
   static const char *const structures[] = {"*.smi", "*.smiles", "*.mol", "*.sdf", "*.txt", NULL};
   GtkFileChooserNative *dialog = gtk_file_chooser_native_new (
       "Open", GTK_WINDOW (self), GTK_FILE_CHOOSER_ACTION_OPEN, "_Open", "_Cancel");
 
   add_filter (GTK_FILE_CHOOSER (dialog), "Sets", sets);
   add_filter (GTK_FILE_CHOOSER (dialog), "Structures", structures);
+  add_filter (GTK_FILE_CHOOSER (dialog), "Lab values", lab);
   g_signal_connect (dialog, "response", G_CALLBACK (on_open_response), self);
   gtk_native_dialog_show (GTK_NATIVE_DIALOG (dialog));
 }

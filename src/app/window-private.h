@@ -4,6 +4,7 @@
 #include "app/bases-panel.h"
 #include "app/forms-panel.h"
 #include "app/why-panel.h"
+#include "app/lab-panel.h"
 #include "app/window.h"
 
 struct _EnlWindow {
@@ -23,8 +24,12 @@ struct _EnlWindow {
   EnlBasesPanel *bases;
   EnlWhyPanel *why;
   GtkStack *details; /* pages "forms" and "why" */
+  EnlLabPanel *lab;
   GtkPaned *panes, *lower;
 };
+
+/* Keyboard on the picture of the selected substrate. */
+void enl_window_focus_picture (EnlWindow *window);
 
 /* window-actions.c */
 void enl_window_add_actions (EnlWindow *window);

@@ -7,10 +7,31 @@ site_state (const EnlAnalysis *a, uint32_t place)
 {
   uint32_t s = a->rank[place];
   const EnlSite *site = &a->sites->site[s];
+  json_t *object = json_pack ("{s:i, s:s, s:i, s:f, s:s}", "rank", (int)place + 1, "position",
+                              site->position, "hydrogens", (int)site->hydrogens, "pka",
+                              a->estimate[s].value, "basis", enl_basis_text (a->estimate[s].basis));
 
-  return json_pack ("{s:i, s:s, s:i, s:f, s:s}", "rank", (int)place + 1, "position", site->position,
-                    "hydrogens", (int)site->hydrogens, "pka", a->estimate[s].value, "basis",
-                    enl_basis_text (a->estimate[s].basis));
+  if (a->estimate[s].remark)
+    json_object_set_new (object, "remark", json_string (a->estimate[s].remark));
+  return object;
+}
+
+static json_t *
+lab_state (EnlWindow *self, uint32_t index)
+{
+  const EnlLabEntry *e = enl_workset_lab (enl_session_set (self->session), index);
+  EnlLabOutcome outcome = enl_session_lab_outcome (self->session, index);
+  json_t *object = json_pack ("{s:s, s:s, s:s, s:s, s:f, s:f, s:b}", "name", e->name, "structure",
+                              e->structure, "note", e->note, "solvent", enl_solvent_id (e->solvent),
+                              "pka", e->pka, "sigma", e->sigma, "contradicts", outcome.contradicts);
+
+  if (outcome.remark)
+    json_object_set_new (object, "remark", json_string (outcome.remark));
+  if (outcome.fault) {
+    g_autofree char *message = enl_error_message (outcome.fault);
+    json_object_set_new (object, "fault", json_string (message));
+  }
+  return object;
 }
 
 static json_t *
@@ -67,7 +88,7 @@ enl_window_state (EnlWindow *self)
 {
   const EnlWorkset *set = enl_session_set (self->session);
   const EnlSelection *selection = enl_workset_selection (set);
-  json_t *root = json_object (), *substrates = json_array ();
+  json_t *root = json_object (), *substrates = json_array (), *lab = json_array ();
   uint32_t site = enl_session_site (self->session);
 
   /* A long set would make every change slow: the probe shows its beginning. */
@@ -75,6 +96,9 @@ enl_window_state (EnlWindow *self)
     json_array_append_new (substrates, substrate_state (self, i));
   json_object_set_new (root, "size", json_integer (enl_workset_size (set)));
   json_object_set_new (root, "substrates", substrates);
+  for (uint32_t i = 0; i < MIN (enl_workset_lab_size (set), 12); i++)
+    json_array_append_new (lab, lab_state (self, i));
+  json_object_set_new (root, "lab", lab);
   json_object_set_new (root, "solvent",
                        json_string (enl_solvent_id (enl_workset_conditions (set)->solvent)));
   json_object_set_new (

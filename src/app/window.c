@@ -39,8 +39,8 @@ column_at (EnlWindow *self, uint32_t index)
 }
 
 /* Keyboard on the picture of the selected substrate. */
-static void
-focus_picture (EnlWindow *self)
+void
+enl_window_focus_picture (EnlWindow *self)
 {
   uint32_t index = enl_workset_selection (enl_session_set (self->session))->substrate;
   GtkWidget *column = index == ENL_NONE ? NULL : column_at (self, index);
@@ -63,7 +63,7 @@ rebuild_columns (EnlWindow *self)
   for (uint32_t i = 0; i < n; i++)
     gtk_box_append (self->columns, enl_column_new (self->session, self->look, i));
   gtk_widget_set_visible (GTK_WIDGET (self->hint), n == 0);
-  focus_picture (self);
+  enl_window_focus_picture (self);
 }
 
 void
@@ -218,6 +218,7 @@ enl_window_class_init (EnlWindowClass *klass)
   g_type_ensure (ENL_TYPE_FORMS_PANEL);
   g_type_ensure (ENL_TYPE_BASES_PANEL);
   g_type_ensure (ENL_TYPE_WHY_PANEL);
+  g_type_ensure (ENL_TYPE_LAB_PANEL);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/window.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, title);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, subtitle);
@@ -230,6 +231,7 @@ enl_window_class_init (EnlWindowClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, bases);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, why);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, details);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, lab);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, panes);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, lower);
   gtk_widget_class_bind_template_callback (widget_class, on_bar_response);
@@ -261,12 +263,15 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
                            self, G_CONNECT_SWAPPED);
   g_signal_connect_object (self->session, "selection-changed", G_CALLBACK (on_selection_changed),
                            self, 0);
+  g_signal_connect_object (self->session, "lab-changed", G_CALLBACK (enl_window_sync_actions), self,
+                           G_CONNECT_SWAPPED);
   g_signal_connect_object (self->look, "changed", G_CALLBACK (on_look_changed), self, 0);
   enl_forms_panel_follow (self->forms, self->session, self->look);
   enl_bases_panel_follow (self->bases, self->session, self->look);
   enl_why_panel_follow (self->why, self->session, self->look);
   g_signal_connect_object (self->why, "changed", G_CALLBACK (enl_window_sync_actions), self,
                            G_CONNECT_SWAPPED);
+  enl_lab_panel_follow (self->lab, self->session);
   refresh_title (self);
   enl_window_sync_actions (self);
   return self;

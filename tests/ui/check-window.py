@@ -112,6 +112,92 @@ def check_first_start(folder):
     expect('the light window is bright and not empty', light.good)
 
 
+def fields(pka, note=None):
+    """Types into the panel of own values, keyboard only, and keeps it with Enter."""
+    key('ctrl+m')
+    key('ctrl+m')
+    key('ctrl+a')
+    run('xdotool', 'type', '--delay', '15', pka)
+    if note is not None:
+        key('Tab', 'Tab', 'ctrl+a')
+        run('xdotool', 'type', '--delay', '15', note)
+    key('Return')
+
+
+def check_lab(folder):
+    before = state()
+    key('ctrl+m')
+    fields('13.2', 'titration 3')
+    now = wait('an own value joins', lambda s: len(s['lab']) == 1 and all(x['current'] for x in s['substrates']))
+    site = top_site(now, 0)
+    expect('it stands at its site, marked lab', site['basis'] == 'lab' and abs(site['pka'] - 13.2) < 1e-9)
+    expect('the contradiction is told', 'published 14.2' in site['remark'] and now['lab'][0]['contradicts'] and
+           now['lab'][0]['note'] == 'titration 3' and now['lab'][0]['sigma'] == 0.3)
+    expect('others shift', now['substrates'][0]['sites'][1]['pka'] != before['substrates'][0]['sites'][1]['pka'])
+    Picture(folder, 'lab-value')
+    fields('13,9')
+    time.sleep(0.3)
+    expect('a typo changes nothing', state()['lab'] == now['lab'])
+    Picture(folder, 'lab-typo')
+    fields('14.1')
+    now = wait('it is changed', lambda s: abs(s['lab'][0]['pka'] - 14.1) < 1e-9 and
+               all(x['current'] for x in s['substrates']))
+    expect('no contradiction is left', 'remark' not in top_site(now, 0) and not now['lab'][0]['contradicts'])
+    key('ctrl+3')
+    wait('THF has no lab value', lambda s: s['solvent'] == 'thf' and all(x['current'] for x in s['substrates'])
+         and top_site(s, 0)['basis'] == 'estimated')
+    Picture(folder, 'lab-thf')
+    key('ctrl+1')
+    wait('back in DMSO', lambda s: s['solvent'] == 'dmso' and all(x['current'] for x in s['substrates'])
+         and top_site(s, 0)['basis'] == 'lab')
+    with tempfile.TemporaryDirectory() as place:
+        path = os.path.join(place, 'own.tsv')
+        head = 'structure\tatom\tsolvent\tpka\tsigma\tnote\n'
+        rows = 'COc1ccc(cc1)C(=O)CC\t11\tdmso\t25.1\t0.2\tmorning\nCOc1ccc(cc1)C(=O)CC\t11\tdmso\t27.9\t0.2\t\n'
+        pathlib.Path(path).write_text(head + rows + 'C1CC\t\tdmso\t20\n')
+        activate('open-path', "[<'%s'>]" % path)
+        time.sleep(0.3)
+        expect('a table with a fault changes nothing', len(state()['lab']) == 1)
+        pathlib.Path(path).write_text(head + rows)
+        activate('open-path', "[<'%s'>]" % path)
+        now = wait('a table joins', lambda s: len(s['lab']) == 3 and all(x['current'] for x in s['substrates']))
+        site = top_site(now, 1)
+        expect('its two values disagree, one is shown', abs(site['pka'] - 25.1) < 1e-9 and
+               'lab values disagree' in site['remark'])
+        Picture(folder, 'lab-table')
+        activate('open-path', "[<'%s'>]" % path)
+        time.sleep(0.3)
+        expect('again it adds nothing', len(state()['lab']) == 3)
+        kept = os.path.join(place, 'own.enolith')
+        written = json.dumps(now['lab'])
+        activate('save-path', "[<'%s'>]" % kept)
+        wait('saved with lab values', lambda s: not s['unsaved'])
+        activate('undo')
+        wait('a table is one step of undo', lambda s: len(s['lab']) == 1)
+        activate('open-path', "[<'%s'>]" % kept)
+        now = wait('they come back from the file', lambda s: len(s['lab']) == 3 and
+                   all(x['current'] for x in s['substrates']) and s['lab'][1].get('remark'))
+        expect('as they were', json.dumps(now['lab']) == written)
+    for left in (2, 1):
+        key('ctrl+m')
+        key('ctrl+m')
+        key('Tab', 'Tab', 'Tab', 'Tab', 'space') # pKa, sigma, note, keep, remove
+        wait('removed by the keyboard', lambda s: len(s['lab']) == left and
+             all(x['current'] for x in s['substrates']))
+        if left == 2:
+            key('alt+Right')
+            wait('the next substrate', lambda s: s['substrate'] == 1)
+    key('ctrl+m')
+    key('ctrl+m')
+    key('Tab', 'Tab', 'Tab', 'Tab', 'space')
+    now = wait('the last one is removed', lambda s: s['lab'] == [] and
+               all(x['current'] for x in s['substrates']))
+    expect('every number is what it was', now['substrates'] == before['substrates'])
+    key('Escape')
+    key('alt+Left')
+    wait('the first substrate again', lambda s: s['substrate'] == 0)
+
+
 def check_typing(folder):
     key('ctrl+t')
     wait('a new substrate is selected', lambda s: s['size'] == 4 and s['substrate'] == 1)
@@ -223,6 +309,7 @@ def drive(folder):
     time.sleep(0.4)
     check_first_start(folder)
     check_why(folder)
+    check_lab(folder)
     check_typing(folder)
     check_history()
     check_solvent()

@@ -398,7 +398,6 @@ row_of_entry (const EnlLabRow *row)
 
   return (EnlReferenceRow){
       .name = e->name[0] ? e->name : e->structure,
-      .smiles = e->structure,
       .source = e->source[0] ? e->source : "own value",
       .note = e->note,
       .pka = e->pka,

@@ -145,6 +145,18 @@ class_place (const Entry *entry)
   return place;
 }
 
+/* SMILES with map number 1 on the site, as in the published rows. */
+static char *
+marked_smiles (const EnlMolecule *mol, uint32_t site)
+{
+  g_autoptr (EnlMolecule) copy = enl_molecule_copy (mol);
+
+  for (uint32_t i = 0; i < enl_molecule_atoms (copy); i++)
+    enl_molecule_edit_atom (copy, i)->map = i == site;
+  enl_molecule_finish (copy);
+  return enl_smiles_write (copy, ENL_SMILES_MAPS, NULL);
+}
+
 static uint32_t
 find_alike (const EnlReference *ref, uint32_t row, const uint32_t *place)
 {
@@ -172,7 +184,7 @@ enl_reference_extend (const EnlReference *base, const EnlReferenceRow *extra, ui
     EnlReferenceRow *row = &ref->entry[i].row;
     *row = extra[i];
     row->name = g_strdup (extra[i].name);
-    row->smiles = g_strdup (extra[i].smiles);
+    row->smiles = marked_smiles (extra[i].mol, extra[i].site);
     row->source = g_strdup (extra[i].source);
     row->note = g_strdup (extra[i].note);
     row->mol = ref->entry[i].mol = enl_molecule_copy (extra[i].mol);

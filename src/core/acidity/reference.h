@@ -21,8 +21,8 @@ EnlStatus enl_reference_new (const char *text, size_t size, EnlReference **out,
                              EnlError *err) ENL_MUST_USE;
 /* The table of `base`, which is borrowed and must outlive the result, with `n` rows of a user
  * behind its own: the numbers of published rows stay. Texts, molecule and site of `extra` are
- * copied; `key` and `lab` are filled in here. Wherever a row of the user fits, the find functions
- * below prefer it to a published one. */
+ * copied; `smiles` (with the site marked), `key` and `lab` are filled in here. Wherever a row of
+ * the user fits, the find functions below prefer it to a published one. */
 EnlReference *enl_reference_extend (const EnlReference *base, const EnlReferenceRow *extra,
                                     uint32_t n) ENL_MUST_USE;
 void enl_reference_free (EnlReference *ref);

@@ -57,7 +57,7 @@ enl_knowledge_with_lab (const EnlKnowledge *base, const EnlLab *lab, EnlKnowledg
     return status;
   EnlKnowledge *k = *out = g_memdup2 (base, sizeof *base);
   g_atomic_ref_count_init (&k->references);
-  k->base = base;
+  k->base = enl_knowledge_ref (base);
   k->estimator = estimator;
   k->reference = enl_estimator_reference (estimator);
   return ENL_OK;
@@ -79,6 +79,7 @@ enl_knowledge_free (EnlKnowledge *k)
     return;
   enl_estimator_free (k->estimator);
   if (k->base) {
+    enl_knowledge_free (k->base);
     g_free (k);
     return;
   }

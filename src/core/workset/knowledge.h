@@ -16,7 +16,7 @@ struct EnlKnowledge {
   EnlNames *names;
   /* the inside */
   EnlReference *published;
-  const EnlKnowledge *base; /* NULL: it owns its tables */
+  EnlKnowledge *base; /* held: whose tables these are; NULL: its own */
   gatomicrefcount references;
 };
 
@@ -24,8 +24,8 @@ struct EnlKnowledge {
  * the result). Caller: enl_knowledge_free. */
 EnlStatus enl_knowledge_open (const char *model, size_t size, EnlKnowledge **out,
                               EnlError *err) ENL_MUST_USE;
-/* The same knowledge with a user's own values; shares the tables of `base`, itself without own
- * values, which must outlive it. */
+/* The same knowledge with a user's own values; holds `base`, itself without own values, for its
+ * tables. */
 EnlStatus enl_knowledge_with_lab (const EnlKnowledge *base, const EnlLab *lab, EnlKnowledge **out,
                                   EnlError *err) ENL_MUST_USE;
 /* Holds it: threads and results may outlive the one who opened it. */
