@@ -3,7 +3,7 @@
 
 #include "cli/verbs.h"
 
-/* Contradictions are told once, and the verb goes on. */
+/* Contradictions are told once for each acid, and the verb goes on. */
 static void
 warn (const EnlRun *run, const char *path, const EnlLab *lab, const EnlKnowledge *knowledge)
 {
@@ -12,10 +12,12 @@ warn (const EnlRun *run, const char *path, const EnlLab *lab, const EnlKnowledge
   for (uint32_t i = 0; judgement && i < judgement->n_sites; i++) {
     const EnlLabSite *site = &judgement->site[i];
     const EnlLabEntry *entry = enl_lab_row (lab, site->shown)->entry;
-    if (site->contradicts && g_hash_table_add (run->told, g_strdup (site->remark)))
-      fprintf (stderr, "%s: warning: %s in %s: %s\n", path,
-               entry->name[0] ? entry->name : entry->structure, enl_solvent_label (entry->solvent),
-               site->remark);
+    g_autofree char *what =
+        g_strdup_printf ("%s in %s", entry->name[0] ? entry->name : entry->structure,
+                         enl_solvent_label (entry->solvent));
+    if (site->contradicts &&
+        g_hash_table_add (run->told, g_strconcat (what, entry->structure, NULL)))
+      fprintf (stderr, "%s: warning: %s: %s\n", path, what, site->remark);
   }
 }
 
