@@ -12,7 +12,7 @@ static const EnlVerb verb[] = {
     {"forms", "Contributing structures of the anion, with weights and charges.", "fsal", true,
      enl_verb_forms},
     {"bases", "Every base against one site: gap, conversion, verdict, cautions; best first.",
-     "fsaectl", true, enl_verb_bases},
+     "fsaechtl", true, enl_verb_bases},
     {"figure", "Writes an annotated picture.", "sveowdmal", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",
      true, enl_verb_molecule},

@@ -19,6 +19,7 @@ static const Option option[] = {
     {'e', "--equiv", "E", "equivalents of base (default 1.05)"},
     {'c', "--conc", "C", "substrate, mol/L (default 0.1)"},
     {'t', "--temperature", "T", "degrees Celsius; pK values hold at 25 and are not carried over"},
+    {'h', "--water", "E", "equivalents of water per substrate (default 0)"},
     {'v', "--view", "NAME", "substrates or forms"},
     {'o', "--out", "FILE", "picture to write: ends in .png, .svg or .pdf"},
     {'w', "--width-mm", "W", "width of the picture in mm (default: natural size)"},
@@ -127,6 +128,8 @@ take_value (char letter, const char *text, EnlOptions *out)
     return take_double (text, &out->conditions.concentration);
   case 't':
     return take_double (text, &out->conditions.temperature);
+  case 'h':
+    return take_double (text, &out->conditions.water);
   case 'w':
     return take_double (text, &out->width_mm) && out->width_mm > 0.0;
   case 'd':

@@ -8,6 +8,8 @@
 #include "core/acidity/estimate.h"
 #include "core/base/error.h"
 
+#define ENL_MAX_FURTHER 3
+
 typedef struct {
   const char *id, *name, *smiles, *conjugate_acid, *cation, *family, *nucleophilicity, *steric;
   const char *typical_solvents, *typical_temperature, *incompatible, *note, *source, *thf_scale;
@@ -22,8 +24,10 @@ typedef struct {
   bool adds_to_carbonyl;  /* organolithium or Grignard reagent */
   bool beta_hydride;      /* can hand a beta-hydride to C=O */
   bool own;               /* added by the user, see own-base.h */
-  double pkah[ENL_N_SOLVENTS];  /* NAN: not on this scale */
-  double sigma[ENL_N_SOLVENTS]; /* one standard deviation */
+  double pkah[ENL_N_SOLVENTS];                     /* NAN: not on this scale */
+  double sigma[ENL_N_SOLVENTS];                    /* one standard deviation */
+  double further[ENL_N_SOLVENTS][ENL_MAX_FURTHER]; /* pKaH of further protons, base-steps.h */
+  uint32_t n_further[ENL_N_SOLVENTS];
   /* As it is usually sold; NAN where that says nothing. */
   const char *form;    /* "solution in THF", "dispersion in mineral oil" */
   double molar_mass;   /* g/mol, of the base alone where the row is a mixture */

@@ -9,7 +9,7 @@
 EnlConditions
 enl_conditions_default (void)
 {
-  return (EnlConditions){ENL_SOLVENT_DMSO, 1.05, 0.1, 25.0};
+  return (EnlConditions){ENL_SOLVENT_DMSO, 1.05, 0.1, 25.0, 0.0};
 }
 
 EnlStatus
@@ -21,6 +21,9 @@ enl_conditions_check (const EnlConditions *c, EnlError *err)
   if (!(c->concentration > 0.0 && c->concentration <= 20.0))
     return enl_error_set (err, ENL_ERROR_RANGE, "give more than 0 and at most 20 mol/L",
                           "concentration %g mol/L", c->concentration);
+  if (!(c->water >= 0.0 && c->water <= 100.0))
+    return enl_error_set (err, ENL_ERROR_RANGE, "give 0 to 100 equivalents of water",
+                          "%g equivalents of water", c->water);
   if (!(c->temperature >= -120.0 && c->temperature <= 200.0))
     return enl_error_set (err, ENL_ERROR_RANGE, "give a temperature from -120 to 200 °C",
                           "temperature %g °C", c->temperature);

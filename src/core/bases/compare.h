@@ -39,16 +39,19 @@ typedef enum {
 const char *enl_grade_text (EnlGrade grade);
 
 typedef struct {
-  uint32_t base;      /* index in the base table */
-  double pkah;        /* on the footing in use; NAN off the scale */
-  double gap;         /* pkah - pKa(site); NAN where there is none */
-  double conversion;  /* fraction 0..1 of the substrate present as this anion; NAN likewise */
-  double low, high;   /* its 90 % interval, from that of the gap */
-  double selectivity; /* share of this site among all ionised forms, 0..1; NAN likewise */
+  uint32_t base;            /* index in the base table */
+  double pkah;              /* on the footing in use; NAN off the scale */
+  double gap;               /* pkah - pKa(site); NAN where there is none */
+  double gap_low, gap_high; /* its 90 % interval, of site and base together; NAN likewise */
+  double conversion;        /* fraction 0..1 of the substrate present as this anion; NAN likewise */
+  double low, high;         /* its 90 % interval, from that of the gap */
+  double selectivity;       /* share of this site among all ionised forms, 0..1; NAN likewise */
   double equivalents_needed; /* one for the site, one for each hydrogen that takes base before it or
                                 beside it */
   EnlVerdict verdict;
   EnlGrade grade;
+  bool stoichiometric; /* takes its protons for good, the most acidic first; no equilibrium with it
+                        */
   bool levelled;       /* the solvent's own anion is the base that acts */
   bool own_alcohol;    /* an alkoxide on the water footing: judged in its own alcohol */
   char *words;         /* verdict as printed: "complete, with a caution" */

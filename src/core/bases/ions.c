@@ -1,8 +1,10 @@
 #include "core/bases/ions.h"
 
 #include <stdlib.h>
+#include <string.h>
 
 #include "core/acidity/group.h"
+#include "core/bases/overlap.h"
 
 /* ---- who goes before whom ---- */
 
@@ -83,6 +85,12 @@ competes (const EnlQuestion *q, uint32_t rival, uint32_t site)
 
 /* ---- forms ---- */
 
+/* One form while it is made up. */
+typedef struct {
+  EnlSpecies species;
+  EnlSiteSet lost;
+} Form;
+
 /* Each atom of a class of heteroatom acids loses a hydrogen; a carbon class loses one. */
 static uint32_t
 hydrogens_taken (const EnlQuestion *q, uint32_t site)
@@ -92,82 +100,118 @@ hydrogens_taken (const EnlQuestion *q, uint32_t site)
   return s->kind == ENL_SITE_CARBON ? 1 : s->n_atoms;
 }
 
-static void
-lose (EnlSpecies *form, double pk, double charge, uint32_t times)
+static double
+charge_term (const EnlQuestion *q)
 {
+  return q->practice->second_charge[q->conditions->solvent];
+}
+
+/* `charge` for every proton that is gone already. */
+static void
+lose (const EnlQuestion *q, Form *form, uint32_t site, double charge, uint32_t times)
+{
+  form->lost.word[site / 64] |= (uint64_t)1 << (site % 64);
   for (uint32_t i = 0; i < times; i++) {
-    form->pk_sum += pk + charge * form->lost;
-    form->lost++;
+    form->species.pk_sum += pka (q, site) + charge * form->species.lost;
+    form->species.lost++;
   }
 }
 
-static EnlSpecies
+static Form
 own_form (const EnlQuestion *q, uint32_t site)
 {
-  EnlSpecies form = {0.0, 0};
-  double charge = q->practice->second_charge[q->conditions->solvent];
+  Form form = {0};
 
   for (uint32_t other = 0; other < q->sites->n_sites; other++)
     if (precedes (q, other, site))
-      lose (&form, pka (q, other), charge, hydrogens_taken (q, other));
-  lose (&form, pka (q, site), 0.0, 1);
+      lose (q, &form, other, charge_term (q), hydrogens_taken (q, other));
+  lose (q, &form, site, 0.0, 1);
   return form;
 }
 
 /* The own form and every competing hydrogen; lost == 0 when nothing competes. */
-static EnlSpecies
-stripped_form (const EnlQuestion *q, uint32_t site, bool *holds_target)
+static Form
+stripped_form (const EnlQuestion *q, uint32_t site)
 {
-  EnlSpecies form = own_form (q, site);
-  double charge = q->practice->second_charge[q->conditions->solvent];
-  uint32_t before = form.lost;
+  Form form = own_form (q, site);
+  uint32_t before = form.species.lost;
 
-  *holds_target = site == q->target;
   for (uint32_t other = 0; other < q->sites->n_sites; other++)
-    if (competes (q, other, site)) {
-      lose (&form, pka (q, other), charge, hydrogens_taken (q, other));
-      *holds_target |= other == q->target;
-    }
-  return form.lost > before ? form : (EnlSpecies){0.0, 0};
-}
-
-static void
-add_form (EnlIons *ions, EnlSpecies form, bool holds_target)
-{
-  if (form.lost == 0 || ions->n_species == ENL_MAX_SPECIES)
-    return;
-  ions->species[ions->n_species] = form;
-  ions->holds_target[ions->n_species++] = holds_target;
+    if (competes (q, other, site))
+      lose (q, &form, other, charge_term (q), hydrogens_taken (q, other));
+  return form.species.lost > before ? form : (Form){0};
 }
 
 /* A class of several equivalent heteroatom acids, all of them gone. */
-static EnlSpecies
+static Form
 all_of_class (const EnlQuestion *q, uint32_t site)
 {
-  EnlSpecies form = {0.0, 0};
+  Form form = {0};
 
   if (hydrogens_taken (q, site) > 1)
-    lose (&form, pka (q, site), q->practice->second_charge[q->conditions->solvent],
-          hydrogens_taken (q, site));
+    lose (q, &form, site, charge_term (q), hydrogens_taken (q, site));
   return form;
+}
+
+/* Both hydrogens gone from a molecule for which each pKa is that of the first one. */
+static Form
+pair_form (const EnlQuestion *q, const EnlChargeRoom *room, uint32_t a, uint32_t b)
+{
+  Form form = {0};
+  uint32_t other = a == b ? 1 : 0;
+  bool shared = enl_charge_room_shared (room, q->sites, a, 0, b, other);
+
+  lose (q, &form, a, 0.0, 1);
+  lose (q, &form, b, shared ? q->practice->second_charge_shared : charge_term (q), 1);
+  return form;
+}
+
+static bool
+is_listed (const EnlIons *ions, const Form *form)
+{
+  for (uint32_t i = 0; i < ions->n_species; i++)
+    if (ions->species[i].lost == form->species.lost &&
+        memcmp (&ions->lost[i], &form->lost, sizeof form->lost) == 0)
+      return true;
+  return false;
+}
+
+static void
+add_form (const EnlQuestion *q, EnlIons *ions, Form form)
+{
+  if (form.species.lost == 0 || ions->n_species == ENL_MAX_SPECIES || is_listed (ions, &form))
+    return;
+  ions->species[ions->n_species] = form.species;
+  ions->lost[ions->n_species] = form.lost;
+  ions->holds_target[ions->n_species++] = enl_site_set_has (&form.lost, q->target);
+}
+
+/* Dianions of two hydrogens neither of which is certain to go before the other. */
+static void
+list_pairs (const EnlQuestion *q, EnlIons *ions)
+{
+  const EnlSite *site = q->sites->site;
+  g_autoptr (EnlChargeRoom) room = enl_charge_room_new (q->mol, q->sites);
+
+  for (uint32_t a = 0; a < q->sites->n_sites; a++)
+    for (uint32_t b = a; b < q->sites->n_sites; b++)
+      if (!site[a].second && !site[b].second && (a != b || site[a].n_atoms > 1))
+        add_form (q, ions, pair_form (q, room, a, b));
 }
 
 static void
 list_forms (const EnlQuestion *q, EnlIons *ions)
 {
   const uint32_t n = q->sites->n_sites;
-  bool holds;
 
   for (uint32_t i = 0; i < n; i++)
-    add_form (ions, own_form (q, i), i == q->target || precedes (q, q->target, i));
+    add_form (q, ions, own_form (q, i));
   ions->own = q->target;
-  EnlSpecies form = stripped_form (q, q->target, &holds);
-  add_form (ions, form, holds);
   for (uint32_t i = 0; i < n; i++) {
-    form = i == q->target ? (EnlSpecies){0.0, 0} : stripped_form (q, i, &holds);
-    add_form (ions, form, holds);
-    add_form (ions, all_of_class (q, i), i == q->target);
+    add_form (q, ions, stripped_form (q, i));
+    add_form (q, ions, all_of_class (q, i));
   }
+  list_pairs (q, ions);
 }
 
 static int
@@ -200,6 +244,7 @@ enl_ions_new (const EnlQuestion *q, EnlIons **out, EnlError *err)
   EnlIons *ions = g_new0 (EnlIons, 1);
   ions->species = g_new0 (EnlSpecies, ENL_MAX_SPECIES);
   ions->holds_target = g_new0 (bool, ENL_MAX_SPECIES);
+  ions->lost = g_new0 (EnlSiteSet, ENL_MAX_SPECIES);
   ions->competing = g_new0 (uint32_t, q->sites->n_sites);
   ions->most_acidic = q->target;
   for (uint32_t i = 0; i < q->sites->n_sites; i++)
@@ -218,6 +263,7 @@ enl_ions_free (EnlIons *ions)
     return;
   g_free (ions->species);
   g_free (ions->holds_target);
+  g_free (ions->lost);
   g_free (ions->competing);
   g_free (ions);
 }

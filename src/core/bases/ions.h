@@ -4,15 +4,29 @@
  * Every site gives a form that has lost its hydrogen and those that are certain to leave before it
  * (EnlSite.second: its estimate is that of the anion already). Beside it stands the form in which
  * every competing O-H, N-H ... is lost too: there the pKa values are those of neutral molecules, so
- * each further charge costs EnlPractice.second_charge.
+ * each further charge costs EnlPractice.second_charge. Dianions of any two hydrogens that are first
+ * ones by their estimates follow the same sum; where both charges would share their room (two sides
+ * of one C=O) they cost second_charge_shared instead. Equal forms are listed once.
  */
 #pragma once
 
 #include "core/bases/equilibrium.h"
 #include "core/bases/question.h"
 
+/* Sites by index. */
+typedef struct {
+  uint64_t word[ENL_MAX_SPECIES / 64];
+} EnlSiteSet;
+
+static inline bool
+enl_site_set_has (const EnlSiteSet *set, uint32_t site)
+{
+  return set->word[site / 64] >> (site % 64) & 1;
+}
+
 typedef struct {
   EnlSpecies *species;
+  EnlSiteSet *lost;    /* sites that have lost a hydrogen in each form */
   bool *holds_target;  /* the form has lost the target's hydrogen */
   uint32_t n_species;  /* at most ENL_MAX_SPECIES */
   uint32_t own;        /* species of the target with what certainly precedes it */

@@ -15,9 +15,6 @@
  * textbook figure before it is called strong enough: more than the doubt of that figure. */
 #define NOMINAL_MARGIN 5.0
 
-/* An irreversible base stands this far above every site: then it is used up to 1e-10. */
-#define OUT_OF_REACH 25.0
-
 /* ---- the solvent's own anion ---- */
 
 /* A base stronger than the solvent's anion hands its proton hunger on to the solvent. The anions
@@ -45,6 +42,24 @@ enl_judge_begin (const EnlQuestion *question, const EnlIons *ions)
 
 /* ---- the equilibrium ---- */
 
+/* The weakest acid that an irreversible base is certain to take. */
+static double
+reach_of (const EnlJudge *j, const EnlBase *base)
+{
+  double pkah = base->pkah[j->question->conditions->solvent];
+
+  return isnan (pkah) ? base->pkah_nominal - NOMINAL_MARGIN : pkah;
+}
+
+void
+enl_judge_mixture (const EnlJudge *j, const EnlCandidate *c, EnlMixture *out)
+{
+  const EnlBase *base = enl_base_table_get (j->question->bases, c->base);
+
+  enl_mixture_init (out, j->question, j->ions, base, c->stoichiometric ? NAN : c->pkah,
+                    reach_of (j, base));
+}
+
 typedef struct {
   double conversion; /* fraction of the substrate that has lost the target's hydrogen */
   double ionised;    /* fraction that has lost any */
@@ -57,25 +72,22 @@ site_estimate (const EnlJudge *j)
   return &j->question->estimate[j->question->target];
 }
 
-/* Composition with the target's pKa moved by `shift`: against the base and against other sites. */
+/* Composition with the site's pKa and the base's pKaH moved. `pkah` NAN: taken for good. */
 static EnlStatus
-solve_at (const EnlJudge *j, double pkah, double shift, Share *share, EnlError *err)
+solve_at (const EnlJudge *j, const EnlCandidate *c, double site, double base, Share *share,
+          EnlError *err)
 {
   const EnlIons *ions = j->ions;
-  const EnlConditions *conditions = j->question->conditions;
-  g_autofree EnlSpecies *form = g_memdup2 (ions->species, ions->n_species * sizeof *ions->species);
-  EnlEquilibrium problem = {form, ions->n_species, conditions->concentration,
-                            conditions->concentration * conditions->equivalents, pkah};
+  g_auto (EnlMixture) m = {0};
   g_autofree EnlComposition *at = g_new (EnlComposition, 1);
 
-  for (uint32_t i = 0; i < ions->n_species; i++)
-    if (ions->holds_target[i])
-      form[i].pk_sum += shift;
-  EnlStatus status = enl_equilibrium_solve (&problem, at, err);
+  enl_judge_mixture (j, c, &m);
+  enl_mixture_shift (&m, ions, site, base);
+  EnlStatus status = enl_equilibrium_solve (&m.problem, at, err);
   *share = (Share){0};
   for (uint32_t i = 0; status == ENL_OK && i < ions->n_species; i++) {
     share->conversion += ions->holds_target[i] ? at->fraction[i] : 0.0;
-    share->level += form[i].lost >= form[ions->own].lost ? at->fraction[i] : 0.0;
+    share->level += ions->species[i].lost >= ions->species[ions->own].lost ? at->fraction[i] : 0.0;
     share->ionised += at->fraction[i];
   }
   return status;
@@ -95,20 +107,26 @@ verdict_of (const Share *share)
   return share->conversion >= TRACE_FROM ? ENL_VERDICT_TRACE : ENL_VERDICT_NO;
 }
 
-/* `sigma` is the doubt about the base, one standard deviation. */
+/* `sigma` is the doubt about the base, one standard deviation. The interval is that of the gap: its
+ * ends are the likeliest pair of errors that make it so wide, where the error of the base moves the
+ * base against all sites together and that of the site the site alone. */
 static EnlStatus
-judge_equilibrium (const EnlJudge *j, double pkah, double sigma, EnlCandidate *out, EnlError *err)
+judge_equilibrium (const EnlJudge *j, double sigma, EnlCandidate *out, EnlError *err)
 {
-  double doubt = Z90 * hypot (site_estimate (j)->sigma, isnan (sigma) ? 0.0 : sigma);
+  double of_site = site_estimate (j)->sigma, of_gap = hypot (of_site, sigma);
+  double site = of_gap > 0.0 ? Z90 * of_site * of_site / of_gap : 0.0;
+  double base = of_gap > 0.0 ? Z90 * sigma * sigma / of_gap : 0.0;
   Share likely, low, high;
-  EnlStatus status = solve_at (j, pkah, 0.0, &likely, err);
+  EnlStatus status = solve_at (j, out, 0.0, 0.0, &likely, err);
 
   if (status == ENL_OK)
-    status = solve_at (j, pkah, doubt, &low, err);
+    status = solve_at (j, out, site, -base, &low, err);
   if (status == ENL_OK)
-    status = solve_at (j, pkah, -doubt, &high, err);
+    status = solve_at (j, out, -site, base, &high, err);
   if (status != ENL_OK)
     return status;
+  out->gap_low = out->gap - Z90 * of_gap;
+  out->gap_high = out->gap + Z90 * of_gap;
   out->conversion = likely.conversion;
   out->low = low.conversion;
   out->high = high.conversion;
@@ -117,28 +135,22 @@ judge_equilibrium (const EnlJudge *j, double pkah, double sigma, EnlCandidate *o
   return ENL_OK;
 }
 
-/* Stoichiometric: as a base that leaves no proton it can reach, with the sites in equilibrium among
- * themselves. */
-static EnlStatus
-judge_irreversible (const EnlJudge *j, EnlCandidate *out, EnlError *err)
-{
-  const EnlQuestion *q = j->question;
-  double strongest = site_estimate (j)->value;
-
-  for (uint32_t i = 0; i < q->sites->n_sites; i++)
-    strongest = fmax (strongest, q->estimate[i].value);
-  return judge_equilibrium (j, strongest + OUT_OF_REACH, 0.0, out, err);
-}
-
 /* ---- one base ---- */
 
 static bool
 strong_enough (const EnlJudge *j, const EnlBase *base)
 {
-  double pkah = base->pkah[j->question->conditions->solvent];
-  double site = site_estimate (j)->value;
+  return reach_of (j, base) > site_estimate (j)->value;
+}
 
-  return isnan (pkah) ? base->pkah_nominal > site + NOMINAL_MARGIN : pkah > site;
+/* Equivalents that water takes before the site does. */
+static double
+water_before (const EnlJudge *j)
+{
+  const EnlQuestion *q = j->question;
+  double pka = enl_mixture_water_pka (q->bases, q->conditions->solvent);
+
+  return pka < site_estimate (j)->value ? q->conditions->water : 0.0;
 }
 
 /* Nobody makes an alkoxide in water: on the water footing it stands for its own alcohol, where the
@@ -180,8 +192,9 @@ enl_judge_base (const EnlJudge *j, uint32_t index, EnlCandidate *out, EnlError *
   const EnlBase *base = enl_base_table_get (j->question->bases, index);
 
   *out = (EnlCandidate){.base = index};
-  out->pkah = out->gap = out->conversion = out->low = out->high = out->selectivity = NAN;
-  out->equivalents_needed = 1.0 + j->ions->taken;
+  out->pkah = out->gap = out->gap_low = out->gap_high = NAN;
+  out->conversion = out->low = out->high = out->selectivity = NAN;
+  out->equivalents_needed = 1.0 + j->ions->taken + water_before (j);
   out->own_alcohol = stands_for_own_alcohol (j, base);
   if (base->attacks[solvent]) {
     out->verdict = ENL_VERDICT_SOLVENT;
@@ -190,12 +203,13 @@ enl_judge_base (const EnlJudge *j, uint32_t index, EnlCandidate *out, EnlError *
     out->verdict = ENL_VERDICT_NO_NUMBER;
   } else if (base->irreversible && strong_enough (j, base)) {
     set_strength (j, base, out);
-    return judge_irreversible (j, out, err);
+    out->stoichiometric = true;
+    return judge_equilibrium (j, 0.0, out, err);
   } else if (isnan (base->pkah[solvent])) {
     out->verdict = ENL_VERDICT_OFF_SCALE;
   } else {
     set_strength (j, base, out);
-    return judge_equilibrium (j, out->pkah, doubt_of_base (j, base, out), out, err);
+    return judge_equilibrium (j, doubt_of_base (j, base, out), out, err);
   }
   return ENL_OK;
 }

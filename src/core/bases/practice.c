@@ -16,6 +16,7 @@ place_of (EnlPractice *out, const char *key)
       {"second_charge_dmso", &out->second_charge[ENL_SOLVENT_DMSO]},
       {"second_charge_water", &out->second_charge[ENL_SOLVENT_WATER]},
       {"second_charge_thf", &out->second_charge[ENL_SOLVENT_THF]},
+      {"second_charge_shared", &out->second_charge_shared},
       {"competing_within", &out->competing_within},
       {"enough_gap", &out->enough_gap},
       {"excess", &out->excess},

@@ -11,6 +11,8 @@ typedef struct {
                            alcohol */
   double second_charge[ENL_N_SOLVENTS]; /* how much weaker an acid is for each negative charge that
                                            the molecule carries elsewhere, pK units */
+  double second_charge_shared; /* the same where both charges would share their room, as on the two
+                                  sides of one C=O */
   double competing_within; /* an O-H, N-H ... this many pK units weaker than the site still counts
                               as an equivalent */
   double enough_gap;       /* pK units from which on deprotonation keeps clear of condensation */

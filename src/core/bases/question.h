@@ -12,9 +12,10 @@ typedef struct {
   double equivalents;   /* of base per substrate */
   double concentration; /* substrate, mol/L */
   double temperature;   /* °C; the pK values hold at 25 and are not carried over */
+  double water;         /* equivalents of water per substrate, in substrate, base or solvent */
 } EnlConditions;
 
-/* 1.05 equivalents, 0.1 mol/L, 25 °C, DMSO. */
+/* 1.05 equivalents, 0.1 mol/L, 25 °C, DMSO, no water. */
 EnlConditions enl_conditions_default (void);
 /* ENL_ERROR_RANGE with advice when an amount is impossible. */
 EnlStatus enl_conditions_check (const EnlConditions *conditions, EnlError *err);

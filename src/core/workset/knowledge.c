@@ -1,5 +1,6 @@
 #include "core/workset/knowledge.h"
 
+#include "core/bases/base-steps.h"
 #include "resources/embedded.h"
 
 static EnlStatus
@@ -12,6 +13,10 @@ open_tables (EnlKnowledge *k, EnlError *err)
   if (status == ENL_OK) {
     text = enl_resource ("bases.tsv", &size);
     status = enl_base_table_new (text, size, &k->bases, err);
+  }
+  if (status == ENL_OK) {
+    text = enl_resource ("base-steps.tsv", &size);
+    status = enl_base_table_read_steps (k->bases, text, size, err);
   }
   if (status == ENL_OK) {
     text = enl_resource ("rules.tsv", &size);

@@ -58,6 +58,8 @@ read_conditions (const EnlReading *r, json_t *object, EnlWorkset *set)
   if (status == ENL_OK)
     status = take_number (r, object, "temperature", &c.temperature);
   if (status == ENL_OK)
+    status = take_number (r, object, "water", &c.water);
+  if (status == ENL_OK)
     status = enl_conditions_check (&c, r->err);
   if (status == ENL_OK)
     set->conditions = c;
@@ -215,9 +217,9 @@ write_substrate (const EnlSubstrate *s, json_t *kept)
 static json_t *
 write_conditions (const EnlConditions *c)
 {
-  return json_pack ("{s:s, s:f, s:f, s:f}", "solvent", enl_solvent_id (c->solvent), "equivalents",
-                    c->equivalents, "concentration", c->concentration, "temperature",
-                    c->temperature);
+  return json_pack ("{s:s, s:f, s:f, s:f, s:f}", "solvent", enl_solvent_id (c->solvent),
+                    "equivalents", c->equivalents, "concentration", c->concentration,
+                    "temperature", c->temperature, "water", c->water);
 }
 
 static json_t *

@@ -22,7 +22,7 @@ static EnlWorkset *
 sample (void)
 {
   EnlWorkset *set = enl_workset_new ();
-  EnlConditions c = {ENL_SOLVENT_THF, 2.1, 0.25, -78.0};
+  EnlConditions c = {ENL_SOLVENT_THF, 2.1, 0.25, -78.0, 0.05};
 
   ck_assert_int_eq (enl_workset_insert (set, 0, "block A", "CC(=O)CC(=O)OCC", NULL), ENL_OK);
   ck_assert_int_eq (enl_workset_insert (set, 1, "", "acetophenone", NULL), ENL_OK);
