@@ -13,6 +13,8 @@ static const EnlVerb verb[] = {
      enl_verb_forms},
     {"bases", "Every base against one site: gap, conversion, verdict, cautions; best first.",
      "fsaechtl", true, enl_verb_bases},
+    {"weigh", "What to weigh or measure out of chosen bases for an amount of substrate.",
+     "fsaechbMGTDl", true, enl_verb_weigh},
     {"figure", "Writes an annotated picture.", "sveowdmal", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",
      true, enl_verb_molecule},

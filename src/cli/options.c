@@ -32,6 +32,11 @@ static const Option option[] = {
     {'P', "--pairs", NULL, "pairs that stand in the wrong order"},
     {'R', "--rows", NULL, "every row of the table, largest standardised residual first"},
     {'x', "--explain", NULL, "why each value is what it is: contributions that add up, precedents"},
+    {'b', "--base", "B", "base by id or name (may be given repeatedly)"},
+    {'M', "--mmol", "M", "amount of substrate, mmol"},
+    {'G', "--grams", "G", "mass of substrate, g (instead of --mmol)"},
+    {'T', "--titre", "X", "strength of the solution at hand, mol/L"},
+    {'D', "--dispersion", "P", "base in the dispersion or solid at hand, % by mass"},
     {'p', "--plot", "FILE", "write the reliability picture: ends in .png, .svg or .pdf"},
 };
 
@@ -102,14 +107,30 @@ take_atom (const char *text, uint32_t *out)
 }
 
 static bool
-add_lab (const char *path, EnlOptions *out)
+add_word (const char *word, char ***list)
 {
-  guint n = out->lab ? g_strv_length (out->lab) : 0;
+  guint n = *list ? g_strv_length (*list) : 0;
 
-  out->lab = g_renew (char *, out->lab, n + 2);
-  out->lab[n] = g_strdup (path);
-  out->lab[n + 1] = NULL;
-  return path[0] != '\0';
+  *list = g_renew (char *, *list, n + 2);
+  (*list)[n] = g_strdup (word);
+  (*list)[n + 1] = NULL;
+  return word[0] != '\0';
+}
+
+/* The scale of weigh. False for a letter that is none of it or a text that is no number. */
+static bool
+take_scale (char letter, const char *text, EnlWeighScale *out)
+{
+  const struct {
+    char letter;
+    double *place;
+  } number[] = {
+      {'M', &out->mmol}, {'G', &out->grams}, {'T', &out->titre}, {'D', &out->mass_percent}};
+
+  for (size_t i = 0; i < ENL_COUNT (number); i++)
+    if (number[i].letter == letter)
+      return take_double (text, number[i].place);
+  return false;
 }
 
 static bool
@@ -123,7 +144,8 @@ take_value (char letter, const char *text, EnlOptions *out)
   case 'a':
     return take_atom (text, &out->atom);
   case 'e':
-    return take_double (text, &out->conditions.equivalents);
+    return take_double (text, &out->conditions.equivalents) &&
+           take_double (text, &out->scale.equivalents);
   case 'c':
     return take_double (text, &out->conditions.concentration);
   case 't':
@@ -144,7 +166,14 @@ take_value (char letter, const char *text, EnlOptions *out)
     out->out = text;
     return true;
   case 'l':
-    return add_lab (text, out);
+    return add_word (text, &out->lab);
+  case 'b':
+    return add_word (text, &out->base);
+  case 'M':
+  case 'G':
+  case 'T':
+  case 'D':
+    return take_scale (letter, text, &out->scale);
   case 'm':
     out->theme = text;
     return true;
@@ -202,7 +231,10 @@ parse_option (const EnlVerb *verb, int argc, char **argv, int *index, EnlOptions
     return wrong_use (verb, "%s needs a value (%s)", found->name, found->value);
   const char *value = equals ? equals + 1 : argv[++*index];
   if (!take_value (found->letter, value, out))
-    return wrong_use (verb, "%s '%s' is not one of %s", found->name, value, found->value);
+    return wrong_use (verb,
+                      strchr (found->value, '|') ? "%s '%s' is not one of %s"
+                                                 : "%s '%s' is no usable value for %s",
+                      found->name, value, found->value);
   return -1;
 }
 
@@ -213,8 +245,11 @@ enl_options_parse (const EnlVerb *verb, int argc, char **argv, EnlOptions *out)
   bool only_inputs = false;
   EnlError err;
 
-  *out = (EnlOptions){
-      .conditions = enl_conditions_default (), .dpi = 150.0, .theme = "print", .fold = "compound"};
+  *out = (EnlOptions){.conditions = enl_conditions_default (),
+                      .scale = enl_weigh_scale_none (),
+                      .dpi = 150.0,
+                      .theme = "print",
+                      .fold = "compound"};
   for (int i = 0; i < argc; i++) {
     if (!only_inputs && strcmp (argv[i], "--help") == 0) {
       print_help (verb);
@@ -248,4 +283,6 @@ enl_options_clear (EnlOptions *options)
   options->input = NULL;
   g_strfreev (options->lab);
   options->lab = NULL;
+  g_strfreev (options->base);
+  options->base = NULL;
 }

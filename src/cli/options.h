@@ -3,6 +3,7 @@
 
 #include "cli/output.h"
 #include "core/bases/compare.h"
+#include "core/bases/weigh-list.h"
 
 /* What validate prints. */
 typedef enum {
@@ -21,8 +22,10 @@ typedef struct {
   EnlListing listing;
   bool explain; /* sites: add why */
   double width_mm, dpi;
-  char **lab;   /* files with own values, NULL-terminated, or NULL */
-  char **input; /* NULL-terminated */
+  char **base;         /* ids or names of bases, NULL-terminated, or NULL */
+  EnlWeighScale scale; /* of weigh; equivalents NAN unless given */
+  char **lab;          /* files with own values, NULL-terminated, or NULL */
+  char **input;        /* NULL-terminated */
 } EnlOptions;
 
 typedef struct {

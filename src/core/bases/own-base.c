@@ -10,6 +10,10 @@
 #define LOWEST_PKAH  -30.0
 #define HIGHEST_PKAH 80.0
 #define WIDEST_SIGMA 20.0
+/* More than any reagent has. */
+#define HEAVIEST  10000.0 /* g/mol */
+#define STRONGEST 50.0    /* mol/L */
+#define DENSEST   25.0    /* g/mL */
 
 EnlOwnBase *
 enl_own_base_new (const char *name)
@@ -22,6 +26,7 @@ enl_own_base_new (const char *name)
   base->note = g_strdup ("");
   for (int s = 0; s < ENL_N_SOLVENTS; s++)
     base->pkah[s] = base->sigma[s] = NAN;
+  base->molar_mass = base->molarity = base->mass_percent = base->density = NAN;
   return base;
 }
 
@@ -75,6 +80,25 @@ check_numbers (const EnlOwnBase *base, EnlError *err)
   return ENL_OK;
 }
 
+/* All but the unknown ones must be amounts that exist. */
+static EnlStatus
+check_form (const EnlOwnBase *base, EnlError *err)
+{
+  const struct {
+    double value, most;
+    const char *what;
+  } number[] = {{base->molar_mass, HEAVIEST, "molar mass, g/mol,"},
+                {base->molarity, STRONGEST, "molarity, mol/L,"},
+                {base->mass_percent, 100.0, "mass per cent"},
+                {base->density, DENSEST, "density, g/mL,"}};
+
+  for (size_t i = 0; i < ENL_COUNT (number); i++)
+    if (!isnan (number[i].value) && !(number[i].value > 0.0 && number[i].value <= number[i].most))
+      return enl_error_set (err, ENL_ERROR_RANGE, "give a number above 0 that can be true, or none",
+                            "%s %g of '%.80s'", number[i].what, number[i].value, base->name);
+  return ENL_OK;
+}
+
 static EnlStatus
 check_against (const EnlOwnBase *base, const EnlBaseTable *table, EnlError *err)
 {
@@ -104,6 +128,8 @@ enl_own_base_check (const EnlOwnBase *base, const EnlBaseTable *table, EnlError 
     return enl_error_set (err, ENL_ERROR_RANGE, "give a name of 1 to 80 characters",
                           "a base has no usable name");
   EnlStatus status = check_numbers (base, err);
+  if (status == ENL_OK)
+    status = check_form (base, err);
   return status == ENL_OK && table ? check_against (base, table, err) : status;
 }
 
@@ -130,7 +156,11 @@ fill_row (EnlBaseTable *table, EnlBase *row, const EnlOwnBase *own)
   row->note = enl_base_table_keep (table, own->note);
   row->own = row->usual = true;
   row->irreversible = own->irreversible;
-  row->pkah_nominal = row->molar_mass = row->molarity = row->mass_percent = row->density = NAN;
+  row->pkah_nominal = NAN;
+  row->molar_mass = own->molar_mass;
+  row->molarity = own->molarity;
+  row->mass_percent = own->mass_percent;
+  row->density = own->density;
   memcpy (row->pkah, own->pkah, sizeof row->pkah);
   memcpy (row->sigma, own->sigma, sizeof row->sigma);
 }

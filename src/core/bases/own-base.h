@@ -13,6 +13,8 @@ typedef struct {
   double pkah[ENL_N_SOLVENTS];  /* NAN: not on this scale */
   double sigma[ENL_N_SOLVENTS]; /* one standard deviation, wherever there is a pKaH */
   bool irreversible;
+  /* How it is weighed out, as in EnlBase; NAN: not told. */
+  double molar_mass, molarity, mass_percent, density;
 } EnlOwnBase;
 
 /* An amine without cation and numbers. */

@@ -23,6 +23,10 @@ open_tables (EnlKnowledge *k, EnlError *err)
     status = enl_rule_table_new (text, size, &k->rules, err);
   }
   if (status == ENL_OK) {
+    text = enl_resource ("weigh.tsv", &size);
+    status = enl_weigh_table_new (text, size, k->bases, &k->weigh, err);
+  }
+  if (status == ENL_OK) {
     text = enl_resource ("practice.tsv", &size);
     status = enl_practice_parse (text, size, &k->practice, err);
   }
@@ -89,6 +93,7 @@ enl_knowledge_free (EnlKnowledge *k)
     return;
   }
   enl_reference_free (k->published);
+  enl_weigh_table_free (k->weigh);
   enl_base_table_free (k->bases);
   enl_rule_table_free (k->rules);
   enl_names_free (k->names);

@@ -3,6 +3,7 @@
 
 #include "core/acidity/estimator.h"
 #include "core/bases/compare.h"
+#include "core/bases/weigh.h"
 #include "core/notation/names.h"
 
 typedef struct EnlKnowledge EnlKnowledge;
@@ -12,6 +13,7 @@ struct EnlKnowledge {
   EnlEstimator *estimator;
   EnlBaseTable *bases;
   EnlRuleTable *rules;
+  EnlWeighTable *weigh;
   EnlPractice practice;
   EnlNames *names;
   /* the inside */

@@ -1,7 +1,8 @@
 /* The bases that a set brings along, and their place in its file:
  *
  *   "bases": [ { "name": "our phosphazene", "class": "phosphazene", "cation": "none",
- *                "pKaH": { "dmso": 24.1 }, "sigma": { "dmso": 0.5 }, "note": "batch 7" } ]
+ *                "pKaH": { "dmso": 24.1 }, "sigma": { "dmso": 0.5 }, "note": "batch 7",
+ *                "molar_mass": 312.44, "molarity": 1.0, "mass_percent": 60, "density": 0.9 } ]
  */
 #include <math.h>
 #include <string.h>
@@ -91,6 +92,52 @@ take_text (json_t *object, const char *member, char **place)
   }
 }
 
+/* How it is weighed out: members with numbers, each may be missing. */
+typedef struct {
+  const char *member;
+  double *place;
+} FormNumber;
+
+#define N_FORM_NUMBERS 4
+
+static void
+form_numbers (EnlOwnBase *base, FormNumber *out)
+{
+  out[0] = (FormNumber){"molar_mass", &base->molar_mass};
+  out[1] = (FormNumber){"molarity", &base->molarity};
+  out[2] = (FormNumber){"mass_percent", &base->mass_percent};
+  out[3] = (FormNumber){"density", &base->density};
+}
+
+/* Returns the member that is no number, or NULL. */
+static const char *
+read_form (json_t *object, EnlOwnBase *base)
+{
+  FormNumber form[N_FORM_NUMBERS];
+
+  form_numbers (base, form);
+  for (int i = 0; i < N_FORM_NUMBERS; i++) {
+    json_t *number = json_object_get (object, form[i].member);
+    if (number && !json_is_number (number))
+      return form[i].member;
+    if (number)
+      *form[i].place = json_number_value (number);
+  }
+  return NULL;
+}
+
+static void
+write_form (json_t *object, const EnlOwnBase *base)
+{
+  EnlOwnBase copy = *base;
+  FormNumber form[N_FORM_NUMBERS];
+
+  form_numbers (&copy, form);
+  for (int i = 0; i < N_FORM_NUMBERS; i++)
+    if (!isnan (*form[i].place))
+      json_object_set_new (object, form[i].member, json_real (*form[i].place));
+}
+
 const char *
 enl_workset_read_base (EnlWorkset *set, json_t *object, EnlError *err)
 {
@@ -103,6 +150,12 @@ enl_workset_read_base (EnlWorkset *set, json_t *object, EnlError *err)
   if (wrong) {
     enl_error_set (err, ENL_ERROR_FORMAT, "write dmso, water or thf and a number without quotes",
                    "'%.60s' of a base is no solvent with a number", wrong);
+    return wrong;
+  }
+  wrong = read_form (object, base);
+  if (wrong) {
+    enl_error_set (err, ENL_ERROR_FORMAT, "write a number without quotes",
+                   "'%.60s' of a base is no number", wrong);
     return wrong;
   }
   take_text (object, "class", &base->family);
@@ -136,6 +189,7 @@ enl_workset_write_bases (const EnlWorkset *set)
         json_pack ("{s:s, s:s, s:s, s:b, s:o, s:o}", "name", base->name, "class", base->family,
                    "cation", base->cation, "irreversible", base->irreversible, "pKaH",
                    write_numbers (base->pkah), "sigma", write_numbers (base->sigma));
+    write_form (object, base);
     if (base->note[0])
       json_object_set_new (object, "note", json_string (base->note));
     json_array_append_new (array, object);
