@@ -15,7 +15,7 @@ static const EnlVerb verb[] = {
      "fsaechtl", true, enl_verb_bases},
     {"weigh", "What to weigh or measure out of chosen bases for an amount of substrate.",
      "fsaechbMGTDl", true, enl_verb_weigh},
-    {"figure", "Writes an annotated picture.", "sveowdmal", true, enl_verb_figure},
+    {"figure", "Writes an annotated picture.", "svbaechowdml", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",
      true, enl_verb_molecule},
     {"validate", "Left-out errors of the estimator, class by class.", "fgkFPRpwdm", false,

@@ -20,7 +20,7 @@ static const Option option[] = {
     {'c', "--conc", "C", "substrate, mol/L (default 0.1)"},
     {'t', "--temperature", "T", "degrees Celsius; pK values hold at 25 and are not carried over"},
     {'h', "--water", "E", "equivalents of water per substrate (default 0)"},
-    {'v', "--view", "NAME", "substrates or forms"},
+    {'v', "--view", "NAME", "substrates, forms, bases or curve"},
     {'o', "--out", "FILE", "picture to write: ends in .png, .svg or .pdf"},
     {'w', "--width-mm", "W", "width of the picture in mm (default: natural size)"},
     {'d', "--dpi", "D", "resolution of a .png (default 150)"},

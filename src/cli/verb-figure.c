@@ -1,8 +1,12 @@
+#include <math.h>
 #include <stdio.h>
 #include <string.h>
 
 #include "cli/verbs.h"
+#include "core/bases/equilibrium.h"
+#include "draw/curve-scene.h"
 #include "draw/forms-sheet.h"
+#include "draw/matrix-scene.h"
 #include "draw/paint.h"
 #include "draw/substrates-sheet.h"
 
@@ -70,18 +74,170 @@ forms_scene (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *er
   return ENL_OK;
 }
 
+/* ---- bases ---- */
+
+/* The candidate of that name, or without one the best that has a curve. */
+static EnlStatus
+find_candidate (const Run *run, const EnlComparison *comparison, const char *name,
+                const EnlCandidate **out, EnlError *err)
+{
+  int base = name ? enl_base_table_find (run->run.knowledge->bases, name) : -1;
+
+  if (name && base < 0)
+    return enl_error_set (err, ENL_ERROR_UNKNOWN, "choose one that 'enolith-cli bases' lists",
+                          "no base '%.80s'", name);
+  *out = &comparison->candidate[0];
+  for (uint32_t i = comparison->n_candidates; i-- > 0;) {
+    const EnlCandidate *c = &comparison->candidate[i];
+    if (name ? (int)c->base == base : !isnan (c->conversion))
+      *out = c;
+  }
+  return ENL_OK;
+}
+
+static EnlStatus
+compare (const Run *run, guint index, uint32_t *site, EnlComparison **out, EnlError *err)
+{
+  const EnlAnalysis *a = g_ptr_array_index (run->analysis, index);
+  EnlStatus status = enl_cli_site (a, run->run.options->atom, site, err);
+
+  if (status != ENL_OK)
+    return status;
+  EnlQuestion q =
+      enl_analysis_question (a, run->run.knowledge, *site, &run->run.options->conditions);
+  return enl_bases_compare (&q, out, err);
+}
+
+static EnlStatus
+curve_scene (const Run *run, guint index, const char *base, const EnlTheme *theme, EnlScene **out,
+             EnlError *err)
+{
+  const EnlAnalysis *a = g_ptr_array_index (run->analysis, index);
+  const EnlConditions *conditions = &run->run.options->conditions;
+  g_autoptr (EnlComparison) comparison = NULL;
+  g_autoptr (EnlCurve) curve = NULL;
+  const EnlCandidate *c = NULL;
+  uint32_t site;
+  EnlStatus status = compare (run, index, &site, &comparison, err);
+
+  if (status == ENL_OK)
+    status = find_candidate (run, comparison, base, &c, err);
+  if (status != ENL_OK)
+    return status;
+  EnlQuestion q = enl_analysis_question (a, run->run.knowledge, site, conditions);
+  status = enl_curve_new (&q, c, ENL_SWEEP_POINTS, &curve, err);
+  if (status != ENL_OK)
+    return status;
+  const EnlCurveSheet sheet = {.curve = curve,
+                               .substrate = g_ptr_array_index (run->name, index),
+                               .base = enl_base_table_get (q.bases, c->base)->name,
+                               .conditions = conditions,
+                               .footing = enl_footing_text (conditions->solvent)};
+  *out = enl_curve_scene (&sheet, theme);
+  return ENL_OK;
+}
+
+/* All curves, a substrate after the other with each base, one below the other. */
+static EnlStatus
+curves_scene (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *err)
+{
+  char *const best[] = {NULL};
+  char *const *base = run->run.options->base ? run->run.options->base : best;
+  double y = 0.0, width = 0.0;
+
+  *out = enl_scene_new (theme);
+  for (guint i = 0; i < run->analysis->len; i++) {
+    guint k = 0;
+    do {
+      g_autoptr (EnlScene) part = NULL;
+      EnlStatus status = curve_scene (run, i, base[k], theme, &part, err);
+      if (status != ENL_OK) {
+        g_clear_pointer (out, enl_scene_free);
+        return status;
+      }
+      EnlRect frame = enl_scene_frame (part);
+      enl_scene_append (*out, part, 1.0, 0.0, y);
+      y += frame.height;
+      width = MAX (width, frame.width);
+    } while (base[k] && base[++k]);
+  }
+  enl_scene_set_size (*out, width, y);
+  return ENL_OK;
+}
+
+/* A substrate without an acidic hydrogen keeps its column, empty. */
+static EnlStatus
+bases_scene (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *err)
+{
+  guint n = run->analysis->len;
+  g_autoptr (GPtrArray) comparison =
+      g_ptr_array_new_with_free_func ((GDestroyNotify)enl_comparison_free);
+  g_autofree EnlMatrixColumn *column = g_new0 (EnlMatrixColumn, n);
+
+  for (guint i = 0; i < n; i++) {
+    const EnlAnalysis *a = g_ptr_array_index (run->analysis, i);
+    EnlComparison *found = NULL;
+    uint32_t site = ENL_NONE;
+    EnlStatus status = a->sites->n_sites ? compare (run, i, &site, &found, err) : ENL_OK;
+    if (status != ENL_OK)
+      return status;
+    g_ptr_array_add (comparison, found);
+    column[i] = (EnlMatrixColumn){.name = g_ptr_array_index (run->name, i), .mol = a->mol};
+    if (site != ENL_NONE) {
+      column[i].site = &a->sites->site[site];
+      column[i].rank = enl_analysis_rank (a, site);
+      column[i].pka = a->estimate[site].value;
+    }
+  }
+  const EnlBaseTable *bases = run->run.knowledge->bases;
+  g_autoptr (EnlMatrix) matrix =
+      enl_matrix_new (bases, (const EnlComparison *const *)comparison->pdata, n);
+  const EnlMatrixSheet sheet = {.matrix = matrix,
+                                .column = column,
+                                .bases = bases,
+                                .conditions = &run->run.options->conditions,
+                                .caption = enl_rule_table_deferral (run->run.knowledge->rules)};
+  *out = enl_matrix_scene (&sheet, theme);
+  return ENL_OK;
+}
+
+/* ---- the figure ---- */
+
+static EnlStatus
+all_substrates (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *err)
+{
+  (void)err;
+  *out = substrates_scene (run, theme);
+  return ENL_OK;
+}
+
+typedef EnlStatus (*View) (const Run *run, const EnlTheme *theme, EnlScene **out, EnlError *err);
+
+static const struct {
+  const char *name;
+  View make;
+} view[] = {{"substrates", all_substrates},
+            {"forms", forms_scene},
+            {"bases", bases_scene},
+            {"curve", curves_scene}};
+
+static View
+find_view (const char *name)
+{
+  for (size_t i = 0; name && i < ENL_COUNT (view); i++)
+    if (strcmp (view[i].name, name) == 0)
+      return view[i].make;
+  return NULL;
+}
+
 static EnlStatus
 write_figure (const Run *run, const EnlTheme *theme, EnlError *err)
 {
   const EnlOptions *o = run->run.options;
   g_autoptr (EnlScene) scene = NULL;
   EnlExport how = {o->width_mm, o->dpi, false, "Enolith"};
-  EnlStatus status = ENL_OK;
+  EnlStatus status = find_view (o->view) (run, theme, &scene, err);
 
-  if (strcmp (o->view, "forms") == 0)
-    status = forms_scene (run, theme, &scene, err);
-  else
-    scene = substrates_scene (run, theme);
   return status == ENL_OK ? enl_scene_export (scene, o->out, &how, err) : status;
 }
 
@@ -95,8 +251,8 @@ wrong_use (const char *text)
 static int
 check_options (const EnlOptions *o)
 {
-  if (!o->view || (strcmp (o->view, "substrates") != 0 && strcmp (o->view, "forms") != 0))
-    return wrong_use ("--view must be substrates or forms");
+  if (!find_view (o->view))
+    return wrong_use ("--view must be substrates, forms, bases or curve");
   if (!o->out || enl_picture_find (o->out) < 0)
     return wrong_use ("--out must name a file that ends in .png, .svg or .pdf");
   if (enl_theme_find (o->theme) < 0)

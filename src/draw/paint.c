@@ -4,9 +4,19 @@
 
 #include "draw/text.h"
 
-/* Dash lengths in line widths. */
-static const double dashed[] = {3.0, 2.2};
-static const double dotted[] = {0.01, 2.2};
+/* Dash lengths in line widths; a dash near 0 is a round dot. */
+typedef struct {
+  double length[4];
+  int n;
+} Pattern;
+
+static const Pattern pattern_of[ENL_N_DASHES] = {
+    [ENL_DASH_SOLID] = {{0}, 0},
+    [ENL_DASH_DASHED] = {{3.0, 2.2}, 2},
+    [ENL_DASH_DOTTED] = {{0.01, 2.2}, 2},
+    [ENL_DASH_LONG] = {{7.0, 2.6}, 2},
+    [ENL_DASH_DASH_DOT] = {{5.0, 2.2, 1.0, 2.2}, 4},
+};
 
 static void
 set_colour (cairo_t *cr, const EnlTheme *theme, const EnlShape *shape)
@@ -19,20 +29,16 @@ set_colour (cairo_t *cr, const EnlTheme *theme, const EnlShape *shape)
 static void
 set_dash (cairo_t *cr, const EnlShape *shape)
 {
-  double pattern[2];
+  const Pattern *pattern = &pattern_of[shape->dash];
+  bool round = shape->dash == ENL_DASH_SOLID || shape->dash == ENL_DASH_DOTTED;
+  double length[4];
 
+  for (int i = 0; i < pattern->n; i++)
+    length[i] = pattern->length[i] * shape->width;
   cairo_set_line_width (cr, shape->width);
-  cairo_set_line_cap (cr, CAIRO_LINE_CAP_ROUND);
+  cairo_set_line_cap (cr, round ? CAIRO_LINE_CAP_ROUND : CAIRO_LINE_CAP_BUTT);
   cairo_set_line_join (cr, CAIRO_LINE_JOIN_ROUND);
-  if (shape->dash == ENL_DASH_SOLID) {
-    cairo_set_dash (cr, NULL, 0, 0);
-    return;
-  }
-  for (int i = 0; i < 2; i++)
-    pattern[i] = (shape->dash == ENL_DASH_DASHED ? dashed : dotted)[i] * shape->width;
-  cairo_set_line_cap (cr,
-                      shape->dash == ENL_DASH_DASHED ? CAIRO_LINE_CAP_BUTT : CAIRO_LINE_CAP_ROUND);
-  cairo_set_dash (cr, pattern, 2, 0);
+  cairo_set_dash (cr, length, pattern->n, 0);
 }
 
 static void
@@ -60,6 +66,7 @@ trace (cairo_t *cr, const EnlShape *shape)
   cairo_new_path (cr);
   switch (shape->kind) {
   case ENL_SHAPE_LINE:
+  case ENL_SHAPE_PATH:
   case ENL_SHAPE_POLYGON:
     for (uint32_t i = 0; i < shape->n_points; i++)
       cairo_line_to (cr, p[i].x, p[i].y);

@@ -2,6 +2,7 @@
 
 #include <math.h>
 
+#include "draw/plane.h"
 #include "draw/text.h"
 
 #define MARK 3.4 /* radius of a mark, px */
@@ -40,12 +41,14 @@ enl_plot_foot (const EnlTheme *theme)
 }
 
 static void
-draw_number (EnlScene *scene, EnlPoint at, double value, double align_x, double align_y)
+draw_number (EnlScene *scene, EnlPoint at, double value, int decimals, double align_x,
+             double align_y)
 {
   double shown = fabs (value) < 1e-9 ? 0 : value;
-  g_autofree char *text =
-      g_strdup_printf ("%s%d", shown < 0 ? "\u2212" : "", (int)lround (fabs (shown)));
+  char number[G_ASCII_DTOSTR_BUF_SIZE];
 
+  g_ascii_formatd (number, sizeof number, decimals ? "%.1f" : "%.0f", fabs (shown));
+  g_autofree char *text = g_strconcat (shown < 0 ? "\u2212" : "", number, NULL);
   enl_scene_text (scene, at, text, enl_scene_theme (scene)->small_size, false, align_x, align_y,
                   ENL_TONE_MUTED);
 }
@@ -68,13 +71,14 @@ draw_ticks (EnlScene *scene, const EnlPlot *plot, const EnlPlotWords *words)
        k++) {
     EnlPoint at = enl_plot_place (plot, value, plot->y_low);
     enl_scene_line (scene, at, (EnlPoint){at.x, bottom + TICK}, LINE, ENL_TONE_MUTED);
-    draw_number (scene, (EnlPoint){at.x, bottom + TICK + 1}, value * words->factor, 0.5, 0);
+    draw_number (scene, (EnlPoint){at.x, bottom + TICK + 1},
+                 words->x_decimals ? value : value * words->factor, words->x_decimals, 0.5, 0);
   }
   for (int k = 0; (value = tick (plot, plot->y_low, words->y_step, k)) <= plot->y_high + 1e-9;
        k++) {
     EnlPoint at = enl_plot_place (plot, plot->x_low, value);
     enl_scene_line (scene, at, (EnlPoint){at.x - TICK, at.y}, LINE, ENL_TONE_MUTED);
-    draw_number (scene, (EnlPoint){at.x - TICK - 3, at.y}, value * words->factor, 1, 0.5);
+    draw_number (scene, (EnlPoint){at.x - TICK - 3, at.y}, value * words->factor, 0, 1, 0.5);
   }
 }
 
@@ -107,6 +111,48 @@ enl_plot_diagonal (EnlScene *scene, const EnlPlot *plot, double offset)
     return NULL;
   return enl_scene_line (scene, enl_plot_place (plot, from, from + offset),
                          enl_plot_place (plot, to, to + offset), LINE, ENL_TONE_MUTED);
+}
+
+/* Farther than this from the straight line a point is kept, px. */
+#define BEND 0.12
+
+/* Marks what has to stay between two kept points (Douglas & Peucker, Cartographica 1973, 10, 112).
+ */
+static void
+keep_bends (const EnlPoint *point, bool *kept, uint32_t from, uint32_t to)
+{
+  double most = BEND;
+  uint32_t at = from;
+
+  for (uint32_t i = from + 1; i < to; i++) {
+    double off = enl_segment_distance (point[from], point[to], point[i]);
+    if (off > most)
+      most = off, at = i;
+  }
+  if (at == from)
+    return;
+  kept[at] = true;
+  keep_bends (point, kept, from, at);
+  keep_bends (point, kept, at, to);
+}
+
+EnlShape *
+enl_plot_path (EnlScene *scene, const EnlPlot *plot, const double *x, const double *y, uint32_t n,
+               double width, EnlTone tone)
+{
+  g_autofree EnlPoint *point = g_new (EnlPoint, n);
+  g_autofree bool *kept = g_new0 (bool, n);
+  uint32_t count = 0;
+
+  g_assert (n >= 2);
+  for (uint32_t i = 0; i < n; i++)
+    point[i] = enl_plot_place (plot, x[i], y[i]);
+  kept[0] = kept[n - 1] = true;
+  keep_bends (point, kept, 0, n - 1);
+  for (uint32_t i = 0; i < n; i++)
+    if (kept[i])
+      point[count++] = point[i];
+  return enl_scene_path (scene, point, count, width, tone);
 }
 
 EnlShape *

@@ -26,6 +26,7 @@ typedef struct {
   const char *title, *x_title, *y_title; /* plain text; the y title stands above the axis */
   double x_step, y_step;                 /* between ticks with numbers; their roots if so */
   double factor;                         /* a number shows its value times this (100: per cent) */
+  int x_decimals; /* of the numbers on the x axis, which go without the factor if above 0 */
 } EnlPlotWords;
 
 /* Place of a pair of numbers; values outside the axes are moved to their edge. */
@@ -40,6 +41,11 @@ double enl_plot_foot (const EnlTheme *theme);
 /* The line y = x + offset inside the axes, thin; the caller sets tone and dash. NULL when it does
  * not meet them. */
 EnlShape *enl_plot_diagonal (EnlScene *scene, const EnlPlot *plot, double offset);
+
+/* A line through n pairs of numbers, points that a line through their neighbours passes left out.
+ */
+EnlShape *enl_plot_path (EnlScene *scene, const EnlPlot *plot, const double *x, const double *y,
+                         uint32_t n, double width, EnlTone tone);
 
 /* One shape for each mark. */
 EnlShape *enl_plot_mark (EnlScene *scene, EnlPoint at, const EnlPlotMark *mark);

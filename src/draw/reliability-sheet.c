@@ -139,7 +139,7 @@ draw_pka_panel (const Sheet *s, EnlSolvent solvent, double x, double y)
   EnlPlot plot = {.area = {x, y, PANEL, PANEL}};
   g_autofree char *title =
       g_strconcat ("Published and left out, ", enl_solvent_label (solvent), NULL);
-  const EnlPlotWords words = {title, "published pKa", "left-out estimate", 5, 5, 1};
+  const EnlPlotWords words = {title, "published pKa", "left-out estimate", 5, 5, 1, 0};
 
   pka_range (s, solvent, &plot.x_low, &plot.x_high);
   plot.y_low = plot.x_low, plot.y_high = plot.x_high;
@@ -212,7 +212,7 @@ draw_coverage_panel (const Sheet *s, double x, double y)
 {
   const EnlPlot plot = {{x, y, PANEL, PANEL}, 0.45, 1, 0.45, 1, false};
   const EnlPlotWords words = {
-      "Intervals that hold", "nominal, %", "published value inside, %", 0.1, 0.1, 100};
+      "Intervals that hold", "nominal, %", "published value inside, %", 0.1, 0.1, 100, 0};
 
   enl_plot_axes (s->scene, &plot, &words);
   draw_promise (s, &plot);
@@ -233,7 +233,8 @@ draw_size_panel (const Sheet *s, double x, double y)
                               "size of the error; below the line: inside",
                               1,
                               1,
-                              1};
+                              1,
+                              0};
 
   for (uint32_t i = 0; i < s->sheet->n_points; i++)
     top = fmax (top, fmax (error_of (&s->sheet->point[i]), s->sheet->point[i].half));

@@ -27,8 +27,9 @@ path_distance (const EnlShape *shape, EnlPoint p)
 {
   double best = INFINITY;
 
-  for (uint32_t i = 0, j = shape->n_points - 1; i < shape->n_points; j = i++)
-    best = fmin (best, enl_segment_distance (shape->point[j], shape->point[i], p));
+  for (uint32_t i = shape->kind == ENL_SHAPE_PATH ? 1 : 0; i < shape->n_points; i++)
+    best = fmin (best, enl_segment_distance (shape->point[i ? i - 1 : shape->n_points - 1],
+                                             shape->point[i], p));
   return best;
 }
 
@@ -52,6 +53,8 @@ shape_distance (const EnlShape *shape, EnlPoint p)
     return enl_segment_distance (shape->point[0], shape->point[1], p) - shape->width / 2;
   case ENL_SHAPE_POLYGON:
     return inside_polygon (shape, p) ? 0 : path_distance (shape, p);
+  case ENL_SHAPE_PATH:
+    return path_distance (shape, p) - shape->width / 2;
   case ENL_SHAPE_CURVE:
     return curve_distance (shape, p) - shape->width / 2;
   case ENL_SHAPE_DISC:
@@ -82,8 +85,9 @@ enl_scene_hit (const EnlScene *scene, double x, double y, double reach)
 }
 
 static const char *const kind_word[] = {
-    [ENL_SHAPE_LINE] = "line", [ENL_SHAPE_POLYGON] = "polygon", [ENL_SHAPE_CURVE] = "curve",
-    [ENL_SHAPE_DISC] = "disc", [ENL_SHAPE_RECT] = "rect",       [ENL_SHAPE_TEXT] = "text",
+    [ENL_SHAPE_LINE] = "line",   [ENL_SHAPE_PATH] = "path", [ENL_SHAPE_POLYGON] = "polygon",
+    [ENL_SHAPE_CURVE] = "curve", [ENL_SHAPE_DISC] = "disc", [ENL_SHAPE_RECT] = "rect",
+    [ENL_SHAPE_TEXT] = "text",
 };
 
 static const char *const tone_word[ENL_N_TONES] = {
@@ -128,7 +132,7 @@ append_owner (GString *out, const char *word, uint32_t owner)
 static void
 dump_shape (GString *out, const EnlShape *shape)
 {
-  static const char *const dash[] = {"", " dashed", " dotted"};
+  static const char *const dash[] = {"", " dashed", " dotted", " long", " dash-dot"};
 
   g_string_append_printf (out, "%s %s", kind_word[shape->kind], tone_word[shape->tone]);
   for (uint32_t i = 0; i < shape->n_points; i++) {

@@ -111,6 +111,16 @@ enl_scene_polygon (EnlScene *scene, const EnlPoint *point, uint32_t n, EnlTone t
 }
 
 EnlShape *
+enl_scene_path (EnlScene *scene, const EnlPoint *point, uint32_t n, double width, EnlTone tone)
+{
+  g_assert (n >= 2 && width > 0);
+  EnlShape *shape = add_shape (scene, ENL_SHAPE_PATH, point, n, tone);
+  shape->width = width;
+  shape->box = points_box (point, n, width / 2);
+  return shape;
+}
+
+EnlShape *
 enl_scene_curve (EnlScene *scene, const EnlPoint point[4], double width, EnlTone tone)
 {
   EnlShape *shape = add_shape (scene, ENL_SHAPE_CURVE, point, 4, tone);
@@ -185,7 +195,8 @@ enl_scene_bounds (const EnlScene *scene)
     if (shape->opacity <= 0)
       continue;
     bool outline = shape->width > 0 && shape->kind != ENL_SHAPE_LINE &&
-                   shape->kind != ENL_SHAPE_CURVE && shape->kind != ENL_SHAPE_TEXT;
+                   shape->kind != ENL_SHAPE_PATH && shape->kind != ENL_SHAPE_CURVE &&
+                   shape->kind != ENL_SHAPE_TEXT;
     EnlRect box = enl_rect_grow (shape->box, outline ? shape->width / 2 : 0);
     all = any ? enl_rect_union (all, box) : box;
     any = true;

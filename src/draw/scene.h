@@ -22,13 +22,21 @@ typedef struct {
 typedef enum {
   ENL_SHAPE_LINE,    /* point[0]..point[1] */
   ENL_SHAPE_POLYGON, /* filled, n points (wedges, arrow heads) */
+  ENL_SHAPE_PATH,    /* open line through n points */
   ENL_SHAPE_CURVE,   /* cubic: point[0..3] */
   ENL_SHAPE_DISC,    /* centre point[0], radius */
   ENL_SHAPE_RECT,    /* rounded by radius: point[0] corner, point[1] opposite corner */
   ENL_SHAPE_TEXT     /* markup; point[0] is the anchor, see align */
 } EnlShapeKind;
 
-typedef enum { ENL_DASH_SOLID, ENL_DASH_DASHED, ENL_DASH_DOTTED } EnlDash;
+typedef enum {
+  ENL_DASH_SOLID,
+  ENL_DASH_DASHED,
+  ENL_DASH_DOTTED,
+  ENL_DASH_LONG,
+  ENL_DASH_DASH_DOT,
+  ENL_N_DASHES
+} EnlDash;
 
 typedef struct {
   EnlShapeKind kind;
@@ -63,6 +71,8 @@ EnlRect enl_scene_frame (const EnlScene *scene); /* set size, else bounds plus m
  * opacity and ownership (not of geometry). */
 EnlShape *enl_scene_line (EnlScene *scene, EnlPoint from, EnlPoint to, double width, EnlTone tone);
 EnlShape *enl_scene_polygon (EnlScene *scene, const EnlPoint *point, uint32_t n, EnlTone tone);
+EnlShape *enl_scene_path (EnlScene *scene, const EnlPoint *point, uint32_t n, double width,
+                          EnlTone tone);
 EnlShape *enl_scene_curve (EnlScene *scene, const EnlPoint point[4], double width, EnlTone tone);
 EnlShape *enl_scene_disc (EnlScene *scene, EnlPoint centre, double radius, EnlTone tone);
 EnlShape *enl_scene_rect (EnlScene *scene, EnlRect rect, double radius, EnlTone tone);

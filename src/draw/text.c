@@ -170,20 +170,54 @@ add_word (Wrap *w, const char *word)
   }
 }
 
-char *
-enl_text_wrap (const char *family, const char *plain, double size, bool bold, double width)
+/* Lines no wider than `width`, plain. */
+static char *
+wrap_plain (const char *family, const char *plain, double size, bool bold, double width)
 {
   g_autofree char *valid = g_utf8_make_valid (plain, -1);
   g_auto (GStrv) word = g_strsplit_set (valid, " \t\n\r", -1);
   g_autoptr (GString) line = g_string_new (NULL);
-  g_autoptr (GString) out = g_string_new (NULL);
+  GString *out = g_string_new (NULL);
   Wrap wrap = {family, size, width, bold, line, out};
 
   for (char **w = word; *w; w++)
     if (**w)
       add_word (&wrap, *w);
   g_string_append (out, line->str);
-  return g_markup_escape_text (out->str, -1);
+  return g_string_free (out, FALSE);
+}
+
+char *
+enl_text_wrap (const char *family, const char *plain, double size, bool bold, double width)
+{
+  g_autofree char *wrapped = wrap_plain (family, plain, size, bold, width);
+
+  return g_markup_escape_text (wrapped, -1);
+}
+
+char *
+enl_text_wrap_short (const char *family, const char *plain, double size, bool bold, double width,
+                     uint32_t lines)
+{
+  g_autofree char *wrapped = wrap_plain (family, plain, size, bold, width);
+  g_auto (GStrv) line = g_strsplit (wrapped, "\n", -1);
+
+  g_assert (lines > 0);
+  if (g_strv_length (line) <= lines)
+    return g_markup_escape_text (wrapped, -1);
+  GString *last = g_string_new (line[lines - 1]);
+  g_string_append (last, "\u2026");
+  while (last->len > 3 && plain_width (family, last->str, size, bold) > width) {
+    const char *cut = g_utf8_prev_char (last->str + last->len - 3);
+    gsize at = (gsize)(cut - last->str);
+    g_string_erase (last, (gssize)at, (gssize)(last->len - 3 - at));
+  }
+  g_free (line[lines - 1]);
+  line[lines - 1] = g_string_free (last, FALSE);
+  for (uint32_t i = lines; line[i]; i++)
+    g_clear_pointer (&line[i], g_free);
+  g_autofree char *shortened = g_strjoinv ("\n", line);
+  return g_markup_escape_text (shortened, -1);
 }
 
 double

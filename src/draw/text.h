@@ -27,6 +27,10 @@ double enl_text_lift (PangoLayout *layout);
 char *enl_text_wrap (const char *family, const char *plain, double size, bool bold,
                      double width) ENL_MUST_USE;
 
+/* The same with at most `lines` lines; what is left out is told by an ellipsis (g_free). */
+char *enl_text_wrap_short (const char *family, const char *plain, double size, bool bold,
+                           double width, uint32_t lines) ENL_MUST_USE;
+
 /* Wrapped plain text with its left top corner at `at`; returns the y below it. */
 double enl_scene_paragraph (EnlScene *scene, EnlPoint at, double width, const char *plain,
                             double size, bool bold, EnlTone tone);

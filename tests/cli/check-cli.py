@@ -337,13 +337,23 @@ def check_usage():
 
 def check_figures():
     with tempfile.TemporaryDirectory() as folder:
-        for view in ('substrates', 'forms'):
+        for view in ('substrates', 'forms', 'bases', 'curve'):
             for ending, magic in (('png', b'\x89PNG'), ('svg', b'<?xml'), ('pdf', b'%PDF')):
                 path = os.path.join(folder, '%s.%s' % (view, ending))
                 run('figure', '--view', view, '--out', path, '--width-mm', '120', 'acetylacetone', 'camphor')
                 with open(path, 'rb') as stream:
                     data = stream.read()
                 expect('%s as %s' % (view, ending), data.startswith(magic) and len(data) > 2000, len(data))
+        path = os.path.join(folder, 'two.svg')
+        run('figure', '--view', 'curve', '--atom', '1', '--base', 'naotbu', '--base', 'K2CO3', '--water', '0.1',
+            '--out', path, 'CC(=O)c1ccccc1')
+        with open(path, 'rb') as stream:
+            both = stream.read()
+        run('figure', '--view', 'curve', '--base', 'naotbu', '--out', path, 'CC(=O)c1ccccc1')
+        with open(path, 'rb') as stream:
+            expect('a curve for every base', len(both) > 1.2 * len(stream.read()))
+        _, err = run('figure', '--view', 'curve', '--base', 'nothing', '--out', path, 'acetone', code=1)
+        expect('an unknown base is named', "no base 'nothing'" in err, err)
         run('figure', '--view', 'forms', '--out', '/no/such/folder/a.png', 'acetone', code=1)
 
 

@@ -8,6 +8,8 @@
 
 /* A form that never reaches this share has no line. */
 #define SHOWN_FROM 0.005
+/* Sites that a label names. */
+#define NAMED_SITES 4
 
 typedef struct {
   const EnlQuestion *question;
@@ -64,7 +66,10 @@ form_label (const Drafting *d, uint32_t species)
   for (uint32_t r = 1; r <= d->question->sites->n_sites; r++)
     for (uint32_t i = 0; i < d->question->sites->n_sites; i++)
       if (d->rank[i] == r && enl_site_set_has (lost, i))
-        g_string_append_printf (out, n++ ? " + %u" : ", site %u", r);
+        if (n++ < NAMED_SITES)
+          g_string_append_printf (out, n > 1 ? " + %u" : ", site %u", r);
+  if (n > NAMED_SITES)
+    g_string_append_printf (out, " and %u more", n - NAMED_SITES);
   if (n == 1 && form->lost > 1)
     g_string_append_printf (out, " (%u H)", form->lost);
   return g_string_free (out, FALSE);
