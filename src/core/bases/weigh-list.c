@@ -130,23 +130,22 @@ add_hazards (const Making *m, const EnlBase *base)
   }
 }
 
-/* The comparison holds for the equivalents of its question; the verdict for those of the line. */
+/* The comparison holds for the equivalents of its question and without water; the verdict for what
+ * the line puts together. */
 static EnlStatus
-take_verdict (const Making *m, uint32_t base, double equivalents, EnlWeighLine *line, EnlError *err)
+take_verdict (const Making *m, uint32_t base, EnlWeighLine *line, EnlError *err)
 {
   g_autoptr (EnlComparison) own = NULL;
   EnlConditions conditions = *m->question->conditions;
   EnlQuestion question = *m->question;
-  EnlStatus status = ENL_OK;
 
   question.conditions = &conditions;
-  if (conditions.equivalents != equivalents) {
-    conditions.equivalents = equivalents;
-    status = enl_bases_compare (&question, &own, err);
-  }
+  conditions.equivalents = line->weighing->equivalents + line->weighing->water_taken;
+  conditions.water = m->scale->water;
+  EnlStatus status = enl_bases_compare (&question, &own, err);
   if (status != ENL_OK)
     return status;
-  const EnlCandidate *c = candidate_of (own ? own : m->comparison, base);
+  const EnlCandidate *c = candidate_of (own, base);
   line->works = c->grade <= ENL_GRADE_CAUTION;
   line->verdict =
       line->works ? g_strdup (c->words)
@@ -170,7 +169,7 @@ make_line (const Making *m, uint32_t base, EnlWeighLine *line, EnlError *err)
     status = enl_weigh (m->table, b, &order, &line->weighing, err);
   if (status != ENL_OK)
     return status;
-  status = take_verdict (m, base, order.equivalents, line, err);
+  status = take_verdict (m, base, line, err);
   if (status != ENL_OK)
     return status;
   add_hazards (m, b);
@@ -196,29 +195,33 @@ make_lines (Making *m, const uint32_t *base, uint32_t n, EnlError *err)
 }
 
 EnlStatus
-enl_weigh_list_new (const EnlQuestion *q, const EnlWeighTable *table, const char *name,
+enl_weigh_list_new (const EnlQuestion *question, const EnlWeighTable *table, const char *name,
                     const EnlWeighScale *scale, const uint32_t *base, uint32_t n,
                     EnlWeighList **out, EnlError *err)
 {
   g_autoptr (EnlWeighList) list = g_new0 (EnlWeighList, 1);
   g_autoptr (EnlComparison) comparison = NULL;
+  EnlConditions dry = *question->conditions; /* what water takes is added by enl_weigh */
+  EnlQuestion q = *question;
 
   *out = NULL;
+  dry.water = 0.0;
+  q.conditions = &dry;
   list->hazard = g_ptr_array_new_with_free_func (g_free);
-  EnlStatus status = substrate_mass (q->mol, &list->molar_mass, err);
+  EnlStatus status = substrate_mass (q.mol, &list->molar_mass, err);
   if (status == ENL_OK)
     status = take_scale (scale, list->molar_mass, &list->mmol, err);
   if (status == ENL_OK)
-    status = check_labels (q, scale, base, n, err);
+    status = check_labels (&q, scale, base, n, err);
   if (status == ENL_OK)
-    status = enl_bases_compare (q, &comparison, err);
+    status = enl_bases_compare (&q, &comparison, err);
   if (status != ENL_OK)
     return status;
   list->substrate = g_strdup (name);
-  list->position = g_strdup (q->sites->site[q->target].position);
-  list->solvent = q->conditions->solvent;
-  list->deferral = enl_rule_table_deferral (q->rules);
-  Making m = {q, table, scale, comparison, list, n > 1};
+  list->position = g_strdup (q.sites->site[q.target].position);
+  list->solvent = q.conditions->solvent;
+  list->deferral = enl_rule_table_deferral (q.rules);
+  Making m = {&q, table, scale, comparison, list, n > 1};
   status = make_lines (&m, base, n, err);
   if (status == ENL_OK)
     *out = g_steal_pointer (&list);
