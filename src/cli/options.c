@@ -21,7 +21,7 @@ static const Option option[] = {
     {'t', "--temperature", "T", "degrees Celsius; pK values hold at 25 and are not carried over"},
     {'h', "--water", "E", "equivalents of water per substrate (default 0)"},
     {'v', "--view", "NAME", "substrates, forms, bases or curve"},
-    {'o', "--out", "FILE", "picture to write: ends in .png, .svg or .pdf"},
+    {'o', "--out", "FILE", "file to write: .png, .svg or .pdf; a report .pdf or .html"},
     {'w', "--width-mm", "W", "width of the picture in mm (default: natural size)"},
     {'d', "--dpi", "D", "resolution of a .png (default 150)"},
     {'m', "--theme", "NAME", "light, dark, print or projector (default print)"},

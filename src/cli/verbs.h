@@ -9,6 +9,7 @@ int enl_verb_sites (const EnlOptions *options);
 int enl_verb_forms (const EnlOptions *options);
 int enl_verb_bases (const EnlOptions *options);
 int enl_verb_figure (const EnlOptions *options);
+int enl_verb_report (const EnlOptions *options);
 int enl_verb_weigh (const EnlOptions *options);
 int enl_verb_validate (const EnlOptions *options);
 

@@ -208,6 +208,41 @@ encode_pdf (const Plan *plan, GByteArray *out, EnlError *err)
   return finish_vector (plan, surface, PT_PER_PX, err);
 }
 
+EnlStatus
+enl_pages_encode (GPtrArray *pages, const char *title, GByteArray **out, EnlError *err)
+{
+  g_autoptr (GByteArray) bytes = g_byte_array_new ();
+  EnlRect first = enl_scene_frame (g_ptr_array_index (pages, 0));
+  cairo_surface_t *surface = cairo_pdf_surface_create_for_stream (
+      collect, bytes, first.width * PT_PER_PX, first.height * PT_PER_PX);
+  cairo_t *cr = cairo_create (surface);
+
+  *out = NULL;
+  cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_CREATE_DATE, FIXED_DATE);
+  cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_CREATOR, "Enolith");
+  cairo_pdf_surface_set_metadata (surface, CAIRO_PDF_METADATA_TITLE, title);
+  for (guint i = 0; i < pages->len; i++) {
+    const EnlExport plain = {0};
+    const EnlScene *page = g_ptr_array_index (pages, i);
+    const Plan plan = {
+        .scene = page, .options = &plain, .frame = enl_scene_frame (page), .scale = 1};
+    cairo_save (cr);
+    cairo_scale (cr, PT_PER_PX, PT_PER_PX);
+    paint_plan (&plan, cr);
+    cairo_restore (cr);
+    cairo_show_page (cr);
+  }
+  cairo_status_t status = cairo_status (cr);
+  cairo_destroy (cr);
+  cairo_surface_finish (surface);
+  if (!status)
+    status = cairo_surface_status (surface);
+  cairo_surface_destroy (surface);
+  if (!status)
+    *out = g_steal_pointer (&bytes);
+  return cairo_failed (status, err);
+}
+
 /* cairo numbers its surfaces over the life of the process; our files do not tell. */
 static void
 svg_settle (GByteArray *svg, const char *title)
@@ -263,12 +298,25 @@ enl_scene_encode (const EnlScene *scene, EnlPicture format, const EnlExport *opt
   return status;
 }
 
+/* Consistent: a temporary file beside it, flushed, then renamed. */
+EnlStatus
+enl_file_write (const char *path, const void *data, size_t size, EnlError *err)
+{
+  g_autoptr (GError) problem = NULL;
+
+  if (!g_file_set_contents_full (path, data, (gssize)size,
+                                 G_FILE_SET_CONTENTS_CONSISTENT | G_FILE_SET_CONTENTS_DURABLE, 0666,
+                                 &problem))
+    return enl_error_set (err, ENL_ERROR_IO, "choose a folder that exists and may be written to",
+                          "'%s' cannot be written: %s", path, problem->message);
+  return ENL_OK;
+}
+
 EnlStatus
 enl_scene_export (const EnlScene *scene, const char *path, const EnlExport *options, EnlError *err)
 {
   int format = enl_picture_find (path);
   g_autoptr (GByteArray) bytes = NULL;
-  g_autoptr (GError) problem = NULL;
 
   if (format < 0)
     return enl_error_set (err, ENL_ERROR_RANGE, "end the file name in .png, .svg or .pdf",
@@ -276,11 +324,5 @@ enl_scene_export (const EnlScene *scene, const char *path, const EnlExport *opti
   EnlStatus status = enl_scene_encode (scene, (EnlPicture)format, options, &bytes, err);
   if (status)
     return status;
-  /* Consistent: a temporary file beside it, flushed, then renamed. */
-  if (!g_file_set_contents_full (path, (const char *)bytes->data, (gssize)bytes->len,
-                                 G_FILE_SET_CONTENTS_CONSISTENT | G_FILE_SET_CONTENTS_DURABLE, 0666,
-                                 &problem))
-    return enl_error_set (err, ENL_ERROR_IO, "choose a folder that exists and may be written to",
-                          "'%s' cannot be written: %s", path, problem->message);
-  return ENL_OK;
+  return enl_file_write (path, bytes->data, bytes->len, err);
 }

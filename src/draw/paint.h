@@ -31,6 +31,15 @@ EnlStatus enl_scene_encode (const EnlScene *scene, EnlPicture format, const EnlE
 EnlStatus enl_scene_export (const EnlScene *scene, const char *path, const EnlExport *options,
                             EnlError *err) ENL_MUST_USE;
 
+/* Scenes (EnlScene, at least one, equal sizes) as the pages of one PDF at their natural size; the
+ * same bytes for the same scenes. Caller: g_byte_array_unref. */
+EnlStatus enl_pages_encode (GPtrArray *pages, const char *title, GByteArray **out,
+                            EnlError *err) ENL_MUST_USE;
+
+/* Writes a whole file or nothing. ENL_ERROR_IO with advice. */
+EnlStatus enl_file_write (const char *path, const void *data, size_t size,
+                          EnlError *err) ENL_MUST_USE;
+
 /* Advance width and line height of a text in px; the same on every target. */
 void enl_text_measure (const char *family, const char *markup, double size, bool bold,
                        double *width, double *height);

@@ -147,9 +147,12 @@ take_verdict (const Making *m, uint32_t base, EnlWeighLine *line, EnlError *err)
     return status;
   const EnlCandidate *c = candidate_of (own, base);
   line->works = c->grade <= ENL_GRADE_CAUTION;
-  line->verdict =
-      line->works ? g_strdup (c->words)
-                  : g_strdup_printf ("%s: %s, %s", enl_grade_text (c->grade), c->words, c->reason);
+  if (line->works)
+    line->verdict = g_strdup (c->words);
+  else if (c->grade == ENL_GRADE_PARTIAL)
+    line->verdict = g_strdup_printf ("%s: %s", c->words, c->reason);
+  else
+    line->verdict = g_strdup_printf ("%s: %s; %s", enl_grade_text (c->grade), c->words, c->reason);
   return ENL_OK;
 }
 
