@@ -9,6 +9,7 @@
 #define STRUCTURE_HEIGHT 220.0
 #define BARS_WIDTH       300.0
 #define BARS_SIZE        12.0
+#define CURVE_WIDTH      460.0
 
 static const char style[] =
     "body{font:15px/1.45 'DejaVu Sans',sans-serif;color:#111;background:#fff;margin:2em auto;"
@@ -108,6 +109,7 @@ put_base (Page *page, uint32_t index, EnlError *err)
 {
   const EnlReportSubstrate *s = &page->report->substrate[index];
   g_autoptr (EnlScene) bars = enl_report_composition (s, page->theme, BARS_WIDTH, BARS_SIZE);
+  g_autoptr (EnlScene) curve = enl_report_curve (page->report, index, page->theme, CURVE_WIDTH);
   EnlStatus status = ENL_OK;
 
   put (page, "<div class=\"base\"><div><h3>%u&#160; %s, site %u: %s</h3>\n", index + 1, s->name,
@@ -115,6 +117,8 @@ put_base (Page *page, uint32_t index, EnlError *err)
   put (page, "<p>%s</p><p>%s</p><p>%s</p></div>\n", s->outcome, s->anion, s->equivalents);
   if (bars)
     status = put_picture (page, bars, s->composition, err);
+  if (curve && status == ENL_OK)
+    status = put_picture (page, curve, "Composition curve", err);
   put (page, "</div>\n");
   return status;
 }

@@ -2,19 +2,21 @@
 
 #include <math.h>
 
+#include "draw/curve-scene.h"
 #include "draw/flow.h"
 #include "draw/structure-scene.h"
 #include "draw/text.h"
 
-/* Type sizes tried until a short report fits its two pages, px (11.5 px are 8.6 pt). */
-static const double type_size[] = {11.5, 10.8, 10.2, 9.6, 9.2};
 #define SHORT_REPORT 4
 #define SHORT_PAGES  2
 
 #define CARD_GAP         12.0
 #define CARD_PAD         9.0
 #define STRUCTURE_HEIGHT 150.0
-#define FIGURE_SHARE     0.36 /* of the width, beside the words on a base */
+#define BARS_SHARE       0.36 /* of the width, beside the words on a base */
+#define CURVE_SHARE      0.54
+#define CURVE_WIDTH      430.0 /* as drawn, before it is made smaller */
+#define CURVE_HEIGHT     200.0
 #define HEADING          1.25 /* of the type size */
 #define SOURCE           0.88
 
@@ -23,6 +25,7 @@ typedef struct {
   const EnlTheme *theme;
   EnlFlow *flow;
   double size;
+  bool curves; /* composition as curves; else as bars, which are smaller */
 } Pages;
 
 /* ---- pictures ---- */
@@ -85,6 +88,27 @@ enl_report_composition (const EnlReportSubstrate *s, const EnlTheme *theme, doub
   for (uint32_t i = 0; i < s->curve->n_lines; i++)
     y = draw_species (scene, &s->curve->line[i], y + 0.15 * size, width, size);
   return scene;
+}
+
+EnlScene *
+enl_report_curve (const EnlReport *report, uint32_t substrate, const EnlTheme *theme, double width)
+{
+  const EnlReportSubstrate *s = &report->substrate[substrate];
+  g_autofree char *name = g_strdup_printf ("Substrate %u", substrate + 1);
+  const EnlCurveSheet sheet = {.curve = s->curve,
+                               .substrate = name,
+                               .base = s->base ? s->base->name : "",
+                               .conditions = &report->at,
+                               .width = CURVE_WIDTH,
+                               .height = CURVE_HEIGHT};
+
+  if (!s->curve || s->curve->n_lines == 0)
+    return NULL;
+  g_autoptr (EnlScene) drawn = enl_curve_scene (&sheet, theme);
+  EnlRect b = enl_scene_bounds (drawn);
+  EnlScene *out = enl_scene_new (theme);
+  enl_scene_append (out, drawn, width / b.width, -b.x * width / b.width, -b.y * width / b.width);
+  return out;
 }
 
 /* ---- cards ---- */
@@ -186,13 +210,14 @@ make_base (const Pages *p, uint32_t index)
 {
   const EnlReportSubstrate *s = &p->report->substrate[index];
   EnlScene *scene = enl_scene_new (p->theme);
-  double figure = FIGURE_SHARE * enl_flow_width ();
+  double figure = (p->curves ? CURVE_SHARE : BARS_SHARE) * enl_flow_width ();
   double width = enl_flow_width () - figure - 2 * CARD_GAP, y;
   const char *text[] = {s->outcome, s->anion, s->equivalents};
   g_autofree char *title =
       g_strdup_printf ("%u  %s, site %u: %s", index + 1, s->name,
                        enl_analysis_rank (s->analysis, s->selected), s->base_title);
-  g_autoptr (EnlScene) bars = enl_report_composition (s, p->theme, figure, p->size);
+  g_autoptr (EnlScene) bars = p->curves ? enl_report_curve (p->report, index, p->theme, figure)
+                                        : enl_report_composition (s, p->theme, figure, p->size);
 
   y = enl_scene_paragraph (scene, (EnlPoint){0, 0}, bars ? width : enl_flow_width (), title,
                            1.05 * p->size, true, ENL_TONE_INK);
@@ -276,12 +301,12 @@ add_head (const Pages *p)
 }
 
 static GPtrArray *
-compose (const EnlReport *report, const EnlTheme *theme, double size)
+compose (const EnlReport *report, const EnlTheme *theme, double size, bool curves)
 {
   g_autofree char *running = g_strdup_printf (
       "Enolith: %s. Estimates of acidity only; decide under local rules.", report->title);
   g_autoptr (EnlFlow) flow = enl_flow_new (theme, running);
-  Pages p = {report, theme, flow, size};
+  Pages p = {report, theme, flow, size, curves};
 
   add_head (&p);
   add_cards (&p);
@@ -292,16 +317,23 @@ compose (const EnlReport *report, const EnlTheme *theme, double size)
   return enl_flow_finish (flow);
 }
 
+/* Sizes in px: 11.5 px are 8.6 pt. Curves in readable type where they fit, else bars, at last in
+ * small type. */
 GPtrArray *
 enl_report_pages (const EnlReport *report, const EnlTheme *theme)
 {
-  GPtrArray *pages = compose (report, theme, type_size[0]);
+  static const struct {
+    double size;
+    bool curves;
+  } trial[] = {{11.5, true},  {10.8, true},  {10.2, true}, {11.5, false},
+               {10.8, false}, {10.2, false}, {9.6, false}, {9.2, false}};
+  GPtrArray *pages = compose (report, theme, trial[0].size, trial[0].curves);
 
-  for (size_t i = 1; report->n_substrates <= SHORT_REPORT && pages->len > SHORT_PAGES &&
-                     i < ENL_COUNT (type_size);
+  for (size_t i = 1;
+       report->n_substrates <= SHORT_REPORT && pages->len > SHORT_PAGES && i < ENL_COUNT (trial);
        i++) {
     g_ptr_array_unref (pages);
-    pages = compose (report, theme, type_size[i]);
+    pages = compose (report, theme, trial[i].size, trial[i].curves);
   }
   return pages;
 }

@@ -11,6 +11,9 @@ GPtrArray *enl_report_pages (const EnlReport *report, const EnlTheme *theme) ENL
  * origin; NULL when it could not be read. */
 EnlScene *enl_report_structure (const EnlReportSubstrate *substrate, const EnlTheme *theme,
                                 double width, double height) ENL_MUST_USE;
+/* The composition curve, `width` px wide, left top corner at the origin; NULL without one. */
+EnlScene *enl_report_curve (const EnlReport *report, uint32_t substrate, const EnlTheme *theme,
+                            double width) ENL_MUST_USE;
 /* What is in the flask at the chosen equivalents, a bar a species, `width` px wide, left top corner
  * at the origin; NULL without a composition. */
 EnlScene *enl_report_composition (const EnlReportSubstrate *substrate, const EnlTheme *theme,

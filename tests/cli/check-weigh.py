@@ -116,8 +116,54 @@ def check_own_base():
         expect('an impossible molar mass', 'molar mass' in err, err)
 
 
+def pdf_text(path):
+    return subprocess.run(['pdftotext', '-layout', path, '-'], check=True, capture_output=True, text=True).stdout
+
+
+def check_report():
+    substrates = [{'name': 'ester', 'structure': 'CC(=O)CC(=O)OCC'}, {'name': 'no hydrogen', 'structure': 'benzophenone'},
+                  {'name': 'broken', 'structure': 'CC(=O)C1CC'}, {'name': 'own', 'structure': 'acetophenone'}]
+    lab = [{'structure': 'CC(=O)c1ccccc1', 'atom': 1, 'solvent': 'dmso', 'pka': 24.4, 'sigma': 0.1}]
+    with tempfile.TemporaryDirectory() as folder:
+        path = os.path.join(folder, 'campaign.enolith')
+
+        def write(rows):
+            pathlib.Path(path).write_text(json.dumps({'format': 'enolith-set', 'version': 1, 'substrates': rows, 'lab': lab}))
+        write(substrates)
+        pdf, html = os.path.join(folder, 'a.pdf'), os.path.join(folder, 'a.html')
+        out, err = run('report', '--out', pdf, path, code=1)
+        expect('a structure that cannot be read is told, the report is written', 'broken: line 1, column' in err and
+               out == '' and os.path.exists(pdf), err)
+        info = subprocess.run(['pdfinfo', pdf], check=True, capture_output=True, text=True).stdout
+        expect('two A4 pages', 'Pages:           2' in info and '(A4)' in info and 'campaign' in info, info)
+        fonts = subprocess.run(['pdffonts', pdf], check=True, capture_output=True, text=True).stdout.splitlines()[2:]
+        expect('fonts are embedded', fonts and all(line.split()[-5] == 'yes' for line in fonts), fonts)
+        text = pdf_text(pdf)
+        expect('what a report holds', all(word in text for word in (
+            'pKa 14.2 in DMSO, measured [1]', '90 % interval', 'lab', 'No enolate', 'Cannot be read', 'Cautions', 'Sources',
+            'recommended', 'Olmstead', 'qualified person', 'page 2 of 2')), text)
+        write(substrates[:2])
+        run('report', '--out', pdf, path)
+        first = pathlib.Path(pdf).read_bytes()
+        run('report', '--out', pdf, path)
+        expect('the same bytes again', pathlib.Path(pdf).read_bytes() == first)
+        run('report', '--out', html, path)
+        page = pathlib.Path(html).read_text()
+        expect('one HTML file with pictures inside', page.startswith('<!DOCTYPE html>') and page.count('<svg') >= 4 and
+               'http://' not in page.replace('http://www.w3.org/', '') and 'pKa 14.2 in DMSO, measured' in page, len(page))
+        run('report', '--out', pdf, '--solvent', 'water', 'acetone', 'acetophenone')
+        expect('structures without a set', 'pKa 19.3 in water, measured' in pdf_text(pdf), pdf_text(pdf)[:400])
+        for bad in (['--out', os.path.join(folder, 'a.png')], [], ['--out', pdf, path]):
+            run('report', *bad, path, code=2)
+        run('report', '--out', '/no/such/folder/a.pdf', path, code=1)
+        pathlib.Path(path).write_text('{"format": "enolith-set", "version"')
+        _, err = run('report', '--out', pdf, path, code=1)
+        expect('a damaged set has its place', 'line 1, column' in err, err)
+        run('report', '--out', pdf, os.path.join(folder, 'missing.enolith'), code=1)
+
+
 def main():
-    for check in (check_weigh, check_weigh_words, check_weigh_usage, check_own_base):
+    for check in (check_report, check_weigh, check_weigh_words, check_weigh_usage, check_own_base):
         check()
     print('%d checks, %d failed' % (count, len(failures)))
     print('\n'.join(failures))

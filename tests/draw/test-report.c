@@ -42,7 +42,7 @@ static const struct {
      "{\"name\":\"e\",\"structure\":\"2-indanone\"},{\"name\":\"f\",\"structure\":"
      "\"nitromethane\"}",
      5,
-     {"6  f", "page 1 of", "Sources", "Cautions", "in water, measured"}},
+     {"6 f", "page 1 of", "Sources", "Cautions", "in water, measured"}},
 };
 
 static EnlReport *
@@ -105,8 +105,8 @@ START_TEST (pages_are_whole)
                  pages->len);
   check_pages (pages, set_case[_i].label);
   for (int k = 0; k < 5; k++)
-    ck_assert_msg (strstr (text, set_case[_i].holds[k]) != NULL, "%s: no '%s' in %s",
-                   set_case[_i].label, set_case[_i].holds[k], text);
+    ck_assert_msg (strstr (text, set_case[_i].holds[k]) != NULL, "%s: no '%s'", set_case[_i].label,
+                   set_case[_i].holds[k]);
 }
 END_TEST
 
