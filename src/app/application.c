@@ -117,6 +117,8 @@ add_accelerators (GtkApplication *app)
       {"win.open", {"<Control>o", NULL}},
       {"win.detail::forms", {"<Control>r", NULL}},
       {"win.detail::why", {"<Control>e", NULL}},
+      {"win.detail::curve", {"<Control>k", NULL}},
+      {"win.matrix", {"<Control>b", NULL}},
       {"win.save", {"<Control>s", NULL}},
       {"win.save-as", {"<Control><Shift>s", NULL}},
       {"win.projector", {"F5", NULL}},

@@ -167,7 +167,8 @@ change_look (GSimpleAction *action, GVariant *value, gpointer data)
     enl_look_set (self->look, (EnlThemeName)theme);
 }
 
-/* What stands beside the bases: the anion's forms, or why the value is what it is. */
+/* What stands beside the bases: the anion's forms, why the value is what it is, or the composition
+ * curve. */
 static void
 change_detail (GSimpleAction *action, GVariant *value, gpointer data)
 {
@@ -214,6 +215,30 @@ change_lab (GSimpleAction *action, GVariant *value, gpointer data)
   g_simple_action_set_state (action, value);
 }
 
+/* The matrix of bases in the place of the columns. */
+static void
+change_matrix (GSimpleAction *action, GVariant *value, gpointer data)
+{
+  EnlWindow *self = data;
+  gboolean shown = g_variant_get_boolean (value);
+
+  /* A stack hands the keyboard to what it shows, and a column with the keyboard is selected. */
+  gtk_window_set_focus (GTK_WINDOW (self), NULL);
+  gtk_stack_set_visible_child_name (self->upper, shown ? "matrix" : "columns");
+  g_simple_action_set_state (action, value);
+  if (shown)
+    gtk_widget_grab_focus (GTK_WIDGET (self->matrix));
+  else
+    enl_window_focus_picture (self);
+}
+
+void
+enl_window_show_columns (EnlWindow *self)
+{
+  g_action_group_change_action_state (G_ACTION_GROUP (self), "matrix",
+                                      g_variant_new_boolean (FALSE));
+}
+
 static const GActionEntry entry[] = {
     {"add", act_add, NULL, NULL, NULL, {0}},
     {"new", act_new, NULL, NULL, NULL, {0}},
@@ -232,6 +257,7 @@ static const GActionEntry entry[] = {
     {"solvent", NULL, "s", "'dmso'", change_solvent, {0}},
     {"look", NULL, "s", "'light'", change_look, {0}},
     {"detail", NULL, "s", "'forms'", change_detail, {0}},
+    {"matrix", NULL, NULL, "false", change_matrix, {0}},
     {"lab-values", NULL, NULL, "false", change_lab, {0}},
     {"state", NULL, NULL, "''", NULL, {0}},
 };

@@ -2,7 +2,9 @@
 #pragma once
 
 #include "app/bases-panel.h"
+#include "app/curve-panel.h"
 #include "app/forms-panel.h"
+#include "app/matrix-view.h"
 #include "app/why-panel.h"
 #include "app/lab-panel.h"
 #include "app/window.h"
@@ -23,7 +25,10 @@ struct _EnlWindow {
   EnlFormsPanel *forms;
   EnlBasesPanel *bases;
   EnlWhyPanel *why;
-  GtkStack *details; /* pages "forms" and "why" */
+  EnlCurvePanel *curve;
+  EnlMatrixView *matrix;
+  GtkStack *upper;   /* pages "columns" and "matrix" */
+  GtkStack *details; /* pages "forms", "why" and "curve" */
   EnlLabPanel *lab;
   GtkPaned *panes, *lower;
 };
@@ -36,6 +41,9 @@ void enl_window_add_actions (EnlWindow *window);
 void enl_window_add_bindings (GtkWidgetClass *klass);
 /* Brings enabled flags and states in line with the session. */
 void enl_window_sync_actions (EnlWindow *window);
+
+/* Puts the columns back in the place of the matrix. */
+void enl_window_show_columns (EnlWindow *window);
 
 /* window-files.c */
 void enl_window_choose_open (EnlWindow *window);

@@ -109,6 +109,8 @@ enl_window_state (EnlWindow *self)
   json_object_set_new (root, "detail",
                        json_string (gtk_stack_get_visible_child_name (self->details)));
   json_object_set_new (root, "why", why_state (self));
+  json_object_set_new (root, "curve", json_string (enl_curve_panel_words (self->curve)));
+  json_object_set_new (root, "matrix", json_string (enl_matrix_view_words (self->matrix)));
   json_object_set_new (root, "busy", json_boolean (enl_session_busy (self->session)));
   json_object_set_new (root, "unsaved", json_boolean (enl_session_unsaved (self->session)));
   char *text = json_dumps (root, JSON_COMPACT);

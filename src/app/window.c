@@ -218,6 +218,8 @@ enl_window_class_init (EnlWindowClass *klass)
   g_type_ensure (ENL_TYPE_FORMS_PANEL);
   g_type_ensure (ENL_TYPE_BASES_PANEL);
   g_type_ensure (ENL_TYPE_WHY_PANEL);
+  g_type_ensure (ENL_TYPE_CURVE_PANEL);
+  g_type_ensure (ENL_TYPE_MATRIX_VIEW);
   g_type_ensure (ENL_TYPE_LAB_PANEL);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/window.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, title);
@@ -230,6 +232,9 @@ enl_window_class_init (EnlWindowClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, forms);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, bases);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, why);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, curve);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, matrix);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, upper);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, details);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, lab);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, panes);
@@ -269,6 +274,14 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
   enl_forms_panel_follow (self->forms, self->session, self->look);
   enl_bases_panel_follow (self->bases, self->session, self->look);
   enl_why_panel_follow (self->why, self->session, self->look);
+  enl_curve_panel_follow (self->curve, self->session, self->look);
+  enl_matrix_view_follow (self->matrix, self->session, self->look);
+  g_signal_connect_object (self->curve, "changed", G_CALLBACK (enl_window_sync_actions), self,
+                           G_CONNECT_SWAPPED);
+  g_signal_connect_object (self->matrix, "changed", G_CALLBACK (enl_window_sync_actions), self,
+                           G_CONNECT_SWAPPED);
+  g_signal_connect_object (self->matrix, "done", G_CALLBACK (enl_window_show_columns), self,
+                           G_CONNECT_SWAPPED);
   g_signal_connect_object (self->why, "changed", G_CALLBACK (enl_window_sync_actions), self,
                            G_CONNECT_SWAPPED);
   enl_lab_panel_follow (self->lab, self->session);

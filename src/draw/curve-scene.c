@@ -11,7 +11,7 @@
 #define AREA_HEIGHT 17.0
 /* Narrowest area, text sizes. */
 #define LEAST_WIDTH  13.0
-#define LEAST_HEIGHT 6.0
+#define LEAST_HEIGHT 4.5
 /* Of the width of the picture, for the labels at most. */
 #define LABEL_SHARE 0.45
 /* Line widths in bond widths. */
@@ -48,7 +48,9 @@ typedef struct {
   const EnlTheme *theme;
   EnlScene *scene;
   EnlPlot plot;
-  double small, text; /* heights of a line */
+  double small;  /* height of a line */
+  double margin; /* around everything */
+  bool bare;     /* there is no room for a head */
   double label_width;
   char **label; /* markup, one a line of the curve */
 } Sheet;
@@ -73,9 +75,19 @@ label_height (const Sheet *s, uint32_t line)
 
 /* ---- labels ---- */
 
+static char *
+label_heading (const Sheet *s)
+{
+  return g_strdup_printf ("at %.4g equiv.:", s->curve->chosen);
+}
+
 static void
 make_labels (Sheet *s, double most)
 {
+  g_autofree char *heading = label_heading (s);
+  double high;
+
+  enl_text_measure (s->theme->family, heading, s->theme->small_size, true, &s->label_width, &high);
   s->label = g_new0 (char *, s->curve->n_lines + 1);
   for (uint32_t i = 0; i < s->curve->n_lines; i++) {
     const EnlCurveLine *line = &s->curve->line[i];
@@ -242,9 +254,11 @@ conditions_of (const Sheet *s)
 static double
 draw_head (const Sheet *s, double width)
 {
-  double m = s->theme->margin, y = m;
+  double m = s->margin, y = m;
   g_autofree char *title = title_of (s->sheet), *conditions = conditions_of (s);
 
+  if (s->bare)
+    return y;
   y = enl_scene_paragraph (s->scene, (EnlPoint){m, y}, width - 2 * m, title, s->theme->text_size,
                            true, ENL_TONE_INK);
   if (!s->curve->missing)
@@ -256,7 +270,7 @@ draw_head (const Sheet *s, double width)
 static double
 draw_foot (const Sheet *s, double y, double width)
 {
-  double m = s->theme->margin;
+  double m = s->margin;
 
   if (!s->sheet->footing)
     return y;
@@ -275,7 +289,7 @@ draw_plot (const Sheet *s)
                               .y_step = 0.25,
                               .factor = 100,
                               .x_decimals = 1};
-  g_autofree char *at = g_strdup_printf ("at %.4g equiv.:", s->curve->chosen);
+  g_autofree char *at = label_heading (s);
 
   enl_plot_axes (s->scene, &s->plot, &words);
   enl_scene_text (s->scene, (EnlPoint){a->x, a->y - 0.9 * s->small}, "share of the substrate, %",
@@ -314,7 +328,7 @@ numbers_width (const Sheet *s)
 static double
 lay_out (Sheet *s, double width)
 {
-  double m = s->theme->margin, size = s->theme->text_size, labels = 0;
+  double m = s->margin, size = s->theme->text_size, labels = 0;
   double right = LEADER * size + s->label_width + m, left = m + numbers_width (s);
   double top = draw_head (s, width) + 2.2 * s->small;
   double below = enl_plot_foot (s->theme) + foot_height (s, width) + m;
@@ -333,7 +347,7 @@ lay_out (Sheet *s, double width)
 static double
 natural_width (const Sheet *s)
 {
-  double fixed = 2 * s->theme->margin + numbers_width (s) + LEADER * s->theme->text_size;
+  double fixed = 2 * s->margin + numbers_width (s) + LEADER * s->theme->text_size;
   double wanted = s->sheet->width > 0 ? s->sheet->width
                                       : fixed + AREA_WIDTH * s->theme->text_size + s->label_width;
 
@@ -343,7 +357,7 @@ natural_width (const Sheet *s)
 static double
 draw_missing (Sheet *s, double width)
 {
-  double m = s->theme->margin;
+  double m = s->margin;
   g_autofree char *words = g_strdup_printf ("No composition curve: %s.", s->curve->missing);
   double y = draw_head (s, width) + 0.5 * s->small;
 
@@ -352,19 +366,31 @@ draw_missing (Sheet *s, double width)
   return draw_foot (s, y, width) + m;
 }
 
-EnlScene *
-enl_curve_scene (const EnlCurveSheet *sheet, const EnlTheme *theme)
+static EnlScene *
+make_scene (const EnlCurveSheet *sheet, bool bare, const EnlTheme *theme)
 {
-  Sheet s = {.sheet = sheet, .curve = sheet->curve, .theme = theme};
+  Sheet s = {.sheet = sheet, .curve = sheet->curve, .theme = theme, .bare = bare};
   double most = sheet->width > 0 ? LABEL_SHARE * sheet->width : AREA_WIDTH * theme->text_size;
 
   s.scene = enl_scene_new (theme);
+  s.margin = bare ? theme->margin / 3 : theme->margin;
   s.small = enl_text_line_height (theme->family, theme->small_size);
-  s.text = enl_text_line_height (theme->family, theme->text_size);
-  make_labels (&s, fmax (most - LEADER * theme->text_size - theme->margin, 8 * theme->small_size));
+  make_labels (&s, fmax (most - LEADER * theme->text_size - s.margin, 8 * theme->small_size));
   double width = natural_width (&s);
   double height = sheet->curve->missing ? draw_missing (&s, width) : lay_out (&s, width);
   enl_scene_set_size (s.scene, width, fmax (height, sheet->height));
   g_strfreev (s.label);
   return s.scene;
+}
+
+EnlScene *
+enl_curve_scene (const EnlCurveSheet *sheet, const EnlTheme *theme)
+{
+  EnlScene *scene = make_scene (sheet, false, theme);
+
+  if (sheet->height <= 0 || sheet->curve->missing ||
+      enl_scene_frame (scene).height <= sheet->height + 1)
+    return scene;
+  enl_scene_free (scene);
+  return make_scene (sheet, true, theme);
 }

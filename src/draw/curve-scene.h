@@ -11,7 +11,8 @@ typedef struct {
   const char *base;      /* name, plain text */
   const EnlConditions *conditions;
   const char *footing;  /* what the numbers stand for; NULL: not told */
-  double width, height; /* wanted, px; 0: natural. The scene is larger where its texts need room */
+  double width, height; /* wanted, px; 0: natural. Where this is too low the head is left out, and
+                           the scene is larger where its texts need room even so */
 } EnlCurveSheet;
 
 /* Every line has a tone, a pattern and a mark of its own and its label at its end; shapes of a line

@@ -248,6 +248,45 @@ def check_why(folder):
     wait('the first substrate is selected again', lambda s: s['substrate'] == 0)
 
 
+def check_curve(folder):
+    """The composition curve of the chosen base: in words, and moved from the keyboard."""
+    activate('step', '[<int32 -9>]')
+    activate('detail', "[<'curve'>]")
+    now = wait('the curve stands beside the bases', lambda s: s['detail'] == 'curve' and 'equivalents of' in s['curve'])
+    expect('it names the anion and its share', 'At 1.05 equivalents' in now['curve'] and 'anion, site 1' in now['curve'])
+    plain = Picture(folder, 'curve', lambda p: p.colours() > 200)
+    expect('there is a picture of the curve', plain.good)
+    call(WINDOW, 'SetState', 'solvent', "<'water'>", '{}')
+    wait('the curve follows the solvent', lambda s: s['curve'] != now['curve'] and s['solvent'] == 'water')
+    call(WINDOW, 'SetState', 'solvent', "<'dmso'>", '{}')
+    wait('and back', lambda s: s['curve'] == now['curve'])
+    key('ctrl+r')
+    wait('the forms come back', lambda s: s['detail'] == 'forms')
+
+
+def check_matrix(folder):
+    """The matrix in the place of the columns: moved by arrow keys, left by Escape."""
+    activate('step', '[<int32 -9>]')
+    wait('the first substrate is selected', lambda s: s['substrate'] == 0)
+    key('ctrl+b')
+    now = wait('Ctrl+B shows the matrix', lambda s: ': complete' in s['matrix'])
+    wide = Picture(folder, 'matrix', lambda p: p.colours() > 200)
+    expect('there is a picture of the matrix', wide.good)
+    key('Right')
+    moved = wait('Right selects the next substrate', lambda s: s['substrate'] == 1 and s['matrix'] and
+                 s['matrix'] != now['matrix'] and 'comparing' not in s['matrix'])
+    key('Down')
+    down = wait('Down selects the next base', lambda s: s['matrix'] != moved['matrix'] and s['base'] != moved['base'])
+    for look in ('dark', 'projector', 'light'):
+        activate('look', "[<'%s'>]" % look)
+        Picture(folder, 'matrix-' + look)
+    wait('the looks leave the cell as it is', lambda s: s['matrix'] == down['matrix'])
+    key('Escape')
+    wait('Escape goes back to the columns', lambda s: s['matrix'] == '' and s['substrate'] == 1)
+    activate('step', '[<int32 -9>]')
+    wait('the first substrate is selected again', lambda s: s['substrate'] == 0)
+
+
 def check_history():
     last = 'O=C(c1ccccc1)c1ccccc1'
     activate('undo')

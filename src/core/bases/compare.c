@@ -240,8 +240,10 @@ by_merit (const void *left, const void *right, void *data)
 
 /* ---- the comparison ---- */
 
+/* The candidates are the bases of the table from `first` on. */
 static EnlStatus
-fill (const EnlQuestion *q, const EnlIons *ions, EnlComparison *comparison, EnlError *err)
+fill (const EnlQuestion *q, const EnlIons *ions, uint32_t first, EnlComparison *comparison,
+      EnlError *err)
 {
   Comparing c = {.judge = enl_judge_begin (q, ions)};
   EnlStatus status = ENL_OK;
@@ -250,14 +252,14 @@ fill (const EnlQuestion *q, const EnlIons *ions, EnlComparison *comparison, EnlE
   c.value = g_new0 (EnlFactValue, enl_fact_count ());
   enl_fact_view_find (&c.view, ENL_FACT_OF_QUESTION, c.value);
   for (uint32_t i = 0; status == ENL_OK && i < comparison->n_candidates; i++)
-    status = fill_candidate (&c, i, &comparison->candidate[i], err);
+    status = fill_candidate (&c, first + i, &comparison->candidate[i], err);
   g_free (c.value);
   enl_fact_view_clear (&c.view);
   return status;
 }
 
-EnlStatus
-enl_bases_compare (const EnlQuestion *q, EnlComparison **out, EnlError *err)
+static EnlStatus
+compare (const EnlQuestion *q, uint32_t first, uint32_t n, EnlComparison **out, EnlError *err)
 {
   g_autoptr (EnlComparison) comparison = NULL;
   g_autoptr (EnlIons) ions = NULL;
@@ -270,15 +272,28 @@ enl_bases_compare (const EnlQuestion *q, EnlComparison **out, EnlError *err)
   if (status != ENL_OK)
     return status;
   comparison = g_new0 (EnlComparison, 1);
-  comparison->n_candidates = enl_base_table_size (q->bases);
+  comparison->n_candidates = n;
   comparison->candidate = g_new0 (EnlCandidate, comparison->n_candidates);
-  status = fill (q, ions, comparison, err);
+  status = fill (q, ions, first, comparison, err);
   if (status != ENL_OK)
     return status;
   g_qsort_with_data (comparison->candidate, (int)comparison->n_candidates, sizeof (EnlCandidate),
                      by_merit, (void *)q->bases);
   *out = g_steal_pointer (&comparison);
   return ENL_OK;
+}
+
+EnlStatus
+enl_bases_compare (const EnlQuestion *q, EnlComparison **out, EnlError *err)
+{
+  return compare (q, 0, enl_base_table_size (q->bases), out, err);
+}
+
+EnlStatus
+enl_bases_compare_one (const EnlQuestion *q, uint32_t base, EnlComparison **out, EnlError *err)
+{
+  g_assert (base < enl_base_table_size (q->bases));
+  return compare (q, base, 1, out, err);
 }
 
 void

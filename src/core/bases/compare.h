@@ -69,6 +69,9 @@ typedef struct {
 /* Compares every base. Caller: enl_comparison_free. */
 EnlStatus enl_bases_compare (const EnlQuestion *question, EnlComparison **out,
                              EnlError *err) ENL_MUST_USE;
+/* One base alone: one candidate, the same as among all. */
+EnlStatus enl_bases_compare_one (const EnlQuestion *question, uint32_t base, EnlComparison **out,
+                                 EnlError *err) ENL_MUST_USE;
 void enl_comparison_free (EnlComparison *comparison);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlComparison, enl_comparison_free)
 
