@@ -19,9 +19,9 @@ struct _EnlBasesPanel {
   EnlComparison *comparison; /* owned: what the list shows, in its order; NULL: nothing */
 
   GtkWidget *box, *conditions, *details_scroller, *remove_base, *form;
-  GtkMenuButton *add_base;
+  GtkMenuButton *add_base, *moisture;
   GtkLabel *heading, *details, *deferral;
-  GtkSpinButton *equivalents, *concentration, *temperature;
+  GtkSpinButton *equivalents, *concentration, *temperature, *water;
   GtkColumnView *view;
 };
 
@@ -245,6 +245,16 @@ show_number (GtkSpinButton *button, double value)
 }
 
 static void
+show_water (EnlBasesPanel *self, double water)
+{
+  g_autofree char *label = water > 0 ? g_strdup_printf ("H₂O %.3g", water) : g_strdup ("H₂O");
+
+  show_number (self->water, water);
+  if (g_strcmp0 (gtk_menu_button_get_label (self->moisture), label) != 0)
+    gtk_menu_button_set_label (self->moisture, label);
+}
+
+static void
 refresh (EnlBasesPanel *self)
 {
   const EnlWorkset *set = enl_session_set (self->session);
@@ -255,6 +265,7 @@ refresh (EnlBasesPanel *self)
   show_number (self->equivalents, conditions->equivalents);
   show_number (self->concentration, conditions->concentration);
   show_number (self->temperature, conditions->temperature);
+  show_water (self, conditions->water);
   if (site == ENL_NONE) {
     forget (self);
     g_list_store_remove_all (self->items);
@@ -324,6 +335,7 @@ on_conditions (GtkSpinButton *button, EnlBasesPanel *self)
   c.equivalents = gtk_spin_button_get_value (self->equivalents);
   c.concentration = gtk_spin_button_get_value (self->concentration);
   c.temperature = gtk_spin_button_get_value (self->temperature);
+  c.water = gtk_spin_button_get_value (self->water);
   enl_session_set_conditions (self->session, &c, NULL);
 }
 
@@ -401,6 +413,8 @@ enl_bases_panel_class_init (EnlBasesPanelClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, equivalents);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, concentration);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, temperature);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, moisture);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, water);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, add_base);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, remove_base);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, view);

@@ -1,23 +1,29 @@
 /* Times core over a list of SMILES and prints microseconds of CPU per operation.
  *
- * Usage: bench-core read|forms|analysis|bases FILE. The comparison with RDKit in the same run is in
- * bench-core.py; nothing here judges. */
+ * Usage: bench-core read|forms|analysis|bases|curve FILE. The comparison with RDKit in the same run
+ * is in bench-core.py; nothing here judges. */
+#include <math.h>
 #include <stdio.h>
 #include <string.h>
 #include <time.h>
 
 #include <gsl/gsl_errno.h>
 
+#include "core/bases/curve.h"
+#include "core/bases/equilibrium.h"
 #include "core/notation/smiles.h"
 #include "core/workset/analysis.h"
 #include "resources/model.h"
 
 /* Every operation is repeated over the list until this much CPU time has gone. */
 #define AT_LEAST_SECONDS 1.0
+/* What is promised for the operations on bases holds for so many sites. */
+#define MANY_SITES 8
 
 typedef struct {
-  GPtrArray *text; /* char * */
-  GPtrArray *mol;  /* EnlMolecule */
+  GPtrArray *text;                  /* char * */
+  GPtrArray *mol;                   /* EnlMolecule */
+  GPtrArray *analysis, *comparison; /* EnlAnalysis, EnlComparison: for operations on bases */
   EnlKnowledge *knowledge;
 } Bench;
 
@@ -70,6 +76,110 @@ op_analysis (const Bench *bench, guint index)
   enl_analysis_free (a);
 }
 
+/* Site, with its estimates ready, that a comparison asks about: filled before the clock starts. */
+static EnlAnalysis *
+analysis_at (const Bench *bench, guint index)
+{
+  return g_ptr_array_index (bench->analysis, index);
+}
+
+/* The base with the number nearest above the site: its curve bends most. */
+static const EnlCandidate *
+hardest (const EnlComparison *comparison)
+{
+  const EnlCandidate *best = &comparison->candidate[0];
+
+  for (uint32_t i = 0; i < comparison->n_candidates; i++) {
+    const EnlCandidate *c = &comparison->candidate[i];
+    if (!isnan (c->conversion) && !isnan (c->gap) &&
+        (isnan (best->conversion) || isnan (best->gap) || fabs (c->gap) < fabs (best->gap)))
+      best = c;
+  }
+  return best;
+}
+
+static EnlConditions
+usual_conditions (void)
+{
+  EnlConditions conditions = enl_conditions_default ();
+
+  conditions.water = 0.05;
+  return conditions;
+}
+
+/* Every base of the table, then the curve of one. */
+static void
+op_bases (const Bench *bench, guint index)
+{
+  const EnlAnalysis *a = analysis_at (bench, index);
+  const EnlConditions conditions = usual_conditions ();
+  EnlQuestion q =
+      enl_analysis_question (a, bench->knowledge, enl_analysis_site (a, ENL_NONE), &conditions);
+  EnlComparison *comparison;
+  EnlCurve *curve;
+
+  if (enl_bases_compare (&q, &comparison, NULL) != ENL_OK ||
+      enl_curve_new (&q, hardest (comparison), ENL_SWEEP_POINTS, &curve, NULL) != ENL_OK)
+    g_error ("no comparison for entry %u", index);
+  enl_curve_free (curve);
+  enl_comparison_free (comparison);
+}
+
+/* The curve alone, its base judged before. */
+static void
+op_curve (const Bench *bench, guint index)
+{
+  const EnlAnalysis *a = analysis_at (bench, index);
+  const EnlConditions conditions = usual_conditions ();
+  EnlQuestion q =
+      enl_analysis_question (a, bench->knowledge, enl_analysis_site (a, ENL_NONE), &conditions);
+  EnlCurve *curve;
+
+  if (enl_curve_new (&q, hardest (g_ptr_array_index (bench->comparison, index)), ENL_SWEEP_POINTS,
+                     &curve, NULL) != ENL_OK)
+    g_error ("no curve for entry %u", index);
+  enl_curve_free (curve);
+}
+
+/* What the operations on bases start from. */
+static void
+analyse_list (Bench *bench)
+{
+  for (guint i = 0; i < bench->mol->len; i++) {
+    const EnlConditions conditions = usual_conditions ();
+    EnlAnalysis *a;
+    EnlComparison *comparison;
+    if (enl_analysis_new (bench->knowledge, g_ptr_array_index (bench->mol, i), ENL_SOLVENT_DMSO,
+                          false, &a, NULL) != ENL_OK ||
+        a->sites->n_sites < MANY_SITES)
+      g_error ("fewer than %d sites in entry %u", MANY_SITES, i);
+    EnlQuestion q =
+        enl_analysis_question (a, bench->knowledge, enl_analysis_site (a, ENL_NONE), &conditions);
+    if (enl_bases_compare (&q, &comparison, NULL) != ENL_OK)
+      g_error ("no comparison for entry %u", i);
+    g_ptr_array_add (bench->analysis, a);
+    g_ptr_array_add (bench->comparison, comparison);
+  }
+}
+
+static Operation
+operation_of (const char *word)
+{
+  static const struct {
+    const char *word;
+    Operation run;
+  } known[] = {{"read", op_read},
+               {"forms", op_forms},
+               {"analysis", op_analysis},
+               {"bases", op_bases},
+               {"curve", op_curve}};
+
+  for (size_t i = 0; i < ENL_COUNT (known); i++)
+    if (strcmp (known[i].word, word) == 0)
+      return known[i].run;
+  g_error ("no operation %s", word);
+}
+
 static void
 read_list (Bench *bench, const char *path)
 {
@@ -108,24 +218,29 @@ int
 main (int argc, char **argv)
 {
   Bench bench = {g_ptr_array_new_with_free_func (g_free),
-                 g_ptr_array_new_with_free_func ((GDestroyNotify)enl_molecule_free), NULL};
+                 g_ptr_array_new_with_free_func ((GDestroyNotify)enl_molecule_free),
+                 g_ptr_array_new_with_free_func ((GDestroyNotify)enl_analysis_free),
+                 g_ptr_array_new_with_free_func ((GDestroyNotify)enl_comparison_free), NULL};
   size_t size;
   const char *model = enl_model ("model.bin", &size);
 
   if (argc != 3)
     g_error ("usage: bench-core OPERATION FILE");
   gsl_set_error_handler_off ();
-  Operation run = strcmp (argv[1], "read") == 0    ? op_read
-                  : strcmp (argv[1], "forms") == 0 ? op_forms
-                                                   : op_analysis;
+  Operation run = operation_of (argv[1]);
+  bool knows = run != op_read && run != op_forms;
   double start = cpu_seconds ();
-  if (run == op_analysis && enl_knowledge_open (model, size, &bench.knowledge, NULL) != ENL_OK)
+  if (knows && enl_knowledge_open (model, size, &bench.knowledge, NULL) != ENL_OK)
     g_error ("the tables cannot be opened");
   double opening = cpu_seconds () - start;
   read_list (&bench, argv[2]);
+  if (run == op_bases || run == op_curve)
+    analyse_list (&bench);
   printf ("%.3f %.3f\n", microseconds_each (&bench, run), 1e3 * opening);
   g_ptr_array_unref (bench.text);
   g_ptr_array_unref (bench.mol);
+  g_ptr_array_unref (bench.comparison);
+  g_ptr_array_unref (bench.analysis);
   enl_knowledge_free (bench.knowledge);
   return 0;
 }
