@@ -18,7 +18,7 @@
 #include "fit/fifths.h"
 #include "fit/tune.h"
 
-#define USUAL_STEPS 120
+#define USUAL_STEPS 240
 
 static int
 fail (const char *what, const EnlError *err)

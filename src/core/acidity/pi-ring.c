@@ -89,3 +89,16 @@ enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t at
   }
   return sum;
 }
+
+bool
+enl_pi_in_five_ring (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom)
+{
+  for (uint32_t r = 0; r < enl_molecule_rings (mol); r++) {
+    uint32_t size;
+    const uint32_t *ring = enl_molecule_ring (mol, r, &size);
+    for (uint32_t k = 0; size == 5 && k < size; k++)
+      if (ring[k] == atom && own_overlap (basis, mol, ring, size) != ENL_NONE)
+        return true;
+  }
+  return false;
+}

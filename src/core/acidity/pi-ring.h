@@ -11,3 +11,5 @@
  * Heilbronner, Tetrahedron Lett. 1964, 5, 1923. */
 double enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom,
                            bool odd);
+/* `atom` is a member of a ring of five that conjugates all round. */
+bool enl_pi_in_five_ring (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom);

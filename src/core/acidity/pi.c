@@ -308,6 +308,7 @@ enl_pi_deprotonate (const EnlPi *pi, uint32_t atom, EnlPiChange *out)
                         enl_pi_ring_energy (&pi->basis, pi->mol, atom, false);
   out->odd_ring_gain = enl_pi_ring_energy (&basis, pi->mol, atom, true) -
                        enl_pi_ring_energy (&pi->basis, pi->mol, atom, true);
+  out->five_ring = enl_pi_in_five_ring (&basis, pi->mol, atom);
   out->participation = participation_of (out->shift, n);
   enl_pi_basis_clear (&basis);
 }

@@ -22,6 +22,7 @@ typedef struct {
   double *shift;      /* electrons gained on deprotonation: adds up to 1 */
   double even_ring_gain, odd_ring_gain; /* what cyclic conjugation of the rings at the site gains,
                                            by their number of members: pi-ring.h */
+  bool five_ring;         /* the site is in a ring of five that conjugates all round in the anion */
   double participation;   /* number of atoms over which `shift` spreads: (sum s)^2 / sum s^2 over
                              the atoms that gain, 1 for a localised anion */
   double highest, lowest; /* energies of the highest occupied and lowest empty orbital of the
