@@ -32,7 +32,8 @@ fill_gain (EnlSiteView *view)
   SET (gain_squared, gain * gain);
   SET (gain_alkyl, gain * enl_view_next (view, ENL_KIND_alkyl));
   SET (gain_fluorine, gain * enl_view_next (view, ENL_KIND_fluorine));
-  SET (gain_ring5, gain * view->change->five_ring);
+  SET (gain_ring5, gain * enl_molecule_in_ring_of (view->mol, view->site, 5));
+  SET (gain_five_ring, gain * view->change->five_ring);
   SET (gain_onium, gain * onium);
 }
 

@@ -10,7 +10,8 @@ field_of (EnlSigma sigma)
   return 1.297 * sigma.meta - 0.385 * sigma.para + 0.033;
 }
 
-/* Sums over the groups attached to `atom`, those towards `back` left out. */
+/* Sums over the groups attached to `atom`, those towards `back` left out. The members of an
+ * aromatic ring are no groups on each other: what they pass on is in the Hammett sums. */
 static double
 field_around (EnlSiteView *view, uint32_t atom, uint32_t back)
 {
@@ -18,7 +19,8 @@ field_around (EnlSiteView *view, uint32_t atom, uint32_t back)
 
   for (uint32_t k = 0; k < enl_molecule_degree (view->mol, atom); k++) {
     uint32_t x = enl_molecule_neighbour (view->mol, atom, k);
-    if (x != back && !enl_atom_is_hydrogen (view->mol, x))
+    const EnlBond *bond = enl_molecule_bond (view->mol, enl_molecule_bond_at (view->mol, atom, k));
+    if (x != back && !bond->aromatic && !enl_atom_is_hydrogen (view->mol, x))
       sum += field_of (enl_survey_sigma (view->survey, atom, x));
   }
   return sum;

@@ -161,6 +161,7 @@
   X (acceptor5)                                                                                    \
   X (acceptor6)                                                                                    \
   /* aromaticity, planarity and strain of the anion */                                             \
+  X (gain_five_ring)                                                                               \
   X (ring_gain_even)                                                                               \
   X (ring_gain_odd)                                                                                \
   X (strain13)                                                                                     \

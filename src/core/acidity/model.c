@@ -8,9 +8,12 @@
 
 /* Nine tenths: the interval that the program shows. */
 #define COVERED 0.9
-/* The hyperparameters were tuned on all rows, so left-out errors are a little too small. Tuning on
- * four fifths of the compounds (enolith-fit fifths) shows by how much intervals fall short. */
+/* The hyperparameters were tuned on all rows, so left-out errors are a little too small: tuning on
+ * four fifths of the compounds (enolith-fit fifths) shows that intervals which hold nine tenths of
+ * the left-out rows hold 83 to 88 % of those the tuning has not seen. They are widened, but not
+ * beyond what holds 19 of 20 left-out rows. */
 #define TUNING_OPTIMISM 1.10
+#define COVERED_AT_MOST 0.95
 /* Classes with fewer rows than this share the width of their solvent. */
 #define OWN_WIDTH_FROM 20
 
@@ -171,7 +174,8 @@ enl_model_width_of (const double *error, const double *sd, const bool *use, cons
   qsort (ratio, m, sizeof *ratio, compare_doubles);
   /* The next member of the class falls below the k-th of m with probability k / (m + 1). */
   uint32_t k = (uint32_t)ceil (COVERED * (m + 1));
-  return TUNING_OPTIMISM * ratio[MIN (k, m) - 1];
+  double usual = ratio[MIN (k, m) - 1], most = ratio[(uint32_t)floor (COVERED_AT_MOST * m) - 1];
+  return MIN (TUNING_OPTIMISM * usual, MAX (usual, most));
 }
 
 static void
