@@ -18,7 +18,7 @@
 #include "fit/fifths.h"
 #include "fit/tune.h"
 
-#define USUAL_STEPS 160
+#define USUAL_STEPS 140
 
 static int
 fail (const char *what, const EnlError *err)

@@ -9,9 +9,10 @@
 #define STUDENT_FREEDOM 4.0
 #define PULL            0.002 /* on the plain hyperparameters */
 #define RELEVANCE_PULL  0.001 /* on the relevance of each descriptor */
-/* The program is about the hydrogens next to C=O; they are a quarter of the table. */
-#define ALPHA_WEIGHT    2.0
-#define HOPELESS        1e6   /* loss where there is no factor */
+/* The program is about the hydrogens next to C=O, a quarter of the table. At 2 their left-out error
+ * fell further, but not that of compounds the tuning had not seen. */
+#define ALPHA_WEIGHT 1.25
+#define HOPELESS     1e6 /* loss where there is no factor */
 
 struct EnlTuner {
   EnlSiteSet *rows; /* standardised */
