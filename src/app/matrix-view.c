@@ -21,7 +21,7 @@ struct _EnlMatrixView {
   GskRenderNode *node;   /* the painted scene, NULL: paint anew */
   uint32_t row, column;  /* the present cell */
   char *words;
-  uint32_t site;  /* selected one when the work began */
+  gboolean usual; /* the selected site was the usual one of its substrate when the work began */
   guint pending;  /* timeout that begins the work, 0: none */
   guint working;  /* idle source that compares the next substrate, 0: none */
   gboolean stale; /* hidden when something changed */
@@ -171,6 +171,15 @@ analysis_of (EnlMatrixView *self, uint32_t substrate)
   return a && a->solvent == self->conditions.solvent ? a : NULL;
 }
 
+/* The selected substrate stands with the same site as when it is not selected. */
+static gboolean
+has_usual_site (EnlMatrixView *self, uint32_t selected)
+{
+  const EnlAnalysis *a = selected == ENL_NONE ? NULL : analysis_of (self, selected);
+
+  return !a || site_of (self, selected, a) == enl_analysis_site (a, ENL_NONE);
+}
+
 static void
 make_picture (EnlMatrixView *self)
 {
@@ -249,7 +258,7 @@ begin (EnlMatrixView *self)
     return;
   }
   self->conditions = *enl_workset_conditions (set);
-  self->site = enl_session_site (self->session);
+  self->usual = has_usual_site (self, selected);
   self->n = MIN (size, MOST_COLUMNS);
   self->first = selected == ENL_NONE || selected < MOST_COLUMNS / 2
                     ? 0
@@ -286,11 +295,9 @@ on_selection_changed (EnlSession *session, EnlMatrixView *self)
   if (self->stale)
     return;
   uint32_t selected = enl_workset_selection (enl_session_set (self->session))->substrate;
-  uint32_t site = enl_session_site (self->session);
   gboolean shown = self->matrix && selected != ENL_NONE && selected >= self->first &&
                    selected < self->first + self->n;
-  const EnlAnalysis *a = shown ? analysis_of (self, selected) : NULL;
-  if (a && site == enl_analysis_site (a, ENL_NONE) && self->site == site)
+  if (shown && self->usual && has_usual_site (self, selected))
     take_selection (self);
   else
     queue_begin (self);
