@@ -6,6 +6,7 @@
 
 #include "core/acidity/footing.h"
 #include "core/acidity/part.h"
+#include "core/acidity/permittivity.h"
 #include "core/acidity/predict.h"
 
 /* Half width of the 90 % interval of a normal law in standard deviations. */
@@ -86,6 +87,7 @@ typedef struct {
   const EnlMolecule *mol;
   const EnlSites *sites;
   EnlSolvent solvent; /* whose scale is used: DMSO for THF */
+  bool paired;        /* anions hold on to their cations: THF */
   EnlEstimate *out;
 } Run;
 
@@ -267,6 +269,25 @@ enl_estimator_first_anion (const EnlMolecule *mol, const EnlSites *sites,
   return first ? conjugate_base (mol, enl_estimator_atom (mol, first)) : NULL;
 }
 
+/* What the charge of the first anion costs the second hydrogen. The model learned it from anions in
+ * water, for want of others; free ions in DMSO feel it more, by the ratio of the permittivities
+ * (Coulomb's law). In THF a cation stays with every charge and makes up for much of it, as lithium
+ * dienolates show: nothing is added there. */
+static void
+add_charge_cost (const Run *run, const EnlSite *site, EnlEstimate *e)
+{
+  uint32_t atom = enl_estimator_atom (run->mol, site);
+  double more = enl_permittivity (ENL_SOLVENT_WATER) / enl_permittivity (run->solvent) - 1;
+  EnlPrediction neutral;
+
+  if (run->paired || more <= 0)
+    return;
+  enl_predictor_run (run->estimator->predictor, run->mol, &atom, 1, run->solvent, &neutral);
+  double cost = more * MAX (e->value - neutral.value, 0);
+  e->value = MIN (e->value + cost, MOST_PKA);
+  widen (e, cost);
+}
+
 static void
 fill_seconds (const Run *run)
 {
@@ -289,6 +310,8 @@ fill_seconds (const Run *run)
       take_row (run, published, e);
     if (e->basis != ENL_BASIS_ESTIMATED)
       continue;
+    if (base)
+      add_charge_cost (run, site, e);
     e->value = MAX (e->value, floor); /* a second loss is never easier than the first */
     e->outside = true;
     e->remark = base ? remark_second : remark_second_neutral;
@@ -312,12 +335,19 @@ move_to_thf (const EnlMolecule *mol, const EnlSites *sites, EnlEstimate *out)
   }
 }
 
-/* The scale of DMSO or water, one fragment. */
+/* One fragment, THF on the scale of DMSO. */
 static void
 run_fragment (const EnlEstimator *estimator, const EnlMolecule *mol, const EnlSites *sites,
               EnlSolvent solvent, EnlEstimate *out)
 {
-  Run run = {.estimator = estimator, .mol = mol, .sites = sites, .solvent = solvent, .out = out};
+  Run run = {
+      .estimator = estimator,
+      .mol = mol,
+      .sites = sites,
+      .solvent = solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
+      .paired = solvent == ENL_SOLVENT_THF,
+      .out = out,
+  };
   bool seconds = false;
 
   for (uint32_t i = 0; i < sites->n_sites; i++)
@@ -358,8 +388,7 @@ enl_estimator_run (const EnlEstimator *estimator, const EnlMolecule *mol, const 
   if (enl_molecule_heavy_atoms (mol) > ENL_MAX_HEAVY)
     return enl_error_set (err, ENL_ERROR_LIMIT, "give a smaller structure",
                           "more than %d heavy atoms", ENL_MAX_HEAVY);
-  run_fragments (estimator, mol, sites, solvent == ENL_SOLVENT_THF ? ENL_SOLVENT_DMSO : solvent,
-                 out);
+  run_fragments (estimator, mol, sites, solvent, out);
   if (solvent == ENL_SOLVENT_THF)
     move_to_thf (mol, sites, out);
   return ENL_OK;

@@ -287,6 +287,8 @@ strangeness (const Batch *batch, const EnlMolecule *mol, uint32_t atom, EnlSolve
     const EnlAtom *a = enl_molecule_atom (mol, i);
     if (a->unpaired)
       return "outside its experience: no radical was measured";
+    if (a->element == 6 && a->charge > 0 && !a->aromatic)
+      return "outside its experience: no carbocation was measured";
     if (!predictor->seen[a->element])
       return "outside its experience: no acid with this element was measured";
   }

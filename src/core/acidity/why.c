@@ -100,6 +100,18 @@ add_chain (const Question *q, GArray *lines)
   return inner;
 }
 
+/* Largest value among the sites that can go first, so that a second one can only be held at it. */
+static double
+first_value (const Question *q)
+{
+  double value = -HUGE_VAL;
+
+  for (uint32_t i = 0; i < q->sites->n_sites; i++)
+    if (!q->sites->site[i].second && q->estimate[i].value <= q->estimate[q->site].value)
+      value = MAX (value, q->estimate[i].value);
+  return value;
+}
+
 static const char *
 closing_words (const Question *q)
 {
@@ -115,6 +127,8 @@ closing_words (const Question *q)
                                                              : "measured in DMSO minus model";
   if (enl_estimator_is_held (e))
     return "held at the end of the scale";
+  if (e->value > first_value (q))
+    return "free ions in DMSO feel the first charge more than in water";
   return "held at the hydrogen that goes first";
 }
 
