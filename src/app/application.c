@@ -119,6 +119,7 @@ add_accelerators (GtkApplication *app)
       {"win.detail::why", {"<Control>e", NULL}},
       {"win.detail::curve", {"<Control>k", NULL}},
       {"win.matrix", {"<Control>b", NULL}},
+      {"win.detail::weigh", {"<Control>g", NULL}},
       {"win.save", {"<Control>s", NULL}},
       {"win.save-as", {"<Control><Shift>s", NULL}},
       {"win.projector", {"F5", NULL}},

@@ -178,6 +178,8 @@ change_detail (GSimpleAction *action, GVariant *value, gpointer data)
   (void)action;
   if (gtk_stack_get_child_by_name (self->details, page))
     gtk_stack_set_visible_child_name (self->details, page);
+  if (strcmp (page, "weigh") == 0)
+    enl_weigh_panel_focus (self->weigh);
   enl_window_sync_actions (self);
 }
 
@@ -239,6 +241,44 @@ enl_window_show_columns (EnlWindow *self)
                                       g_variant_new_boolean (FALSE));
 }
 
+static void
+act_weigh_copy (GSimpleAction *action, GVariant *parameter, gpointer data)
+{
+  (void)action;
+  (void)parameter;
+  enl_window_copy_list (data);
+}
+
+static void
+act_weigh_save (GSimpleAction *action, GVariant *parameter, gpointer data)
+{
+  (void)action;
+  (void)parameter;
+  enl_window_choose_list (data);
+}
+
+static void
+act_weigh_path (GSimpleAction *action, GVariant *parameter, gpointer data)
+{
+  (void)action;
+  enl_window_save_list (data, g_variant_get_string (parameter, NULL));
+}
+
+static void
+act_report (GSimpleAction *action, GVariant *parameter, gpointer data)
+{
+  (void)action;
+  (void)parameter;
+  enl_window_choose_report (data);
+}
+
+static void
+act_report_path (GSimpleAction *action, GVariant *parameter, gpointer data)
+{
+  (void)action;
+  enl_window_save_report (data, g_variant_get_string (parameter, NULL));
+}
+
 static const GActionEntry entry[] = {
     {"add", act_add, NULL, NULL, NULL, {0}},
     {"new", act_new, NULL, NULL, NULL, {0}},
@@ -259,6 +299,11 @@ static const GActionEntry entry[] = {
     {"detail", NULL, "s", "'forms'", change_detail, {0}},
     {"matrix", NULL, NULL, "false", change_matrix, {0}},
     {"lab-values", NULL, NULL, "false", change_lab, {0}},
+    {"weigh-copy", act_weigh_copy, NULL, NULL, NULL, {0}},
+    {"weigh-save", act_weigh_save, NULL, NULL, NULL, {0}},
+    {"weigh-path", act_weigh_path, "s", NULL, NULL, {0}},
+    {"report", act_report, NULL, NULL, NULL, {0}},
+    {"report-path", act_report_path, "s", NULL, NULL, {0}},
     {"state", NULL, NULL, "''", NULL, {0}},
 };
 

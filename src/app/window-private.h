@@ -7,6 +7,7 @@
 #include "app/matrix-view.h"
 #include "app/why-panel.h"
 #include "app/lab-panel.h"
+#include "app/weigh-panel.h"
 #include "app/window.h"
 
 struct _EnlWindow {
@@ -30,6 +31,7 @@ struct _EnlWindow {
   GtkStack *upper;   /* pages "columns" and "matrix" */
   GtkStack *details; /* pages "forms", "why" and "curve" */
   EnlLabPanel *lab;
+  EnlWeighPanel *weigh;
   GtkPaned *panes, *lower;
 };
 
@@ -50,6 +52,14 @@ void enl_window_choose_open (EnlWindow *window);
 void enl_window_choose_save (EnlWindow *window, gboolean then_close);
 /* Asks once about unsaved changes; closes when they are settled. */
 void enl_window_ask_close (EnlWindow *window);
+
+/* window-print.c */
+void enl_window_copy_list (EnlWindow *window);
+void enl_window_save_list (EnlWindow *window, const char *path);
+void enl_window_choose_list (EnlWindow *window);
+/* In a worker; says where it was written, or why not. PDF or, by its ending, HTML. */
+void enl_window_save_report (EnlWindow *window, const char *path);
+void enl_window_choose_report (EnlWindow *window);
 
 /* window-state.c: the "state" action, a JSON text that tests read. */
 char *enl_window_state (EnlWindow *window);

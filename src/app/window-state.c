@@ -83,6 +83,22 @@ why_state (EnlWindow *self)
                     result->why->width, "precedents", precedents);
 }
 
+/* The weigh-out on show. */
+static json_t *
+weigh_state (EnlWindow *self)
+{
+  const char *fault;
+  const EnlWeighList *list = enl_weigh_panel_list (self->weigh, &fault);
+
+  if (!list)
+    return json_pack ("{s:s}", "fault", fault);
+  const EnlWeighPart *part = &list->line[0].weighing->part[0];
+  g_autofree char *amount = enl_weigh_amount_text (part);
+  return json_pack ("{s:s, s:s, s:f, s:s, s:f}", "fault", "", "base",
+                    list->line[0].weighing->base->id, "mmol", list->mmol, "amount", amount, "equiv",
+                    list->line[0].weighing->equivalents);
+}
+
 char *
 enl_window_state (EnlWindow *self)
 {
@@ -111,6 +127,7 @@ enl_window_state (EnlWindow *self)
   json_object_set_new (root, "why", why_state (self));
   json_object_set_new (root, "curve", json_string (enl_curve_panel_words (self->curve)));
   json_object_set_new (root, "matrix", json_string (enl_matrix_view_words (self->matrix)));
+  json_object_set_new (root, "weigh", weigh_state (self));
   json_object_set_new (root, "busy", json_boolean (enl_session_busy (self->session)));
   json_object_set_new (root, "unsaved", json_boolean (enl_session_unsaved (self->session)));
   char *text = json_dumps (root, JSON_COMPACT);

@@ -220,6 +220,7 @@ enl_window_class_init (EnlWindowClass *klass)
   g_type_ensure (ENL_TYPE_WHY_PANEL);
   g_type_ensure (ENL_TYPE_CURVE_PANEL);
   g_type_ensure (ENL_TYPE_MATRIX_VIEW);
+  g_type_ensure (ENL_TYPE_WEIGH_PANEL);
   g_type_ensure (ENL_TYPE_LAB_PANEL);
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/window.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, title);
@@ -235,6 +236,7 @@ enl_window_class_init (EnlWindowClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, curve);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, matrix);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, upper);
+  gtk_widget_class_bind_template_child (widget_class, EnlWindow, weigh);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, details);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, lab);
   gtk_widget_class_bind_template_child (widget_class, EnlWindow, panes);
@@ -285,6 +287,9 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
   g_signal_connect_object (self->why, "changed", G_CALLBACK (enl_window_sync_actions), self,
                            G_CONNECT_SWAPPED);
   enl_lab_panel_follow (self->lab, self->session);
+  enl_weigh_panel_follow (self->weigh, self->session);
+  g_signal_connect_object (self->weigh, "changed", G_CALLBACK (enl_window_sync_actions), self,
+                           G_CONNECT_SWAPPED);
   refresh_title (self);
   enl_window_sync_actions (self);
   return self;

@@ -34,9 +34,10 @@ typedef struct {
   const char *deferral; /* owned by the rule table */
 } EnlWeighList;
 
-/* `base` has `n` indices in question->bases; the water is that of the scale, not of the question.
- * ENL_ERROR_RANGE for impossible amounts, ENL_ERROR_UNKNOWN for a base that cannot be weighed or a
- * titre that fits none, and errors of the comparison. Caller: enl_weigh_list_free. */
+/* `base` has `n` indices in question->bases, whose rows the list borrows; the water is that of the
+ * scale, not of the question. ENL_ERROR_RANGE for impossible amounts, ENL_ERROR_UNKNOWN for a base
+ * that cannot be weighed or a titre that fits none, and errors of the comparison. Caller:
+ * enl_weigh_list_free. */
 EnlStatus enl_weigh_list_new (const EnlQuestion *question, const EnlWeighTable *table,
                               const char *name, const EnlWeighScale *scale, const uint32_t *base,
                               uint32_t n, EnlWeighList **out, EnlError *err) ENL_MUST_USE;
