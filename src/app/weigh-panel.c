@@ -180,8 +180,7 @@ show_list (EnlWeighPanel *self)
   g_autofree char *markup = self->list ? result_markup (self->list) : g_strdup ("");
   g_autofree char *cautions = self->list ? cautions_text (self->list) : g_strdup ("");
   g_autofree char *heading =
-      self->list ? g_strdup_printf ("Weigh out: %s, for %s",
-                                    self->list->line[0].weighing->base->name, self->list->substrate)
+      self->list ? g_strdup_printf ("Weigh out: %s", self->list->line[0].weighing->base->name)
                  : g_strdup ("Weigh out");
 
   gtk_label_set_text (self->heading, heading);

@@ -287,6 +287,43 @@ def check_matrix(folder):
     wait('the first substrate is selected again', lambda s: s['substrate'] == 0)
 
 
+def check_weigh(folder):
+    """NaOEt as sold, 21 % of 68.05 g/mol at 0.868 g/mL: 5.25 mmol are 1.70 g or 1.96 mL, by hand."""
+    key('ctrl+g')
+    now = wait('Ctrl+G weighs the selected base', lambda s: s['detail'] == 'weigh' and s['weigh'].get('base') == 'naoet')
+    amount = now['weigh']['amount'].replace('\u00a0', ' ')
+    expect('5.00 mmol and 1.05 equivalents: 1.96 mL', amount == '1.96 mL (1.70 g)' and now['weigh']['equiv'] == 1.05)
+    key('ctrl+a')
+    run('xdotool', 'type', '--delay', '15', '12,5x')
+    now = wait('a fault is told in place', lambda s: "'12.5x' is no number" in s['weigh']['fault'])
+    Picture(folder, 'weigh-fault')
+    key('BackSpace')
+    wait('the amounts follow what is typed', lambda s: s['weigh'].get('mmol') == 12.5)
+    key('ctrl+a')
+    run('xdotool', 'type', '--delay', '15', '5')
+    key('Tab', 'Tab', 'Tab')
+    run('xdotool', 'type', '--delay', '15', '2.5')
+    wait('by a titre of 2.5 mol/L: 2.10 mL', lambda s: s['weigh'].get('amount', '').replace('\u00a0', ' ') == '2.10 mL')
+    Picture(folder, 'weigh')
+    with tempfile.TemporaryDirectory() as place:
+        for name, action in (('list.pdf', 'weigh-path'), ('report.pdf', 'report-path'), ('report.html', 'report-path')):
+            path = os.path.join(place, name)
+            activate(action, "[<'%s'>]" % path)
+            end = time.monotonic() + PATIENCE
+            while not os.path.exists(path) and time.monotonic() < end:
+                time.sleep(0.05)
+            expect('%s is written' % name, os.path.getsize(path) > 5000)
+        text = run('pdftotext', '-layout', os.path.join(place, 'list.pdf'), '-').replace('\u00a0', ' ')
+        expect('the list to print', '2.10 mL' in text and 'Cautions' in text and 'qualified person' in text)
+        text = run('pdftotext', '-layout', os.path.join(place, 'report.pdf'), '-')
+        expect('the report', 'pKa 14.2 in DMSO, measured' in text and 'page 2 of 2' in text)
+    for look in ('dark', 'projector', 'light'):
+        activate('look', "[<'%s'>]" % look)
+        Picture(folder, 'weigh-' + look)
+    key('ctrl+r')
+    wait('Ctrl+R goes back to the forms', lambda s: s['detail'] == 'forms')
+
+
 def check_history():
     last = 'O=C(c1ccccc1)c1ccccc1'
     activate('undo')
@@ -348,6 +385,7 @@ def drive(folder):
     time.sleep(0.4)
     check_first_start(folder)
     check_why(folder)
+    check_weigh(folder)
     check_lab(folder)
     check_typing(folder)
     check_history()
