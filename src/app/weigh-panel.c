@@ -11,8 +11,9 @@ struct _EnlWeighPanel {
   char *base;          /* owned; id of the base that titre and content were typed for */
   guint pending;       /* timeout that weighs anew, 0: none */
   gboolean filling;
+  gboolean large; /* the projector: no small type, nothing to type into */
 
-  GtkWidget *box, *output;
+  GtkWidget *box, *fields, *output;
   GtkLabel *heading, *result, *cautions, *problem;
   GtkEntry *amount, *equivalents, *titre, *content, *water;
   GtkDropDown *unit;
@@ -134,20 +135,21 @@ weigh (EnlWeighPanel *self, EnlError *err)
 /* ---- showing ---- */
 
 static void
-append_part (GString *out, const EnlWeighPart *part)
+append_part (GString *out, const EnlWeighPart *part, const char *lesser)
 {
   g_autofree char *amount = enl_weigh_amount_text (part);
   g_autofree char *form = enl_weigh_form_text (part);
   g_autofree char *line = g_markup_printf_escaped (
-      "<span size='large' weight='bold'>%s</span>  %s\n<small>%s%s%s</small>\n", amount, part->name,
-      form, form[0] && part->note[0] ? "; " : "", part->note);
+      "<span size='large' weight='bold'>%s</span>  %s\n<span size='%s'>%s%s%s</span>\n", amount,
+      part->name, lesser, form, form[0] && part->note[0] ? "; " : "", part->note);
 
   g_string_append (out, line);
 }
 
 static char *
-result_markup (const EnlWeighList *list)
+result_markup (const EnlWeighList *list, gboolean large)
 {
+  const char *lesser = large ? "medium" : "small";
   const EnlWeighLine *line = &list->line[0];
   GString *out = g_string_new (NULL);
   g_autofree char *head = enl_weigh_line_text (line);
@@ -155,10 +157,10 @@ result_markup (const EnlWeighList *list)
   g_autofree char *mass = enl_weigh_mass_text (list->mmol * list->molar_mass);
 
   for (uint32_t i = 0; i < line->weighing->n_parts; i++)
-    append_part (out, &line->weighing->part[i]);
-  g_autofree char *rest =
-      g_markup_printf_escaped ("for %s\u00A0mmol of substrate (%s): %s\n<small>%s\n%s</small>",
-                               mmol, mass, head, line->reason, line->verdict);
+    append_part (out, &line->weighing->part[i], lesser);
+  g_autofree char *rest = g_markup_printf_escaped (
+      "for %s\u00A0mmol of substrate (%s): %s\n<span size='%s'>%s\n%s</span>", mmol, mass, head,
+      lesser, line->reason, line->verdict);
   g_string_append (out, rest);
   return g_string_free (out, FALSE);
 }
@@ -177,7 +179,7 @@ cautions_text (const EnlWeighList *list)
 static void
 show_list (EnlWeighPanel *self)
 {
-  g_autofree char *markup = self->list ? result_markup (self->list) : g_strdup ("");
+  g_autofree char *markup = self->list ? result_markup (self->list, self->large) : g_strdup ("");
   g_autofree char *cautions = self->list ? cautions_text (self->list) : g_strdup ("");
   g_autofree char *heading =
       self->list ? g_strdup_printf ("Weigh out: %s", self->list->line[0].weighing->base->name)
@@ -265,6 +267,17 @@ on_conditions (EnlSession *session, EnlWeighPanel *self)
   queue_refresh (self);
 }
 
+/* On the projector the amounts are what the audience reads. */
+static void
+on_look_changed (EnlLook *look, EnlWeighPanel *self)
+{
+  self->large = enl_look_get (look) == ENL_THEME_PROJECTOR;
+  if (self->large && (gtk_widget_get_state_flags (self->fields) & GTK_STATE_FLAG_FOCUS_WITHIN))
+    gtk_window_set_focus (GTK_WINDOW (gtk_widget_get_root (GTK_WIDGET (self))), NULL);
+  gtk_widget_set_visible (self->fields, !self->large);
+  show_list (self);
+}
+
 /* ---- object ---- */
 
 static void
@@ -303,6 +316,7 @@ enl_weigh_panel_class_init (EnlWeighPanelClass *klass)
   gtk_widget_class_set_template_from_resource (widget_class, "/org/enolith/Enolith/weigh-panel.ui");
   gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, box);
   gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, output);
+  gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, fields);
   gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, heading);
   gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, result);
   gtk_widget_class_bind_template_child (widget_class, EnlWeighPanel, cautions);
@@ -326,7 +340,7 @@ enl_weigh_panel_init (EnlWeighPanel *self)
 }
 
 void
-enl_weigh_panel_follow (EnlWeighPanel *self, EnlSession *session)
+enl_weigh_panel_follow (EnlWeighPanel *self, EnlSession *session, EnlLook *look)
 {
   g_assert (!self->session);
   self->session = g_object_ref (session);
@@ -335,6 +349,7 @@ enl_weigh_panel_follow (EnlWeighPanel *self, EnlSession *session)
   g_signal_connect_object (session, "substrate-changed", G_CALLBACK (queue_refresh), self,
                            G_CONNECT_SWAPPED);
   g_signal_connect_object (session, "conditions-changed", G_CALLBACK (on_conditions), self, 0);
+  g_signal_connect_object (look, "changed", G_CALLBACK (on_look_changed), self, 0);
 }
 
 void

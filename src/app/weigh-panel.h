@@ -9,7 +9,7 @@
 G_DECLARE_FINAL_TYPE (EnlWeighPanel, enl_weigh_panel, ENL, WEIGH_PANEL, GtkWidget)
 
 /* Emits "changed" when the list is another. */
-void enl_weigh_panel_follow (EnlWeighPanel *panel, EnlSession *session);
+void enl_weigh_panel_follow (EnlWeighPanel *panel, EnlSession *session, EnlLook *look);
 /* Keyboard into the amount. */
 void enl_weigh_panel_focus (EnlWeighPanel *panel);
 /* The list on show; NULL when there is none, then `fault` says why. Both borrowed until the next

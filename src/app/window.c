@@ -287,7 +287,7 @@ enl_window_new (GtkApplication *application, const EnlKnowledge *knowledge)
   g_signal_connect_object (self->why, "changed", G_CALLBACK (enl_window_sync_actions), self,
                            G_CONNECT_SWAPPED);
   enl_lab_panel_follow (self->lab, self->session);
-  enl_weigh_panel_follow (self->weigh, self->session);
+  enl_weigh_panel_follow (self->weigh, self->session, self->look);
   g_signal_connect_object (self->weigh, "changed", G_CALLBACK (enl_window_sync_actions), self,
                            G_CONNECT_SWAPPED);
   refresh_title (self);
