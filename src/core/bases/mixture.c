@@ -12,6 +12,20 @@ enl_mixture_water_pka (const EnlBaseTable *bases, EnlSolvent solvent)
   return enl_base_table_get (bases, (uint32_t)index)->pkah[ENL_SOLVENT_DMSO];
 }
 
+/* pK of the ions of water where it is the solvent and so lends and takes protons itself; NAN
+ * elsewhere, and for an alkoxide, which stands for its own alcohol there (stronger than the ions of
+ * water allow). */
+static double
+ions_of_water (const EnlBaseTable *bases, EnlSolvent solvent, double pkah)
+{
+  int index = enl_base_table_find (bases, "naoh");
+
+  if (index < 0 || solvent != ENL_SOLVENT_WATER)
+    return NAN;
+  double own = enl_base_table_get (bases, (uint32_t)index)->pkah[ENL_SOLVENT_WATER];
+  return pkah > own ? NAN : own;
+}
+
 /* The further protons count only where the first one has the strength of the table: levelled to the
  * solvent's anion there is one step. */
 static EnlAcceptor
@@ -53,13 +67,15 @@ enl_mixture_init (EnlMixture *m, const EnlQuestion *q, const EnlIons *ions, cons
   const EnlConditions *c = q->conditions;
   double amount = c->concentration * c->equivalents, water = c->concentration * c->water;
   double water_pka = enl_mixture_water_pka (q->bases, c->solvent);
+  double own_ions = ions_of_water (q->bases, c->solvent, pkah);
   uint32_t n = 0;
 
-  *m = (EnlMixture){.stoichiometric = isnan (pkah)};
+  /* Hydroxide in water is one of these ions: what is added is charge, and they do the rest. */
+  *m = (EnlMixture){.stoichiometric = isnan (pkah) || pkah == own_ions};
   m->species = g_memdup2 (ions->species, ions->n_species * sizeof *ions->species);
-  if (m->stoichiometric)
+  if (isnan (pkah))
     drop_unreachable (m, ions, reach);
-  else
+  else if (!m->stoichiometric)
     m->acceptor[n++] = acceptor_of (base, c->solvent, amount, pkah);
   if (water > 0.0 && !isnan (water_pka)) {
     m->acceptor[n] = enl_acceptor_bare (water, water_pka);
@@ -71,7 +87,7 @@ enl_mixture_init (EnlMixture *m, const EnlQuestion *q, const EnlIons *ions, cons
                                 .acceptor = m->acceptor,
                                 .n_acceptors = n,
                                 .removed = m->stoichiometric ? amount : 0.0,
-                                .autoprotolysis = NAN};
+                                .autoprotolysis = own_ions};
 }
 
 void

@@ -9,7 +9,7 @@ typedef struct {
   EnlEquilibrium problem; /* points into this object: do not copy it */
   EnlSpecies *species;
   EnlAcceptor acceptor[2]; /* the base, unless stoichiometric, then the water */
-  bool stoichiometric;     /* the base takes its protons for good */
+  bool stoichiometric;     /* the base takes its protons for good, or is an ion of the solvent */
 } EnlMixture;
 
 /* `pkah` is the strength with which `base` acts; NAN: it takes its protons for good, down to acids

@@ -221,6 +221,20 @@ check_order (const Ask *a)
   }
 }
 
+/* Sodium hydroxide, 0.105 mol/L, with 0.1 mol/L acetone (pKa 19.27): pH 13.02, so the enolate is
+ * 10^(13.02 - 19.27) of it (Henderson-Hasselbalch, by hand). */
+START_TEST (water_is_there_in_excess)
+{
+  Ask a;
+
+  ask (&a, "CC(=O)C", 0, conditions_in (ENL_SOLVENT_WATER, 25.0, 1.05));
+  const EnlCandidate *c = candidate_of (&a, "naoh");
+  ck_assert_double_eq_tol (log10 (c->conversion), 14.0 + log10 (0.105) - 19.27, 0.02);
+  ck_assert_int_eq (c->verdict, ENL_VERDICT_NO);
+  ask_clear (&a);
+}
+END_TEST
+
 START_TEST (order_is_best_first_and_mildest_among_equals)
 {
   static const char *const structure[] = {ACETOACETATE, "CC(=O)C", "CCC(=O)OCC", "CS(C)=O"};
@@ -422,6 +436,7 @@ compare_suite (void)
   tcase_add_test (tc, alkoxides_stand_for_their_own_alcohol);
   tcase_add_test (tc, interval_holds_the_value_and_shrinks_with_certainty);
   tcase_add_test (tc, two_sites_share_what_a_strong_base_takes);
+  tcase_add_test (tc, water_is_there_in_excess);
   tcase_add_test (tc, order_is_best_first_and_mildest_among_equals);
   tcase_add_test (tc, words_are_distinct);
   tcase_add_test (tc, impossible_conditions_are_refused);

@@ -243,8 +243,9 @@ START_TEST (second_step_of_a_base_counts)
   ask (&a, "OC(=O)C(F)(F)F", 1, conditions_in (ENL_SOLVENT_WATER, 25.0, 0.5));
   double half = candidate_of (&a, "dabco")->conversion;
   double one = candidate_of (&a, "et3n")->conversion;
-  ck_assert_double_eq_tol (one, 0.5, 0.01);
-  ck_assert_double_gt (half, 0.7);
+  /* The acid alone gives most of its protons to water (pKa 0.5 at 0.1 mol/L). */
+  ck_assert_double_gt (one, 0.8);
+  ck_assert_double_gt (half, one + 0.01);
   ask_clear (&a);
 }
 END_TEST
