@@ -221,18 +221,32 @@ by_outcome (const EnlCandidate *a, const EnlCandidate *b)
                : compare_numbers (severity (a, ENL_EFFECT_WARN), severity (b, ENL_EFFECT_WARN));
 }
 
+/* Hazards below this are comparable: an everyday base comes first among them. */
+#define EXTREME 3
+
+static int
+by_shelf (const EnlBaseTable *bases, const EnlCandidate *a, const EnlCandidate *b)
+{
+  int hazard_a = severity (a, ENL_EFFECT_HAZARD), hazard_b = severity (b, ENL_EFFECT_HAZARD);
+  bool usual_a = enl_base_table_get (bases, a->base)->usual;
+  bool usual_b = enl_base_table_get (bases, b->base)->usual;
+
+  if ((hazard_a >= EXTREME) != (hazard_b >= EXTREME))
+    return hazard_a >= EXTREME ? 1 : -1;
+  if (usual_a != usual_b)
+    return usual_a ? -1 : 1;
+  return compare_numbers (hazard_a, hazard_b);
+}
+
 static int
 by_merit (const void *left, const void *right, void *data)
 {
   const EnlCandidate *a = left, *b = right;
   const EnlBaseTable *bases = data;
-  bool usual_a = enl_base_table_get (bases, a->base)->usual;
   int order = by_outcome (a, b);
 
   if (order == 0)
-    order = compare_numbers (severity (a, ENL_EFFECT_HAZARD), severity (b, ENL_EFFECT_HAZARD));
-  if (order == 0 && usual_a != enl_base_table_get (bases, b->base)->usual)
-    order = usual_a ? -1 : 1;
+    order = by_shelf (bases, a, b);
   if (order == 0)
     order = compare_numbers (strength (bases, a), strength (bases, b));
   return order ? order : compare_numbers (a->base, b->base);

@@ -20,7 +20,7 @@ typedef struct {
 
 /* Fraction of the anion at another number of equivalents; NAN where the base has none. */
 static EnlStatus
-conversion_at (const Advising *a, double equivalents, double *out, EnlError *err)
+conversion_at (const Advising *a, double equivalents, double *out, bool *shared, EnlError *err)
 {
   EnlConditions conditions = *a->question->conditions;
   EnlQuestion question = *a->question;
@@ -31,6 +31,7 @@ conversion_at (const Advising *a, double equivalents, double *out, EnlError *err
   EnlJudge judge = enl_judge_begin (&question, a->ions);
   EnlStatus status = enl_judge_base (&judge, a->candidate->base, &at, err);
   *out = isnan (a->candidate->conversion) ? NAN : at.conversion;
+  *shared = status == ENL_OK && at.verdict == ENL_VERDICT_SHARED;
   return status;
 }
 
@@ -81,6 +82,9 @@ text_of_step (const Advising *a, const EnlEquivalentStep *step, double needed)
   g_autofree char *share = percent (step->conversion);
   if (e < needed - 0.1)
     return g_strdup_printf ("%s of the anion: too little, %.3g are counted", share, needed);
+  if (step->shared)
+    return g_strdup_printf ("%s of the anion at equilibrium, the rest is that of other sites",
+                            share);
   if (step->conversion < LARGELY * MIN (1.0, e / needed))
     return g_strdup_printf ("%s of the anion: the equilibrium holds it there", share);
   if (e < needed - EXACT)
@@ -97,6 +101,27 @@ text_of_step (const Advising *a, const EnlEquivalentStep *step, double needed)
 
 /* ---- the recommendation ---- */
 
+/* What the rules say of the side of a ketone that forms first (R30), or NULL. */
+static const char *
+kinetic_remark (const EnlCandidate *c)
+{
+  for (uint32_t i = 0; i < c->n_cautions; i++)
+    if (g_str_has_prefix (c->caution[i].rule->id, "R30-"))
+      return c->caution[i].clause;
+  return NULL;
+}
+
+/* The base takes all of the substrate, and what limits this anion is the other site. */
+static char *
+text_of_sharing (const EnlCandidate *c, const char *share, double number)
+{
+  const char *kinetic = kinetic_remark (c);
+
+  return g_strdup_printf ("they leave no neutral substrate; once the anions of its sites settle, "
+                          "%s is this one at %.3g%s%s",
+                          share, number, kinetic ? "; before that: " : "", kinetic ? kinetic : "");
+}
+
 static EnlStatus
 recommend (const Advising *a, EnlEquivalents *out, EnlError *err)
 {
@@ -104,7 +129,8 @@ recommend (const Advising *a, EnlEquivalents *out, EnlError *err)
   const EnlCandidate *c = a->candidate;
   const EnlBase *base = enl_base_table_get (a->question->bases, c->base);
   double number = out->needed * practice->excess, conversion;
-  EnlStatus status = conversion_at (a, number, &conversion, err);
+  bool shared;
+  EnlStatus status = conversion_at (a, number, &conversion, &shared, err);
 
   out->recommended = NAN;
   if (status != ENL_OK)
@@ -114,6 +140,11 @@ recommend (const Advising *a, EnlEquivalents *out, EnlError *err)
     return ENL_OK;
   }
   g_autofree char *share = percent (conversion);
+  if (shared) {
+    out->recommended = number;
+    out->reason = text_of_sharing (c, share, number);
+    return ENL_OK;
+  }
   if (conversion < LARGELY) {
     out->reason = g_strdup_printf (
         "no number of equivalents makes this base sufficient: %s of the anion at %.3g", share,
@@ -150,7 +181,7 @@ enl_equivalents_new (const EnlQuestion *question, const EnlCandidate *candidate,
   status = recommend (&a, e, err);
   for (int i = 0; status == ENL_OK && i < ENL_N_EQUIVALENT_STEPS; i++) {
     e->step[i].equivalents = step_at[i];
-    status = conversion_at (&a, step_at[i], &e->step[i].conversion, err);
+    status = conversion_at (&a, step_at[i], &e->step[i].conversion, &e->step[i].shared, err);
     e->step[i].text = text_of_step (&a, &e->step[i], e->needed);
   }
   if (status == ENL_OK)

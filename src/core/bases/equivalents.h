@@ -2,6 +2,8 @@
  * what happens around it. */
 #pragma once
 
+#include <stdbool.h>
+
 #include "core/bases/compare.h"
 
 #define ENL_N_EQUIVALENT_STEPS 4
@@ -9,6 +11,7 @@
 typedef struct {
   double equivalents;
   double conversion; /* fraction of the substrate that is the anion; NAN without a number */
+  bool shared;       /* no substrate is left, and several sites share the anion */
   char *text;        /* what happens there, one clause */
 } EnlEquivalentStep;
 

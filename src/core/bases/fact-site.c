@@ -77,6 +77,14 @@ find_alpha_ester (const EnlFactView *v, EnlFactValue *out)
   out->flag = beside (v, ENL_GROUP_ESTER) != ENL_NONE;
 }
 
+/* The salt counts as the acid: its C-H is the same. */
+static void
+find_alpha_acid (const EnlFactView *v, EnlFactValue *out)
+{
+  out->flag =
+      beside (v, ENL_GROUP_ACID) != ENL_NONE || beside (v, ENL_GROUP_CARBOXYLATE) != ENL_NONE;
+}
+
 static void
 find_alpha_thioester (const EnlFactView *v, EnlFactValue *out)
 {
@@ -422,6 +430,7 @@ const EnlFact enl_fact_of_site[] = {
     FLAG ("site.alpha_ester", find_alpha_ester, "C-H on an ester or lactone C=O"),
     FLAG ("site.alpha_aryl_ester", find_alpha_aryl_ester, "... whose alkoxy part is an aryloxy"),
     FLAG ("site.alpha_tert_alkyl_ester", find_alpha_tert_butyl, "... tertiary alkoxy (t-Bu)"),
+    FLAG ("site.alpha_acid", find_alpha_acid, "C-H on the C=O of a carboxylic acid or its salt"),
     FLAG ("site.alpha_thioester", find_alpha_thioester, "C-H on a thioester C=O"),
     FLAG ("site.alpha_imide", find_alpha_imide, "C-H on the C=O of an imide, N-acyl oxazolidinone"),
     FLAG ("site.alpha_amide", find_alpha_amide, "C-H on an amide C=O"),

@@ -3,6 +3,8 @@
 #include <math.h>
 #include <string.h>
 
+#include "core/acidity/group.h"
+
 /* Two-sided 90 % of a normal distribution, in standard deviations. */
 #define Z90 1.645
 /* Lower ends of the verdicts, as fractions of the substrate. */
@@ -143,6 +145,36 @@ strong_enough (const EnlJudge *j, const EnlBase *base)
   return reach_of (j, base) > site_estimate (j)->value;
 }
 
+/* The C-H of a carboxylic acid or of its salt. */
+static bool
+is_beside_carboxyl (const EnlMolecule *mol, const EnlSite *site)
+{
+  for (uint32_t k = 0; k < enl_molecule_degree (mol, site->atom[0]); k++) {
+    EnlGroup group = enl_group_of (mol, enl_molecule_neighbour (mol, site->atom[0], k));
+    if (group == ENL_GROUP_ACID || group == ENL_GROUP_CARBOXYLATE)
+      return true;
+  }
+  return false;
+}
+
+/* Where another C-H or a carboxylic O-H of the same system is gone before this C-H, a solid hydride
+ * is not counted on to take it, whatever its textbook figure says (common practice: LDA, or n-BuLi
+ * after the hydride; Huckin & Weiler, J. Am. Chem. Soc. 1974, 96, 1082; Creger, ibid. 1967, 89,
+ * 2500). A phenol O-H elsewhere does not hinder it. */
+static bool
+stops_at_first (const EnlJudge *j, const EnlBase *base)
+{
+  const EnlQuestion *q = j->question;
+  const EnlSite *site = &q->sites->site[q->target];
+
+  if (site->kind != ENL_SITE_CARBON || strcmp (base->family, "hydride") != 0)
+    return false;
+  for (uint32_t i = 0; site->second && i < j->ions->n_competing; i++)
+    if (q->sites->site[j->ions->competing[i]].kind == ENL_SITE_CARBON)
+      return true;
+  return is_beside_carboxyl (q->mol, site);
+}
+
 /* Equivalents that water takes before the site does. */
 static double
 water_before (const EnlJudge *j)
@@ -201,6 +233,8 @@ enl_judge_base (const EnlJudge *j, uint32_t index, EnlCandidate *out, EnlError *
   } else if (base->number_unreliable) {
     out->pkah = base->pkah[solvent];
     out->verdict = ENL_VERDICT_NO_NUMBER;
+  } else if (stops_at_first (j, base)) {
+    out->verdict = ENL_VERDICT_OFF_SCALE;
   } else if (base->irreversible && strong_enough (j, base)) {
     set_strength (j, base, out);
     out->stoichiometric = true;
@@ -246,17 +280,32 @@ gap_text (const EnlCandidate *out)
                           : g_strdup_printf ("%sgap %+.1f%s", medium, out->gap, level);
 }
 
+/* "1.05 equivalents are too few for this site, 2.1 is the number: " where the count alone is what
+ * is missing; else "". */
+static char *
+count_text (const EnlJudge *j, const EnlCandidate *out)
+{
+  double given = j->question->conditions->equivalents;
+  bool strong = isnan (out->gap) || out->gap > 0.0;
+
+  if (!strong || j->ions->n_competing == 0 || given > out->equivalents_needed - 0.1)
+    return g_strdup ("");
+  return g_strdup_printf ("%.3g equivalents do not reach this site in full, %.3g is the number: ",
+                          given, out->equivalents_needed * j->question->practice->excess);
+}
+
 static char *
 equilibrium_reason (const EnlJudge *j, const EnlBase *base, const EnlCandidate *out)
 {
   g_autofree char *gap = gap_text (out), *share = share_text (out->conversion);
+  g_autofree char *count = count_text (j, out);
 
   if (base->irreversible)
-    return g_strdup_printf ("%s, and the proton does not come back: %s of the anion%s", gap, share,
-                            tail_of_partial (j, base, out));
+    return g_strdup_printf ("%s%s, and the proton does not come back: %s of the anion%s", count,
+                            gap, share, tail_of_partial (j, base, out));
   if (out->verdict == ENL_VERDICT_COMPLETE)
     return g_strdup_printf ("%s: the anion forms completely", gap);
-  return g_strdup_printf ("%s: %s of the anion at %.3g equivalents%s", gap, share,
+  return g_strdup_printf ("%s%s: %s of the anion at %.3g equivalents%s", count, gap, share,
                           j->question->conditions->equivalents, tail_of_partial (j, base, out));
 }
 
@@ -273,6 +322,10 @@ enl_judge_reason (const EnlJudge *j, const EnlCandidate *out)
     return g_strdup (
         "its strength depends on dryness, surface or a Lewis acid, so no gap is shown");
   case ENL_VERDICT_OFF_SCALE:
+    if (stops_at_first (j, base))
+      return g_strdup (
+          "the solid hydride takes the first hydrogen; that it takes this one from the "
+          "anion is not counted on, LDA or n-BuLi is used for it");
     return base->irreversible
                ? g_strdup_printf ("not clearly stronger than this site, and no value in %s", label)
                : g_strdup_printf ("no value that can be set against this site in %s", label);

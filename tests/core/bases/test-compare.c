@@ -9,6 +9,8 @@
 #define ACETOACETATE        "CC(=O)CC(=O)OCC"
 #define HYDROXYACETONE      "CC(=O)Cc1ccc(O)cc1" /* 4-hydroxyphenylacetone */
 #define KETO_AMIDE          "CC(=O)CCC(=O)NC"
+#define BROMOACETOPHENONE   "BrCC(=O)c1ccccc1"
+#define BOC_ALANINE_METHYL  "COC(=O)C(C)NC(=O)OC(C)(C)C"
 #define CHLOROCYCLOHEXANONE "O=C1CCCCC1Cl"
 
 /* Published pKa (resources/acids.tsv): ethyl acetoacetate 14.2 (DMSO) and 10.68 (water),
@@ -73,6 +75,20 @@ static const struct {
      ENL_VERDICT_COMPLETE, ENL_GRADE_CAUTION, "R03-aldehyde"},
     {"acetyl chloride and cold LDA", "CC(=O)Cl", "lda", 0, ENL_SOLVENT_THF, -78, 1.05,
      ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R09-ketene"},
+    {"bromoacetophenone and methyl Grignard", BROMOACETOPHENONE, "memgbr", 0, ENL_SOLVENT_THF, 25,
+     1.05, ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R12-halo"},
+    {"bromoacetophenone and tert-butyllithium", BROMOACETOPHENONE, "tbuli", 0, ENL_SOLVENT_THF, -78,
+     1.05, ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R12-halo"},
+    {"isobutyric acid and two methyllithium: ketone", "CC(C)C(=O)O", "meli", 2, ENL_SOLVENT_THF, 25,
+     2.1, ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R12-acid"},
+    {"acetic acid and two methyl Grignard", "CC(=O)O", "memgbr", 1, ENL_SOLVENT_THF, 25, 2.1,
+     ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R12-acid-magnesium"},
+    {"ethyl acetate and sodium hydride: Claisen", "CC(=O)OCC", "nah", 0, ENL_SOLVENT_THF, 25, 1.05,
+     ENL_VERDICT_COMPLETE, ENL_GRADE_CAUTION, "R02-ester"},
+    {"sodium hydride takes one hydrogen of acetoacetate", ACETOACETATE, "nah", 1, ENL_SOLVENT_THF,
+     25, 2.1, ENL_VERDICT_OFF_SCALE, ENL_GRADE_UNJUDGED, NULL},
+    {"two butyllithium reach the outer carbon", ACETOACETATE, "nbuli", 1, ENL_SOLVENT_THF, -78, 2.1,
+     ENL_VERDICT_COMPLETE, ENL_GRADE_CAUTION, "R12-dianion"},
     {"ethyl acetate and hydroxide in water", "CC(=O)OCC", "naoh", 0, ENL_SOLVENT_WATER, 25, 1.05,
      ENL_VERDICT_REACTS, ENL_GRADE_FAILS, "R11"},
 };
@@ -208,12 +224,15 @@ check_order (const Ask *a)
       continue;
     if (x->grade == ENL_GRADE_CAUTION)
       ck_assert_int_le (worst (x, ENL_EFFECT_WARN), worst (y, ENL_EFFECT_WARN));
-    if (x->grade == ENL_GRADE_CLEAN)
-      ck_assert_int_le (worst (x, ENL_EFFECT_HAZARD), worst (y, ENL_EFFECT_HAZARD));
-    if (x->grade == ENL_GRADE_CLEAN &&
-        worst (x, ENL_EFFECT_HAZARD) == worst (y, ENL_EFFECT_HAZARD) &&
-        enl_base_table_get (a->question.bases, x->base)->usual ==
-            enl_base_table_get (a->question.bases, y->base)->usual &&
+    bool usual_x = enl_base_table_get (a->question.bases, x->base)->usual;
+    bool usual_y = enl_base_table_get (a->question.bases, y->base)->usual;
+    int hazard_x = worst (x, ENL_EFFECT_HAZARD), hazard_y = worst (y, ENL_EFFECT_HAZARD);
+    /* an everyday base before an unusual one unless its hazard is extreme */
+    if (x->grade == ENL_GRADE_CLEAN && (hazard_x >= 3) == (hazard_y >= 3))
+      ck_assert (usual_x >= usual_y);
+    if (x->grade == ENL_GRADE_CLEAN && usual_x == usual_y)
+      ck_assert_int_le (hazard_x, hazard_y);
+    if (x->grade == ENL_GRADE_CLEAN && hazard_x == hazard_y && usual_x == usual_y &&
         !isnan (x->pkah) && !isnan (y->pkah))
       ck_assert_double_le (x->pkah, y->pkah);
     if (x->grade == ENL_GRADE_PARTIAL && x->verdict == y->verdict)
@@ -424,6 +443,73 @@ START_TEST (base_table_is_complete)
 }
 END_TEST
 
+/* ---- what a chemist reads first ---- */
+
+static uint32_t
+rank_of (const Ask *a, const char *base)
+{
+  return (uint32_t)(candidate_of (a, base) - a->comparison->candidate);
+}
+
+/* Kinetic deprotonation of ketones and esters by hindered lithium amides is common practice. */
+START_TEST (a_lithium_amide_comes_before_sodium_hydride)
+{
+  static const char *const structure[] = {"CC(=O)OCC", "CC(=O)c1ccccc1", "O=C1CCCCC1"};
+  static const double temperature[] = {25.0, -78.0};
+
+  for (size_t i = 0; i < ENL_COUNT (structure); i++)
+    for (size_t t = 0; t < ENL_COUNT (temperature); t++) {
+      Ask a;
+      ask (&a, structure[i], 0, conditions_in (ENL_SOLVENT_THF, temperature[t], 1.05));
+      ck_assert_msg (rank_of (&a, "lda") < rank_of (&a, "nah"), "%s", structure[i]);
+      ask_clear (&a);
+    }
+}
+END_TEST
+
+/* Potassium tert-butoxide in DMSO is an everyday pair, a phosphazene is not (common practice). */
+START_TEST (an_everyday_base_comes_before_a_phosphazene)
+{
+  Ask a;
+
+  ask (&a, ACETOPHENONE, 0, conditions_in (ENL_SOLVENT_DMSO, 25.0, 1.05));
+  ck_assert_uint_eq (rank_of (&a, "kotbu"), 0);
+  ck_assert_uint_gt (rank_of (&a, "p4_tbu"), 0);
+  ask_clear (&a);
+}
+END_TEST
+
+/* The N-H of a carbamate takes the first equivalent (rule R06). */
+START_TEST (too_few_equivalents_are_told_first)
+{
+  Ask a;
+
+  ask (&a, BOC_ALANINE_METHYL, 5, conditions_in (ENL_SOLVENT_THF, -78.0, 1.05));
+  ck_assert_msg (g_str_has_prefix (candidate_of (&a, "lda")->reason,
+                                   "1.05 equivalents do not reach this site in full, 2.1 is"),
+                 "%s", candidate_of (&a, "lda")->reason);
+  ask_clear (&a);
+  ask (&a, BOC_ALANINE_METHYL, 5, conditions_in (ENL_SOLVENT_THF, -78.0, 2.1));
+  ck_assert_ptr_null (strstr (candidate_of (&a, "lda")->reason, "do not reach"));
+  ask_clear (&a);
+}
+END_TEST
+
+/* Two sides of one ketone: the base suffices; the cold amide takes the CH2 first (House 1969). */
+START_TEST (sharing_is_not_called_a_weak_base)
+{
+  Ask a;
+
+  ask (&a, "CC1CCCCC1=O", 6, conditions_in (ENL_SOLVENT_THF, -78.0, 1.05));
+  EnlEquivalents *e = equivalents_of (&a, "lda");
+  ck_assert_double_eq_tol (e->recommended, 1.05, 1e-12);
+  ck_assert_ptr_null (strstr (e->reason, "sufficient"));
+  ck_assert_ptr_nonnull (strstr (e->reason, "kinetic conditions favour this less substituted"));
+  enl_equivalents_free (e);
+  ask_clear (&a);
+}
+END_TEST
+
 static Suite *
 compare_suite (void)
 {
@@ -445,6 +531,10 @@ compare_suite (void)
   tcase_add_test (tc, conversion_at_the_steps_is_stoichiometric);
   tcase_add_test (tc, a_weak_base_gets_no_recommended_number);
   tcase_add_test (tc, surplus_base_goes_to_the_next_hydrogen);
+  tcase_add_test (tc, a_lithium_amide_comes_before_sodium_hydride);
+  tcase_add_test (tc, an_everyday_base_comes_before_a_phosphazene);
+  tcase_add_test (tc, too_few_equivalents_are_told_first);
+  tcase_add_test (tc, sharing_is_not_called_a_weak_base);
   tcase_add_test (tc, base_table_is_complete);
   suite_add_tcase (suite, tc);
   return suite;
