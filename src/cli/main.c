@@ -15,7 +15,9 @@ static const EnlVerb verb[] = {
      "fsaechtl", true, enl_verb_bases},
     {"weigh", "What to weigh or measure out of chosen bases for an amount of substrate.",
      "fsaechbMGTDl", true, enl_verb_weigh},
-    {"report", "A set on two pages: structures, ranks, bases, composition, cautions, sources.",
+    {"report",
+     "A set, two pages for up to four substrates: structures, ranks, bases, composition, cautions, "
+     "sources.",
      "osectl", true, enl_verb_report},
     {"figure", "Writes an annotated picture.", "svbaechowdml", true, enl_verb_figure},
     {"molecule", "What was read: formula, molar mass, hydrogens, rings, SMILES, InChIKey.", "f",

@@ -32,7 +32,7 @@ static const Option option[] = {
     {'P', "--pairs", NULL, "pairs that stand in the wrong order"},
     {'R', "--rows", NULL, "every row of the table, largest standardised residual first"},
     {'x', "--explain", NULL, "why each value is what it is: contributions that add up, precedents"},
-    {'b', "--base", "B", "base by id or name (may be given repeatedly)"},
+    {'b', "--base", "B", "base by id, name or usual spelling (may be given repeatedly)"},
     {'M', "--mmol", "M", "amount of substrate, mmol"},
     {'G', "--grams", "G", "mass of substrate, g (instead of --mmol)"},
     {'T', "--titre", "X", "strength of the solution at hand, mol/L"},

@@ -81,15 +81,17 @@ static EnlStatus
 find_candidate (const Run *run, const EnlComparison *comparison, const char *name,
                 const EnlCandidate **out, EnlError *err)
 {
-  int base = name ? enl_base_table_find (run->run.knowledge->bases, name) : -1;
+  uint32_t base = 0;
 
-  if (name && base < 0)
-    return enl_error_set (err, ENL_ERROR_UNKNOWN, "choose one that 'enolith-cli bases' lists",
-                          "no base '%.80s'", name);
+  if (name) {
+    EnlStatus status = enl_base_table_look_up (run->run.knowledge->bases, name, &base, err);
+    if (status != ENL_OK)
+      return status;
+  }
   *out = &comparison->candidate[0];
   for (uint32_t i = comparison->n_candidates; i-- > 0;) {
     const EnlCandidate *c = &comparison->candidate[i];
-    if (name ? (int)c->base == base : !isnan (c->conversion))
+    if (name ? c->base == base : !isnan (c->conversion))
       *out = c;
   }
   return ENL_OK;

@@ -87,11 +87,9 @@ static EnlStatus
 find_bases (const EnlRun *run, const EnlBaseTable *bases, uint32_t *base, EnlError *err)
 {
   for (guint i = 0; run->options->base[i]; i++) {
-    int found = enl_base_table_find (bases, run->options->base[i]);
-    if (found < 0)
-      return enl_error_set (err, ENL_ERROR_UNKNOWN, "take an id that 'enolith-cli bases' lists",
-                            "no base '%.80s'", run->options->base[i]);
-    base[i] = (uint32_t)found;
+    EnlStatus status = enl_base_table_look_up (bases, run->options->base[i], &base[i], err);
+    if (status != ENL_OK)
+      return status;
   }
   return ENL_OK;
 }

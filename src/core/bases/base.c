@@ -92,6 +92,7 @@ read_base (const RowReader *at, EnlBase *base)
   base->incompatible = cell (at, "incompatible_with");
   base->note = cell (at, "note");
   base->source = cell (at, "source");
+  base->spellings = cell (at, "spellings");
   base->thf_scale = cell (at, "pKaH_THF_scale");
   base->usual = says_yes (at, "usual");
   base->irreversible = says_yes (at, "irreversible");
@@ -187,6 +188,141 @@ enl_base_table_find (const EnlBaseTable *table, const char *text)
                               g_ascii_strcasecmp (table->base[i].name, text) == 0))
       return (int)i;
   return -1;
+}
+
+/* ---- what a person calls a base ---- */
+
+#define N_NEAREST 3
+
+/* Letters and digits in lower case, "tert" as "t" and "sec" as "s". Signs beyond ASCII are kept. */
+static char *
+fold (const char *text, size_t size)
+{
+  g_autofree char *copy = g_strndup (text, size);
+  g_autofree char *valid = g_utf8_make_valid (copy, -1);
+  g_autofree char *lower = g_utf8_strdown (valid, -1);
+  GString *out = g_string_new (NULL);
+
+  for (const char *p = lower; *p; p++)
+    if (g_ascii_isalnum (*p) || (guchar)*p >= 0x80)
+      g_string_append_c (out, *p);
+  g_string_replace (out, "tert", "t", 0);
+  g_string_replace (out, "sec", "s", 0);
+  return g_string_free (out, FALSE);
+}
+
+static void
+add_key (GPtrArray *keys, const char *text, size_t size)
+{
+  g_autofree char *key = fold (text, size);
+
+  if (key[0])
+    g_ptr_array_add (keys, g_steal_pointer (&key));
+}
+
+/* All that the base goes by, folded. */
+static GPtrArray *
+keys_of (const EnlBase *base)
+{
+  GPtrArray *keys = g_ptr_array_new_with_free_func (g_free);
+  const char *bracket = strstr (base->name, " (");
+  size_t length = strlen (base->name);
+  g_auto (GStrv) other = g_strsplit (base->spellings ? base->spellings : "", ";", -1);
+
+  add_key (keys, base->id, strlen (base->id));
+  add_key (keys, base->name, length);
+  if (bracket && base->name[length - 1] == ')') {
+    add_key (keys, base->name, (size_t)(bracket - base->name));
+    add_key (keys, bracket + 2, strlen (bracket + 2));
+  }
+  for (char **p = other; *p; p++)
+    add_key (keys, *p, strlen (*p));
+  return keys;
+}
+
+static guint
+least3 (guint a, guint b, guint c)
+{
+  return MIN (MIN (a, b), c);
+}
+
+/* Letters to add, drop or change (Levenshtein 1966). */
+static guint
+edits (const char *a, const char *b)
+{
+  size_t n = strlen (b);
+  g_autofree guint *row = g_new (guint, n + 1);
+
+  for (size_t j = 0; j <= n; j++)
+    row[j] = (guint)j;
+  for (guint i = 1; a[i - 1]; i++) {
+    guint corner = row[0];
+    row[0] = i;
+    for (size_t j = 1; j <= n; j++) {
+      guint above = row[j];
+      row[j] = least3 (above + 1, row[j - 1] + 1, corner + (a[i - 1] != b[j - 1]));
+      corner = above;
+    }
+  }
+  return row[n];
+}
+
+/* 0 when the base goes by that; the letters that tell its best key from `wanted`. */
+static guint
+distance_to (const EnlBase *base, const char *wanted)
+{
+  g_autoptr (GPtrArray) keys = keys_of (base);
+  guint least = G_MAXUINT;
+
+  for (guint i = 0; i < keys->len; i++)
+    least = MIN (least, edits (wanted, g_ptr_array_index (keys, i)));
+  return least;
+}
+
+/* "nbuli, sbuli, tbuli": those of least distance, in order of the table among equals. */
+static char *
+nearest_ids (const EnlBaseTable *table, guint *distance)
+{
+  GString *out = g_string_new (NULL);
+
+  for (int k = 0; k < N_NEAREST; k++) {
+    uint32_t best = 0;
+    for (uint32_t i = 1; i < table->n; i++)
+      if (distance[i] < distance[best])
+        best = i;
+    if (table->n == 0 || distance[best] == G_MAXUINT)
+      break;
+    g_string_append_printf (out, "%s%.40s", k ? ", " : "", table->base[best].id);
+    distance[best] = G_MAXUINT;
+  }
+  return g_string_free (out, FALSE);
+}
+
+/* Longer texts are no names; also bounds the work of edits (). */
+#define LONGEST_NAME 200
+
+EnlStatus
+enl_base_table_look_up (const EnlBaseTable *table, const char *text, uint32_t *out, EnlError *err)
+{
+  g_autofree char *wanted = fold (text, strnlen (text, LONGEST_NAME));
+  g_autofree guint *distance = g_new (guint, table->n + 1);
+  int found = enl_base_table_find (table, text);
+  uint32_t n_found = 0;
+
+  for (uint32_t i = 0; found < 0 && i < table->n; i++) {
+    distance[i] = distance_to (&table->base[i], wanted);
+    if (distance[i] == 0)
+      n_found++, *out = i;
+  }
+  if (found >= 0)
+    *out = (uint32_t)found;
+  if (found >= 0 || n_found == 1)
+    return ENL_OK;
+  g_autofree char *ids = nearest_ids (table, distance);
+  g_autofree char *advice =
+      g_strdup_printf ("nearest: %s; 'enolith-cli bases' lists all by id and name", ids);
+  return enl_error_set (err, ENL_ERROR_UNKNOWN, advice,
+                        n_found ? "'%.80s' means more than one base" : "no base '%.80s'", text);
 }
 
 /* ---- for the files that make a table ---- */

@@ -13,6 +13,7 @@
 typedef struct {
   const char *id, *name, *smiles, *conjugate_acid, *cation, *family, *nucleophilicity, *steric;
   const char *typical_solvents, *typical_temperature, *incompatible, *note, *source, *thf_scale;
+  const char *spellings;        /* other spellings, "tBuOK;KOBut"; NULL or "" for none */
   bool attacks[ENL_N_SOLVENTS]; /* is destroyed by, or destroys, this solvent */
   double pkah_nominal;    /* textbook figure without a footing, NAN for none: says only that an
                              irreversible base is strong enough, never enters an equilibrium */
@@ -44,5 +45,11 @@ void enl_base_table_free (EnlBaseTable *table);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlBaseTable, enl_base_table_free)
 uint32_t enl_base_table_size (const EnlBaseTable *table);
 const EnlBase *enl_base_table_get (const EnlBaseTable *table, uint32_t index);
-/* Index by id or by name, case does not matter; -1 when unknown. */
+/* Index by id or by name, case does not matter; -1 when unknown. For ids that the program keeps. */
 int enl_base_table_find (const EnlBaseTable *table, const char *text);
+/* Index of what a person calls a base: id, name, name without its remark in brackets, the
+ * abbreviation in those brackets, or another spelling of the table ("tBuOK"). Case, hyphens and
+ * other signs do not matter, "tert" is "t" and "sec" is "s"; an exact id or name goes first.
+ * ENL_ERROR_UNKNOWN with the nearest ids as advice when no base, or more than one, is meant. */
+EnlStatus enl_base_table_look_up (const EnlBaseTable *table, const char *text, uint32_t *out,
+                                  EnlError *err) ENL_MUST_USE;
