@@ -61,9 +61,7 @@ draw_species (EnlScene *scene, const EnlCurveLine *line, double y, double width,
   EnlTone tone =
       line->kind == ENL_CURVE_FORM && line->holds_target ? ENL_TONE_ACTIVE : ENL_TONE_MUTED;
 
-  g_autofree char *label =
-      g_strconcat (line->label, line->kind == ENL_CURVE_BASE ? " (share of the base)" : "", NULL);
-  y = enl_scene_paragraph (scene, (EnlPoint){0, y}, width, label, size, false, ENL_TONE_INK);
+  y = enl_scene_paragraph (scene, (EnlPoint){0, y}, width, line->label, size, false, ENL_TONE_INK);
   double line_height = enl_text_line_height (theme->family, size);
   double top = y + (line_height - high) / 2;
   EnlShape *frame = enl_scene_rect (scene, (EnlRect){0, top, bar, high}, 0, ENL_TONE_PANEL);

@@ -92,6 +92,14 @@ def check_weigh_usage():
     expect('nothing to deprotonate', 'no acidic hydrogen' in err, err)
     _, err = run('weigh', '--base', 'kotbu', '--base', 'nah', '--titre', '1', '--mmol', '5', 'acetone', code=1)
     expect('whose titre?', 'whose titre' in err, err)
+    _, err = run('weigh', '--base', 'nah', '--titre', '2', '--mmol', '5', 'acetone', code=1)
+    expect('a titre of a dispersion', 'dispersion in mineral oil' in err and 'no solution' in err, err)
+    _, err = run('weigh', '--base', 'LDA', '--dispersion', '60', '--mmol', '5', 'acetone', code=1)
+    expect('a mass per cent of a solution', 'give the titre' in err, err)
+    _, err = run('weigh', '--base', 'BuLi', '--mmol', '5', 'acetone', code=1)
+    expect('the nearest bases', 'nbuli, sbuli, tbuli' in err, err)
+    out, _ = run('weigh', '--base', 'n-BuLi', '--mmol', '5', 'acetone')
+    expect('a usual spelling', 'nbuli' in out, out)
 
 
 def check_own_base():

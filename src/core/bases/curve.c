@@ -216,7 +216,8 @@ draft (const EnlQuestion *q, const EnlCandidate *c, uint32_t n_points, EnlCurve 
   Drafting d = {q, ions, sweep, at, rank, curve};
   add_forms (&d);
   add_line (&d, ENL_CURVE_SUBSTRATE, g_strdup ("substrate"), sweep->neutral, at->neutral);
-  add_line (&d, ENL_CURVE_BASE, g_strdup ("base left over"), sweep->unused, unused_at (&m, at));
+  add_line (&d, ENL_CURVE_BASE, g_strdup ("base left over, of the base added"), sweep->unused,
+            unused_at (&m, at));
   curve->n_points = n_points;
   curve->equivalents = g_memdup2 (sweep->equivalents, n_points * sizeof (double));
   curve->worst = sweep->worst;

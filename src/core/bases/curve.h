@@ -44,8 +44,8 @@ EnlStatus enl_curve_new (const EnlQuestion *question, const EnlCandidate *candid
 void enl_curve_free (EnlCurve *curve);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (EnlCurve, enl_curve_free)
 
-/* "At 1.05 equivalents of LDA: anion, site 1: 99.9 %; substrate: 0.1 %; base left over: 4.8 %."
- * or why there is no curve. New string (g_free). */
+/* "At 1.05 equivalents of LDA: anion, site 1: 99.9 %; substrate: 0.1 %; base left over, of the base
+ * added: 4.8 %." or why there is no curve. New string (g_free). */
 char *enl_curve_words (const EnlCurve *curve, const char *base) ENL_MUST_USE;
 /* "99.9 %", "< 0.1 %", "100 %". New string (g_free). */
 char *enl_share_text (double share) ENL_MUST_USE;

@@ -204,6 +204,35 @@ part_of_row (const Row *row)
   return part;
 }
 
+/* How the base is sold, or made, allows for a titre. Nothing is known of an own base. */
+static bool
+may_be_solution (const char *form)
+{
+  static const char *const word[] = {"solution", "mol/L", "made", "mixed"};
+
+  for (size_t i = 0; i < ENL_COUNT (word); i++)
+    if (strstr (form, word[i]))
+      return true;
+  return form[0] == '\0';
+}
+
+/* A titre needs a solution; a mass per cent a dispersion, a solid or a solution that is sold so. */
+static EnlStatus
+check_label (const EnlWeighPart *part, const EnlWeighOrder *order, EnlError *err)
+{
+  if (!isnan (order->titre) && !may_be_solution (part->form))
+    return enl_error_set (err, ENL_ERROR_UNKNOWN, "leave the titre out, or give its mass per cent",
+                          "a titre of %g mol/L does not fit %.80s (%.50s): it is no solution",
+                          order->titre, part->name, part->form);
+  if (!isnan (order->mass_percent) && isnan (part->mass_percent) &&
+      g_str_has_prefix (part->form, "solution"))
+    return enl_error_set (err, ENL_ERROR_UNKNOWN,
+                          "give the titre of the solution instead of a mass per cent",
+                          "a dispersion of %g %% does not fit %.60s (%.70s)", order->mass_percent,
+                          part->name, part->form);
+  return ENL_OK;
+}
+
 /* What is read from the label goes before what is usual. A density holds for the usual strength. */
 static void
 take_label (EnlWeighPart *part, const EnlWeighOrder *order)
@@ -251,8 +280,8 @@ label_is_of_base (const Row *row, const EnlBase *base, const EnlWeighOrder *orde
   return row->part[0] || (!isnan (order->titre) && isnan (row->like->molarity));
 }
 
-static void
-add_base_itself (EnlWeighing *w, const Row *row, const EnlWeighOrder *order)
+static EnlStatus
+add_base_itself (EnlWeighing *w, const Row *row, const EnlWeighOrder *order, EnlError *err)
 {
   bool nothing_sold = row && isnan (row->moles);
   EnlWeighPart *part = w->part = g_new0 (EnlWeighPart, 1);
@@ -260,30 +289,37 @@ add_base_itself (EnlWeighing *w, const Row *row, const EnlWeighOrder *order)
   w->n_parts = 1;
   *part = part_of_base (w->base);
   part->mmol = w->mmol;
+  EnlStatus status = check_label (part, order, err);
+  if (status != ENL_OK)
+    return status;
   take_label (part, order);
   measure (part);
   if (row && !has_parts (row))
     part->note = row->note;
   if (nothing_sold && isnan (order->titre) && isnan (order->mass_percent))
     part->mg = part->ml = NAN;
+  return ENL_OK;
 }
 
-static void
-add_parts (EnlWeighing *w, const Row *row, uint32_t n, const EnlWeighOrder *order)
+static EnlStatus
+add_parts (EnlWeighing *w, const Row *row, uint32_t n, const EnlWeighOrder *order, EnlError *err)
 {
-  if (!has_parts (row) || label_is_of_base (row, w->base, order)) {
-    add_base_itself (w, row, order);
-    return;
-  }
+  if (!has_parts (row) || label_is_of_base (row, w->base, order))
+    return add_base_itself (w, row, order, err);
   w->n_parts = n;
   w->part = g_new0 (EnlWeighPart, n);
   for (uint32_t i = 0; i < n; i++) {
     w->part[i] = part_of_row (&row[i]);
     w->part[i].mmol = w->mmol * row[i].moles;
-    if (i == 0)
+    if (i == 0) {
+      EnlStatus status = check_label (&w->part[i], order, err);
+      if (status != ENL_OK)
+        return status;
       take_label (&w->part[i], order);
+    }
     measure (&w->part[i]);
   }
+  return ENL_OK;
 }
 
 static char *
@@ -321,7 +357,9 @@ enl_weigh (const EnlWeighTable *table, const EnlBase *base, const EnlWeighOrder 
   w->per_mole = row && !isnan (row->equivalents) ? row->equivalents : 1.0;
   w->mmol = order->mmol * (order->equivalents + w->water_taken) / w->per_mole;
   w->remark = remark_of (w, order);
-  add_parts (w, row, n, order);
+  status = add_parts (w, row, n, order, err);
+  if (status != ENL_OK)
+    return status;
   bool told = w->n_parts > 1 || w->part[0].note[0];
   if (isnan (w->part[0].mg) && isnan (w->part[0].ml) && !told)
     return enl_error_set (err, ENL_ERROR_UNKNOWN,
@@ -375,9 +413,20 @@ with_unit (double value, const char *unit)
 /* Rounded to three digits first: 999.6 mg is 1.00 g. */
 #define NEXT_UNIT 999.5
 
+/* Rounded once, in the small unit: a table in mg and a sentence in g then tell the same digits
+ * also where the division would move a half (9345 mg). */
+static double
+rounded (double value)
+{
+  g_autofree char *digits = enl_weigh_digits (value);
+
+  return g_ascii_strtod (digits, NULL);
+}
+
 char *
 enl_weigh_mass_text (double mg)
 {
+  mg = rounded (mg);
   if (mg >= NEXT_UNIT * MG_PER_G)
     return with_unit (mg / MG_PER_G / MG_PER_G, "kg");
   return mg >= NEXT_UNIT ? with_unit (mg / MG_PER_G, "g") : with_unit (mg, "mg");
@@ -386,6 +435,7 @@ enl_weigh_mass_text (double mg)
 char *
 enl_weigh_volume_text (double ml)
 {
+  ml = rounded (ml);
   if (ml >= NEXT_UNIT)
     return with_unit (ml / 1000.0, "L");
   return ml >= 0.1 ? with_unit (ml, "mL") : with_unit (1000.0 * ml, "µL");

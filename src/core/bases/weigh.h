@@ -53,7 +53,9 @@ typedef struct {
 } EnlWeighing;
 
 /* `bases` may hold more rows than the table was opened with (own bases). ENL_ERROR_UNKNOWN with
- * advice when neither molar mass nor titre of the base is known. Caller: enl_weighing_free. */
+ * advice when neither molar mass nor titre of the base is known, when a titre is given of what is
+ * no solution, or a mass per cent of a solution that is sold by its titre. Caller:
+ * enl_weighing_free. */
 EnlStatus enl_weigh (const EnlWeighTable *table, const EnlBase *base, const EnlWeighOrder *order,
                      EnlWeighing **out, EnlError *err) ENL_MUST_USE;
 void enl_weighing_free (EnlWeighing *weighing);

@@ -153,6 +153,41 @@ START_TEST (bad_orders_are_refused_with_advice)
 }
 END_TEST
 
+/* How each is sold: resources/bases.tsv. NaH and KH are dispersions, LDA and n-BuLi solutions. */
+static const struct {
+  const char *base;
+  double titre, mass_percent;
+  EnlStatus status;
+  const char *word;
+} label_case[] = {
+    {"nah", 2.0, NAN, ENL_ERROR_UNKNOWN, "titre of 2 mol/L"},
+    {"kh", 2.0, NAN, ENL_ERROR_UNKNOWN, "dispersion in mineral oil"},
+    {"k2co3", 2.0, NAN, ENL_ERROR_UNKNOWN, "solid"},
+    {"et3n", 2.0, NAN, ENL_ERROR_UNKNOWN, "liquid"},
+    {"dimsyl_na", 2.0, NAN, ENL_OK, ""},
+    {"soft_mgcl2_et3n", 2.0, NAN, ENL_ERROR_UNKNOWN, "triethylamine"},
+    {"lda", NAN, 60.0, ENL_ERROR_UNKNOWN, "lithium diisopropylamide"},
+    {"nbuli", NAN, 60.0, ENL_ERROR_UNKNOWN, "hexanes"},
+    {"nah", NAN, 57.0, ENL_OK, ""},
+    {"naome", NAN, 30.0, ENL_OK, ""},
+    {"naoh", 2.0, NAN, ENL_OK, ""},
+    {"lda", 1.8, NAN, ENL_OK, ""},
+};
+
+START_TEST (a_label_fits_what_is_sold)
+{
+  const EnlWeighOrder order = {5.0, 1.05, 0.0, label_case[_i].titre, label_case[_i].mass_percent};
+  g_autoptr (EnlWeighing) w = NULL;
+  EnlError err = {0};
+
+  ck_assert_msg (enl_weigh (knowledge->weigh, base_of (label_case[_i].base), &order, &w, &err) ==
+                     label_case[_i].status,
+                 "%s: %s", label_case[_i].base, err.text);
+  ck_assert_msg (strstr (err.text, label_case[_i].word) != NULL, "%s", err.text);
+  ck_assert (label_case[_i].status == ENL_OK || err.advice[0]);
+}
+END_TEST
+
 static const struct {
   double value;
   const char *digits, *mass, *volume;
@@ -161,6 +196,7 @@ static const struct {
     {399.97, "400", "400 mg", "400 mL"},       {999.6, "1000", "1.00 g", "1.00 L"},
     {999.4, "999", "999 mg", "999 mL"},        {1178.2, "1180", "1.18 g", "1.18 L"},
     {0.99961, "1.00", "1.00 mg", "1.00 mL"},   {45.674, "45.7", "45.7 mg", "45.7 mL"},
+    {9345.0, "9340", "9.34 g", "9.34 L"},      {9355.0, "9360", "9.36 g", "9.36 L"},
     {1234567, "1230000", "1.23 kg", "1230 L"},
 };
 
@@ -342,6 +378,7 @@ weigh_suite (void)
   tcase_add_test (tc, sets_name_every_part);
   tcase_add_test (tc, every_base_of_the_table_is_told);
   tcase_add_loop_test (tc, bad_orders_are_refused_with_advice, 0, (int)ENL_COUNT (bad_case));
+  tcase_add_loop_test (tc, a_label_fits_what_is_sold, 0, (int)ENL_COUNT (label_case));
   tcase_add_loop_test (tc, three_digits, 0, (int)ENL_COUNT (digits_case));
   tcase_add_test (tc, grams_of_substrate);
   tcase_add_test (tc, recommended_equivalents_count_competing_acids);
