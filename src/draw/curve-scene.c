@@ -292,9 +292,8 @@ draw_plot (const Sheet *s)
   g_autofree char *at = label_heading (s);
 
   enl_plot_axes (s->scene, &s->plot, &words);
-  enl_scene_text (s->scene, (EnlPoint){a->x, a->y - 0.9 * s->small},
-                  "% of the substrate; of the base: % of that added", s->theme->small_size, false,
-                  0, 1, ENL_TONE_MUTED);
+  enl_scene_text (s->scene, (EnlPoint){a->x, a->y - 0.9 * s->small}, "% of substrate or base",
+                  s->theme->small_size, false, 0, 1, ENL_TONE_MUTED);
   enl_scene_text (s->scene, (EnlPoint){a->x + a->width + LEADER * s->theme->text_size, a->y - 4},
                   at, s->theme->small_size, true, 0, 1, ENL_TONE_INK);
   draw_interval (s);
