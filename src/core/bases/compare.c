@@ -216,7 +216,7 @@ by_outcome (const EnlCandidate *a, const EnlCandidate *b)
   if (order == 0 && a->grade > ENL_GRADE_CAUTION && !isnan (a->conversion) &&
       !isnan (b->conversion))
     order =
-        compare_numbers (floor (b->conversion / EQUAL_SHARE), floor (a->conversion / EQUAL_SHARE));
+        compare_numbers (round (b->conversion / EQUAL_SHARE), round (a->conversion / EQUAL_SHARE));
   return order ? order
                : compare_numbers (severity (a, ENL_EFFECT_WARN), severity (b, ENL_EFFECT_WARN));
 }

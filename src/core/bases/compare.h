@@ -62,7 +62,7 @@ typedef struct {
 
 typedef struct {
   EnlCandidate *candidate; /* best first: by grade; partial ones by conversion; among equals the
-                              least hazardous, then the usual ones, then the mildest */
+                              usual ones (extreme hazards after), then the mildest */
   uint32_t n_candidates;   /* every base of the table */
 } EnlComparison;
 

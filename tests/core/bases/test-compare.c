@@ -467,6 +467,22 @@ START_TEST (a_lithium_amide_comes_before_sodium_hydride)
 }
 END_TEST
 
+/* LDA before organolithiums for the outer carbon of acetoacetate, also where the count is short and
+ * the shares differ in the last digit only. */
+START_TEST (equal_shares_do_not_decide_the_order)
+{
+  static const double equivalents[] = {1.05, 2.1};
+
+  for (size_t i = 0; i < ENL_COUNT (equivalents); i++) {
+    Ask a;
+    ask (&a, ACETOACETATE, 1, conditions_in (ENL_SOLVENT_THF, -78.0, equivalents[i]));
+    ck_assert_uint_lt (rank_of (&a, "lda"), rank_of (&a, "nbuli"));
+    ck_assert_uint_lt (rank_of (&a, "nbuli"), rank_of (&a, "nah"));
+    ask_clear (&a);
+  }
+}
+END_TEST
+
 /* Potassium tert-butoxide in DMSO is an everyday pair, a phosphazene is not (common practice). */
 START_TEST (an_everyday_base_comes_before_a_phosphazene)
 {
@@ -533,6 +549,7 @@ compare_suite (void)
   tcase_add_test (tc, surplus_base_goes_to_the_next_hydrogen);
   tcase_add_test (tc, a_lithium_amide_comes_before_sodium_hydride);
   tcase_add_test (tc, an_everyday_base_comes_before_a_phosphazene);
+  tcase_add_test (tc, equal_shares_do_not_decide_the_order);
   tcase_add_test (tc, too_few_equivalents_are_told_first);
   tcase_add_test (tc, sharing_is_not_called_a_weak_base);
   tcase_add_test (tc, base_table_is_complete);
