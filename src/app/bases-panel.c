@@ -23,6 +23,7 @@ struct _EnlBasesPanel {
   GtkLabel *heading, *details, *deferral;
   GtkSpinButton *equivalents, *concentration, *temperature, *water;
   GtkColumnView *view;
+  GtkScrolledWindow *list_scroller;
 };
 
 G_DEFINE_FINAL_TYPE (EnlBasesPanel, enl_bases_panel, GTK_TYPE_WIDGET)
@@ -39,10 +40,11 @@ on_setup (GtkSignalListItemFactory *factory, GtkListItem *item, gpointer data)
   (void)factory;
   gtk_label_set_xalign (GTK_LABEL (label), number ? 1.0f : 0.0f);
   gtk_label_set_ellipsize (GTK_LABEL (label), number ? PANGO_ELLIPSIZE_NONE : PANGO_ELLIPSIZE_END);
+  /* Least widths: where room is short words are shortened, the numbers stay whole. */
   if (cell == ENL_CELL_NAME)
-    gtk_label_set_width_chars (GTK_LABEL (label), 18);
+    gtk_label_set_width_chars (GTK_LABEL (label), 13);
   if (cell == ENL_CELL_VERDICT)
-    gtk_label_set_width_chars (GTK_LABEL (label), 22);
+    gtk_label_set_width_chars (GTK_LABEL (label), 12);
   if (cell == ENL_CELL_REASON)
     gtk_label_set_width_chars (GTK_LABEL (label), 24);
   if (number)
@@ -365,6 +367,10 @@ on_selection_changed (EnlSession *session, EnlBasesPanel *self)
     queue_refresh (self);
 }
 
+/* Six rows and their heading stay in sight, in the type of each look. */
+#define LEAST_LIST           148
+#define LEAST_LIST_PROJECTOR 194
+
 /* On the projector the verdicts are what the audience reads. */
 static void
 on_look_changed (EnlLook *look, EnlBasesPanel *self)
@@ -374,7 +380,8 @@ on_look_changed (EnlLook *look, EnlBasesPanel *self)
   if (!working && (gtk_widget_get_state_flags (self->conditions) & GTK_STATE_FLAG_FOCUS_WITHIN))
     gtk_window_set_focus (GTK_WINDOW (gtk_widget_get_root (GTK_WIDGET (self))), NULL);
   gtk_widget_set_visible (self->conditions, working);
-  gtk_widget_set_visible (self->details_scroller, working);
+  gtk_scrolled_window_set_min_content_height (self->list_scroller,
+                                              working ? LEAST_LIST : LEAST_LIST_PROJECTOR);
 }
 
 /* ---- object ---- */
@@ -407,6 +414,7 @@ enl_bases_panel_class_init (EnlBasesPanelClass *klass)
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, box);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, conditions);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, details_scroller);
+  gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, list_scroller);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, heading);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, details);
   gtk_widget_class_bind_template_child (widget_class, EnlBasesPanel, deferral);
