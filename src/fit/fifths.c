@@ -52,11 +52,11 @@ judge (const EnlModel *model, const EnlSiteSet *raw, uint32_t which, const EnlRe
   set->solvent[0] = raw->solvent[which];
   enl_site_set_standardise (set, model->centre, model->scale);
   for (uint32_t i = 0; i < n; i++) {
-    enl_kernel_parts (&model->relevance, set, 0, model->rows, i, &parts);
+    enl_kernel_pair (&model->relevance, set, 0, model->rows, i, &parts);
     k[i] = enl_kernel_value (&model->hyper, &parts);
     mean += k[i] * model->alpha[i];
   }
-  enl_kernel_parts (&model->relevance, set, 0, set, 0, &parts);
+  enl_kernel_pair (&model->relevance, set, 0, set, 0, &parts);
   enl_gaussian_forward (model->factor, n, k, 1);
   variance = enl_kernel_value (&model->hyper, &parts) - enl_gaussian_dot (k, k, n) +
              model->hyper.value[ENL_H_noise] + row->sigma * row->sigma;

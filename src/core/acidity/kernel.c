@@ -130,18 +130,8 @@ enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
 
   products (relevance, a->z + at, b->z + bt, &parts->linear, &parts->square);
   parts->linear /= ENL_N_DESCRIPTORS;
-  parts->likeness = 0;
   parts->same_element = a->element[i] == b->element[j];
   parts->same_solvent = a->solvent[i] == b->solvent[j];
-}
-
-void
-enl_kernel_parts (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
-                  const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts)
-{
-  enl_kernel_pair (relevance, a, i, b, j, parts);
-  if (parts->same_element)
-    parts->likeness = enl_shells_likeness (&a->shells[i], &b->shells[j]);
 }
 
 double
@@ -172,10 +162,16 @@ enl_kernel_smooth (const EnlHyper *hyper, const EnlKernelParts *parts)
 }
 
 double
-enl_kernel_value (const EnlHyper *hyper, const EnlKernelParts *parts)
+enl_kernel_linear (const EnlHyper *hyper, const EnlKernelParts *parts)
 {
   double same = parts->same_element, both = parts->same_element && parts->same_solvent;
 
   return ENL_OFFSET_VARIANCE * (1 + same + both) +
-         parts->linear * enl_kernel_linear_share (hyper, parts) + enl_kernel_smooth (hyper, parts);
+         parts->linear * enl_kernel_linear_share (hyper, parts);
+}
+
+double
+enl_kernel_value (const EnlHyper *hyper, const EnlKernelParts *parts)
+{
+  return enl_kernel_linear (hyper, parts) + enl_kernel_smooth (hyper, parts);
 }

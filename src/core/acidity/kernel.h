@@ -58,24 +58,20 @@ typedef struct {
 
 void enl_relevance_init (EnlRelevance *relevance, const EnlHyper *hyper);
 
-/* What the covariance of one pair is made of. `likeness` is that of the surroundings, 0 between
- * elements; it is no part of the covariance. */
+/* What the covariance of one pair is made of. */
 typedef struct {
   double linear, square; /* mean product and weighted squared distance of the descriptors */
-  double likeness;
   bool same_element, same_solvent;
 } EnlKernelParts;
 
-/* Fills all but the likeness; both sets must be standardised. */
+/* Both sets must be standardised. */
 void enl_kernel_pair (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
                       const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
-/* The same, and the likeness. */
-void enl_kernel_parts (const EnlRelevance *relevance, const EnlSiteSet *a, uint32_t i,
-                       const EnlSiteSet *b, uint32_t j, EnlKernelParts *parts);
 /* The shares of the linear and of the smooth part that a pair has in common. */
 double enl_kernel_linear_share (const EnlHyper *hyper, const EnlKernelParts *parts);
 double enl_kernel_smooth_share (const EnlHyper *hyper, const EnlKernelParts *parts);
-/* The smooth part alone. */
+/* The offset with the linear part, and the smooth part: their sum is the covariance. */
+double enl_kernel_linear (const EnlHyper *hyper, const EnlKernelParts *parts);
 double enl_kernel_smooth (const EnlHyper *hyper, const EnlKernelParts *parts);
 /* The whole covariance, without noise. */
 double enl_kernel_value (const EnlHyper *hyper, const EnlKernelParts *parts);

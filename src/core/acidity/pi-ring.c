@@ -68,23 +68,26 @@ system_energy (const EnlPiBasis *basis, uint32_t system)
   return energy;
 }
 
-double
-enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom, bool odd)
+EnlRingEnergy
+enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom)
 {
-  double sum = 0;
+  EnlRingEnergy sum = {0, 0};
+  uint32_t solved = ENL_NONE; /* the system that `energy` belongs to */
+  double energy = 0;
 
   for (uint32_t r = 0; r < enl_molecule_rings (mol); r++) {
     uint32_t size;
     const uint32_t *ring = enl_molecule_ring (mol, r, &size);
-    if (size > MOST_MEMBERS || (size % 2 != 0) != odd || !ring_is_near (mol, ring, size, atom))
+    if (size > MOST_MEMBERS || !ring_is_near (mol, ring, size, atom))
       continue;
     uint32_t own = own_overlap (basis, mol, ring, size);
     if (own == ENL_NONE)
       continue;
     uint32_t system = basis->system[basis->overlap[own].a];
-    double energy = system_energy (basis, system);
+    if (system != solved)
+      energy = system_energy (basis, system), solved = system;
     basis->overlap[own].k = -basis->overlap[own].k;
-    sum += energy - system_energy (basis, system);
+    *(size % 2 ? &sum.odd : &sum.even) += energy - system_energy (basis, system);
     basis->overlap[own].k = -basis->overlap[own].k;
   }
   return sum;

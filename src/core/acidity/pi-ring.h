@@ -3,13 +3,16 @@
 
 #include "core/acidity/pi-orbital.h"
 
-/* Cyclic part of the pi energy (beta) of the rings at `atom`: those of up to eight members, an odd
- * or an even number of them (the model makes too much of ions in odd rings), that hold it or one of
- * its neighbours and conjugate all round. For each of them the sign of one overlap is turned, which
- * makes an aromatic ring antiaromatic and the reverse; the energy lost is the ring's share:
- * positive where the ring is aromatic. After J. Aihara, J. Am. Chem. Soc. 1976, 98, 2750 and E.
- * Heilbronner, Tetrahedron Lett. 1964, 5, 1923. */
-double enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom,
-                           bool odd);
+/* Cyclic parts of the pi energy (beta) of the rings at `atom`: those of up to eight members that
+ * hold it or one of its neighbours and conjugate all round. Rings with an even and with an odd
+ * number of members are added up apart: the model makes too much of ions in odd rings. For each of
+ * them the sign of one overlap is turned, which makes an aromatic ring antiaromatic and the
+ * reverse; the energy lost is the ring's share: positive where the ring is aromatic. After J.
+ * Aihara, J. Am. Chem. Soc. 1976, 98, 2750 and E. Heilbronner, Tetrahedron Lett. 1964, 5, 1923. */
+typedef struct {
+  double even, odd;
+} EnlRingEnergy;
+
+EnlRingEnergy enl_pi_ring_energy (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom);
 /* `atom` is a member of a ring of five that conjugates all round. */
 bool enl_pi_in_five_ring (const EnlPiBasis *basis, const EnlMolecule *mol, uint32_t atom);

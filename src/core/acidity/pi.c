@@ -304,10 +304,10 @@ enl_pi_deprotonate (const EnlPi *pi, uint32_t atom, EnlPiChange *out)
     out->excess[atom] = out->shift[atom] = 1.0;
   else
     compare_systems (out, pi, &basis, atom);
-  out->even_ring_gain = enl_pi_ring_energy (&basis, pi->mol, atom, false) -
-                        enl_pi_ring_energy (&pi->basis, pi->mol, atom, false);
-  out->odd_ring_gain = enl_pi_ring_energy (&basis, pi->mol, atom, true) -
-                       enl_pi_ring_energy (&pi->basis, pi->mol, atom, true);
+  EnlRingEnergy anion = enl_pi_ring_energy (&basis, pi->mol, atom);
+  EnlRingEnergy acid = enl_pi_ring_energy (&pi->basis, pi->mol, atom);
+  out->even_ring_gain = anion.even - acid.even;
+  out->odd_ring_gain = anion.odd - acid.odd;
   out->five_ring = enl_pi_in_five_ring (&basis, pi->mol, atom);
   out->participation = participation_of (out->shift, n);
   enl_pi_basis_clear (&basis);

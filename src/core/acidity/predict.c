@@ -189,13 +189,14 @@ fill_covariance (Batch *batch)
 
   for (uint32_t s = 0; s < batch->m; s++) {
     enl_kernel_pair (&model->relevance, batch->sites, s, batch->sites, s, &parts);
-    batch->prior[s] = enl_kernel_value (&model->hyper, &parts);
     batch->smooth[s] = enl_kernel_smooth (&model->hyper, &parts);
+    batch->prior[s] = enl_kernel_linear (&model->hyper, &parts) + batch->smooth[s];
     for (uint32_t i = 0; i < batch->n; i++) {
       size_t at = (size_t)s * batch->n + i;
       enl_kernel_pair (&model->relevance, batch->sites, s, model->rows, i, &parts);
-      batch->k[at] = enl_kernel_value (&model->hyper, &parts);
-      batch->alike[at] = enl_kernel_smooth (&model->hyper, &parts) / batch->smooth[s];
+      double smooth = enl_kernel_smooth (&model->hyper, &parts);
+      batch->k[at] = enl_kernel_linear (&model->hyper, &parts) + smooth;
+      batch->alike[at] = smooth / batch->smooth[s];
     }
   }
 }

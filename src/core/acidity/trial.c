@@ -10,13 +10,19 @@
 /* Two rows belong to one family when their surroundings are at least this alike. */
 #define FAMILY_LIKENESS 0.70
 
+static bool
+alike (const EnlSiteSet *rows, uint32_t i, uint32_t j)
+{
+  return rows->element[i] == rows->element[j] &&
+         enl_shells_likeness (&rows->shells[i], &rows->shells[j]) >= FAMILY_LIKENESS;
+}
+
 /* Families: a row joins the first earlier row that leads a family and is alike enough, or leads
  * one of its own. Compounds stay together by joining the family of their first row. */
 static void
 cluster_folds (const EnlModel *model, const uint32_t *compound, uint32_t *fold)
 {
   g_autoptr (GArray) leader = g_array_new (FALSE, FALSE, sizeof (uint32_t));
-  EnlKernelParts parts;
 
   for (uint32_t i = 0; i < model->rows->n; i++) {
     fold[i] = ENL_NONE;
@@ -26,8 +32,7 @@ cluster_folds (const EnlModel *model, const uint32_t *compound, uint32_t *fold)
     }
     for (guint k = 0; k < leader->len && fold[i] == ENL_NONE; k++) {
       uint32_t lead = g_array_index (leader, uint32_t, k);
-      enl_kernel_parts (&model->relevance, model->rows, i, model->rows, lead, &parts);
-      if (parts.likeness >= FAMILY_LIKENESS)
+      if (alike (model->rows, i, lead))
         fold[i] = lead;
     }
     if (fold[i] == ENL_NONE) {
