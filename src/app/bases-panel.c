@@ -2,6 +2,7 @@
 
 #include <math.h>
 
+#include "app/rest.h"
 #include "app/base-item.h"
 #include "app/own-base-form.h"
 #include "core/bases/equivalents.h"
@@ -12,7 +13,7 @@ struct _EnlBasesPanel {
   GListStore *items;
   GtkSingleSelection *selection;
   gboolean filling;
-  guint pending;             /* timeout that fills the list, 0: none */
+  EnlRest rest;              /* before the list is filled */
   guint reveal;              /* tick that scrolls to the selected row, 0: none */
   guint frames;              /* since the list was filled */
   EnlBaseTable *bases;       /* owned: the known ones and those of the set */
@@ -281,24 +282,16 @@ refresh (EnlBasesPanel *self)
   show_details (self);
 }
 
-/* While a structure is typed every letter changes the selection: the list follows when it rests. */
-#define REST_MS 60
-
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlBasesPanel *self = data;
-
-  self->pending = 0;
-  refresh (self);
-  return G_SOURCE_REMOVE;
+  refresh (data);
 }
 
 static void
 queue_refresh (EnlBasesPanel *self)
 {
-  g_clear_handle_id (&self->pending, g_source_remove);
-  self->pending = g_timeout_add (REST_MS, on_rest, self);
+  enl_rest_begin (&self->rest, on_rest, self);
 }
 
 /* ---- events ---- */
@@ -391,7 +384,7 @@ enl_bases_panel_dispose (GObject *object)
 {
   EnlBasesPanel *self = ENL_BASES_PANEL (object);
 
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   if (self->view)
     stop_revealing (self);
   g_clear_pointer (&self->box, gtk_widget_unparent);

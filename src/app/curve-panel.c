@@ -2,14 +2,12 @@
 
 #include <math.h>
 
+#include "app/rest.h"
 #include "core/bases/curve.h"
 #include "core/bases/equilibrium.h"
 #include "draw/curve-scene.h"
 #include "draw/paint.h"
 
-/* While a structure is typed every letter changes the selection: the curve follows when it rests.
- */
-#define REST_MS 60
 /* Equivalents that an arrow key moves, and to which a click is rounded. */
 #define STEP         0.05
 #define LEAST_WIDTH  300
@@ -24,7 +22,7 @@ struct _EnlCurvePanel {
   char *base, *substrate, *words;
   EnlScene *scene;     /* for the present size, NULL: to be made */
   GskRenderNode *node; /* the painted scene, NULL: paint anew */
-  guint pending;       /* timeout that asks anew, 0: none */
+  EnlRest rest;        /* before it asks anew */
   gboolean stale;      /* the panel was hidden when something changed */
 };
 
@@ -116,21 +114,16 @@ refresh (EnlCurvePanel *self)
   describe (self);
 }
 
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlCurvePanel *self = data;
-
-  self->pending = 0;
-  refresh (self);
-  return G_SOURCE_REMOVE;
+  refresh (data);
 }
 
 static void
 queue_refresh (EnlCurvePanel *self)
 {
-  g_clear_handle_id (&self->pending, g_source_remove);
-  self->pending = g_timeout_add (REST_MS, on_rest, self);
+  enl_rest_begin (&self->rest, on_rest, self);
 }
 
 static void
@@ -331,7 +324,7 @@ enl_curve_panel_dispose (GObject *object)
 {
   EnlCurvePanel *self = ENL_CURVE_PANEL (object);
 
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   forget (self);
   g_clear_object (&self->session);
   g_clear_object (&self->look);

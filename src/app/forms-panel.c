@@ -1,5 +1,6 @@
 #include "app/forms-panel.h"
 
+#include "app/rest.h"
 #include "app/canvas.h"
 #include "draw/forms-sheet.h"
 
@@ -10,7 +11,7 @@ struct _EnlFormsPanel {
   GtkWidget parent;
   EnlSession *session; /* owned */
   EnlLook *look;       /* owned */
-  guint pending;       /* timeout that draws the forms, 0: none */
+  EnlRest rest;        /* before the forms are drawn */
 
   GtkWidget *box;
   GtkLabel *heading;
@@ -74,25 +75,17 @@ refresh (EnlFormsPanel *self)
   show_forms (self, enl_session_outcome (self->session, substrate).analysis, site);
 }
 
-/* As for the bases: the forms follow when the typing rests. */
-#define REST_MS 60
-
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlFormsPanel *self = data;
-
-  self->pending = 0;
-  refresh (self);
-  return G_SOURCE_REMOVE;
+  refresh (data);
 }
 
 static void
 on_selection_changed (EnlSession *session, EnlFormsPanel *self)
 {
   (void)session;
-  g_clear_handle_id (&self->pending, g_source_remove);
-  self->pending = g_timeout_add (REST_MS, on_rest, self);
+  enl_rest_begin (&self->rest, on_rest, self);
 }
 
 static void
@@ -107,7 +100,7 @@ enl_forms_panel_dispose (GObject *object)
 {
   EnlFormsPanel *self = ENL_FORMS_PANEL (object);
 
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   g_clear_object (&self->session);
   g_clear_object (&self->look);

@@ -1,13 +1,12 @@
 #include "app/matrix-view.h"
 
+#include "app/rest.h"
 #include "draw/matrix-scene.h"
 #include "draw/paint.h"
 #include "draw/plane.h"
 
 /* More columns are not drawn; the caption says how many there are. */
 #define MOST_COLUMNS 24
-#define REST_MS      60
-
 struct _EnlMatrixView {
   GtkWidget parent;
   EnlSession *session; /* owned */
@@ -22,7 +21,7 @@ struct _EnlMatrixView {
   uint32_t row, column;  /* the present cell */
   char *words;
   gboolean usual; /* the selected site was the usual one of its substrate when the work began */
-  guint pending;  /* timeout that begins the work, 0: none */
+  EnlRest rest;   /* before the work begins */
   guint working;  /* idle source that compares the next substrate, 0: none */
   gboolean stale; /* hidden when something changed */
 };
@@ -268,14 +267,10 @@ begin (EnlMatrixView *self)
   self->working = g_idle_add (work, self);
 }
 
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlMatrixView *self = data;
-
-  self->pending = 0;
-  begin (self);
-  return G_SOURCE_REMOVE;
+  begin (data);
 }
 
 /* What the work borrows from the session ends with the signal: it begins anew. */
@@ -283,8 +278,7 @@ static void
 queue_begin (EnlMatrixView *self)
 {
   stop (self);
-  g_clear_handle_id (&self->pending, g_source_remove);
-  self->pending = g_timeout_add (REST_MS, on_rest, self);
+  enl_rest_begin (&self->rest, on_rest, self);
 }
 
 /* Another base, or a substrate whose usual site it is, needs no new matrix. */
@@ -457,7 +451,7 @@ enl_matrix_view_dispose (GObject *object)
   EnlMatrixView *self = ENL_MATRIX_VIEW (object);
 
   stop (self);
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   g_clear_pointer (&self->node, gsk_render_node_unref);
   g_clear_pointer (&self->scene, enl_scene_free);
   g_clear_pointer (&self->words, g_free);

@@ -2,6 +2,8 @@
 
 #include <math.h>
 
+#include "app/rest.h"
+
 struct _EnlWeighPanel {
   GtkWidget parent;
   EnlSession *session; /* owned */
@@ -9,7 +11,7 @@ struct _EnlWeighPanel {
   EnlWeighList *list;  /* owned; NULL: see fault */
   char *fault;         /* owned; "" for none */
   char *base;          /* owned; id of the base that titre and content were typed for */
-  guint pending;       /* timeout that weighs anew, 0: none */
+  EnlRest rest;        /* before it weighs anew */
   gboolean filling;
   gboolean large; /* the projector: no small type, nothing to type into */
 
@@ -198,7 +200,7 @@ refresh (EnlWeighPanel *self)
 {
   EnlError err = {0};
 
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   g_clear_pointer (&self->list, enl_weigh_list_free);
   g_clear_pointer (&self->bases, enl_base_table_free);
   g_clear_pointer (&self->fault, g_free);
@@ -209,25 +211,19 @@ refresh (EnlWeighPanel *self)
 
 /* ---- events ---- */
 
-#define REST_MS 60
-
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlWeighPanel *self = data;
-
-  self->pending = 0;
-  refresh (self);
-  return G_SOURCE_REMOVE;
+  refresh (data);
 }
 
 /* Nobody looks at a hidden panel: it weighs when it is shown. */
 static void
 queue_refresh (EnlWeighPanel *self)
 {
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   if (gtk_widget_get_mapped (GTK_WIDGET (self)))
-    self->pending = g_timeout_add (REST_MS, on_rest, self);
+    enl_rest_begin (&self->rest, on_rest, self);
 }
 
 static void
@@ -292,7 +288,7 @@ enl_weigh_panel_dispose (GObject *object)
 {
   EnlWeighPanel *self = ENL_WEIGH_PANEL (object);
 
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   g_clear_pointer (&self->list, enl_weigh_list_free);
   g_clear_pointer (&self->bases, enl_base_table_free);

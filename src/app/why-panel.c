@@ -2,6 +2,7 @@
 
 #include <math.h>
 
+#include "app/rest.h"
 #include "app/why-rows.h"
 
 /* Effects up to this share the scale of the bars, so that small ones do not look large. */
@@ -15,7 +16,7 @@ struct _EnlWhyPanel {
   EnlLook *look;       /* owned */
   EnlWhyResult *result;
   GCancellable *running; /* of the worker that is waited for, or NULL */
-  guint pending;         /* timeout that asks for an explanation, 0: none */
+  EnlRest rest;          /* before an explanation is asked for */
   gboolean stale;        /* the panel was hidden when the selection changed */
 
   GtkWidget *box, *content;
@@ -137,25 +138,17 @@ refresh (EnlWhyPanel *self)
   enl_why_job_start (a, site, self->running, on_done, g_object_ref (self));
 }
 
-/* As for the forms: the explanation follows when the typing rests. */
-#define REST_MS 60
-
-static gboolean
+static void
 on_rest (gpointer data)
 {
-  EnlWhyPanel *self = data;
-
-  self->pending = 0;
-  refresh (self);
-  return G_SOURCE_REMOVE;
+  refresh (data);
 }
 
 static void
 on_selection_changed (EnlSession *session, EnlWhyPanel *self)
 {
   (void)session;
-  g_clear_handle_id (&self->pending, g_source_remove);
-  self->pending = g_timeout_add (REST_MS, on_rest, self);
+  enl_rest_begin (&self->rest, on_rest, self);
 }
 
 static void
@@ -185,7 +178,7 @@ enl_why_panel_dispose (GObject *object)
   EnlWhyPanel *self = ENL_WHY_PANEL (object);
 
   stop_running (self);
-  g_clear_handle_id (&self->pending, g_source_remove);
+  enl_rest_stop (&self->rest);
   g_clear_pointer (&self->box, gtk_widget_unparent);
   g_clear_pointer (&self->result, enl_why_result_free);
   g_clear_object (&self->session);
